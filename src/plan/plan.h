@@ -1,0 +1,169 @@
+/* The plan: one read-only value made from a job by the whole chain. NAN in a double = there is no
+ * such result (printed as null or "none"). SI: m, s, Pa, ratios; temperatures degC. */
+#ifndef SLABGAP_PLAN_PLAN_H
+#define SLABGAP_PLAN_PLAN_H
+
+#include "core/layout.h"
+#include "job/job.h"
+
+enum verdict { VERDICT_HOLDS, VERDICT_TIGHT, VERDICT_FAILS, VERDICT_NONE };
+enum applies { APPLIES_GOVERNS, APPLIES_ADVICE, APPLIES_NO };
+
+struct plan_limit {   /* one row of the spacing rules */
+    const char *rule; /* typed thickness cap table drag stiffness curling interlock sealant */
+    double limit_m;
+    char words[96]; /* "24 x thickness", "at most 15 ft below 10 in" */
+    const char *source;
+    bool counts;
+    enum applies applies;
+};
+struct plan_working {
+    int n;
+    double open_m, close_m, extension, compression, capacity;
+    enum verdict verdict;
+};
+struct plan_table_row {
+    double slab_c, gap_m, extension, compression;
+    enum verdict verdict;
+    bool too_cold;
+};
+struct plan_isolation {
+    char where[64]; /* "edge 1", "C1", "opening pit", "expansion joint J3" */
+    double run_m, from_c, expansion_m, filler_m, least_filler_m, extension, compression, opening_m;
+    enum verdict verdict;
+};
+struct plan_check {
+    char id[48];
+    char label[96]; /* for people */
+    double demand, capacity;
+    const char *unit;      /* "ratio", "m", "count" ... */
+    bool binding, at_most; /* at_most: demand <= capacity is good; else demand >= capacity */
+    enum verdict verdict;
+    char source[128];
+    char remedy[160];
+};
+struct plan_joint { /* one per layout joint, same order */
+    bool tied;
+    double length_m, open_m, close_m, width_m, extension, compression,
+        run_m; /* NAN where it has none */
+    enum verdict verdict;
+};
+struct plan_package {
+    double size_m3;
+    int count;
+};
+struct plan_rod {
+    double diameter_m, length_m;
+};
+
+enum { LIMIT_MOST = 16, WORKING_MOST = 4, TABLE_MOST = 24, PACKAGE_KINDS = 8 };
+
+struct plan {
+    struct job job; /* settled copy */
+    enum field_id assumed[FIELD_COUNT];
+    size_t assumed_count; /* defaults used */
+    enum field_id overrides[FIELD_COUNT];
+    size_t override_count; /* typed and ruling over a rule */
+    struct finding_list findings;
+    bool has_outline;
+
+    struct {
+        double limit_m, across_limit_m;
+        const char *governed_by;
+        double
+            rule_limit_m; /* what the rules alone would give (for "24 x thickness would be 4.8") */
+        const char *rule_words;
+        struct plan_limit rows[LIMIT_MOST];
+        size_t count;
+    } spacing;
+    struct {
+        double fck_pa, fcm_pa, modulus_pa, tensile_pa, rupture_pa, expansion_k;
+        double stiffness_radius_m; /* radius of relative stiffness */
+    } concrete;
+    struct {
+        double coldest_c, hottest_c, sealing_c, zero_stress_c /* for isolation, runs */,
+            crack_zero_c /* for crack opening */;
+        double deck_coldest_c, deck_hottest_c; /* EN 1991-1-5, comparison only */
+        const char *basis;                     /* typed | estimate */
+    } temperature;
+    struct {
+        double after_sealing, before_sealing, end_years;
+        const char *basis;
+    } shrinkage;
+    struct {
+        double open_m, close_m, panel_m;
+        const char *basis; /* factor | friction */
+        double factor, factor_open_m, factor_close_m, friction_open_m, friction_close_m;
+    } movement;
+    struct plan_working working[WORKING_MOST];
+    size_t working_count;
+    struct {
+        double width_m, least_width_m, tolerance_m, depth_m, recess_m, extension, compression;
+        double extension_capacity, compression_capacity, bead_strain, rod_m, bulge_m;
+        double cut_depth_m; /* depth of the wide cut: recess + depth + rod */
+        double next_down_m, next_down_extension, next_down_compression, next_up_m,
+            next_up_extension, next_up_compression;
+        double holds_when_n3_m; /* narrowest blade that takes n = 3, NAN none */
+        double window_coldest_c,
+            window_hottest_c; /* slab temperatures at which the joint as cut may be sealed */
+        enum verdict verdict;
+        const char *basis; /* width-and-movement */
+        bool chosen;       /* width chosen by the program */
+        bool sealed;       /* a sealant with a capacity: false for none, floor-filler */
+    } seal;
+    struct plan_table_row table[TABLE_MOST];
+    size_t table_count;
+    struct plan_isolation *isolation;
+    size_t isolation_count;
+    struct {
+        double least_m, most_m, set_m;
+    } cut;
+    struct plan_check *checks;
+    size_t check_count, check_capacity;
+    struct {
+        double contraction_m, construction_m, isolation_m, expansion_m, saw_m, sealed_m;
+        double sealant_net_m3, sealant_cusps_m3, sealant_order_m3;
+        struct plan_package packages[PACKAGE_KINDS];
+        size_t package_count;
+        struct plan_rod rods[PACKAGE_KINDS];
+        size_t rod_count;
+        bool length_typed;
+        double filler_m2, area_m2, volume_m3;
+        int boxes; /* of takeoff.box packs, for the first package */
+    } quantities;
+    struct {
+        double dowel_diameter_m, dowel_length_m, dowel_spacing_m;
+        int dowel_count;
+        double tie_spacing_m, tie_length_m, tie_diameter_m;
+        double drag_steel_m2_per_m;
+    } steel;
+    struct {
+        double bradbury_x, bradbury_y, edge_pa, interior_pa, lift_m, settlement_m;
+        double locked_pa, locked_both_pa; /* locked slab at hottest - zero stress */
+        double lift_off_hinge_k, lift_off_continuous_k, rise_left_k; /* blow-up */
+    } restraint;
+    struct plan_joint *joints; /* layout.joint_count of them */
+    size_t
+        governing_joint; /* index of the contraction joint `movement` describes; SIZE_MAX = none */
+    struct layout layout;
+};
+
+struct plan_cache; /* remembered zones; may be NULL everywhere */
+struct plan_progress {
+    bool (*go_on)(void *context, double share);
+    void *context;
+};
+
+/* The whole chain. On STATUS_REFUSED the plan holds only findings (some are errors). Always free
+ * it. */
+enum status plan_make(const struct job *job, struct plan_cache *cache,
+                      const struct plan_progress *progress, struct plan *plan);
+void plan_free(struct plan *plan); /* safe on {0} and twice */
+/* 0, 1 by the binding checks and layout.violations; 2 when there is no plan. */
+int plan_exit_status(const struct plan *plan);
+const char *verdict_word(enum verdict verdict); /* holds tight fails; "" for none (file, JSON) */
+const char *verdict_screen_word(enum verdict verdict); /* HOLDS, JUST HOLDS, FAILS */
+/* fails when demand > capacity (1 + 1e-9); tight above 0.9 capacity */
+enum verdict verdict_of(double demand, double capacity);
+
+#endif
