@@ -1,0 +1,10 @@
+/* `layout` of the JSON result: exactly what formats.md says, nothing null inside. */
+#ifndef SLABGAP_EXPORT_JSON_LAYOUT_H
+#define SLABGAP_EXPORT_JSON_LAYOUT_H
+
+#include "export/json_writer.h"
+#include "plan/plan.h"
+
+void json_add_layout(struct json *json, const struct plan *plan);
+
+#endif

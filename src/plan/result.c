@@ -1,0 +1,320 @@
+#include "plan/result.h"
+#include <math.h>
+#include <string.h>
+
+#define AT(member) offsetof(struct plan, member)
+#define NUM(path, label, quantity, member) {path, label, RESULT_NUMBER, quantity, 1.0, AT(member)}
+#define LITRES(path, label, member) {path, label, RESULT_NUMBER, QUANTITY_VOLUME, 1000.0, AT(member)}
+#define WORD(path, label, member) {path, label, RESULT_WORD, QUANTITY_NONE, 1.0, AT(member)}
+#define MM QUANTITY_SMALL_LENGTH
+#define METRES QUANTITY_LENGTH
+#define DEGC QUANTITY_TEMPERATURE
+#define SHARE QUANTITY_RATIO
+
+/* Order = order of the JSON. Results of one group stand together. */
+const struct result result_table[] = {
+    NUM("spacing.limit_m", "Spacing limit", METRES, spacing.limit_m),
+    NUM("spacing.across_limit_m", "Spacing limit across", METRES, spacing.across_limit_m),
+    WORD("spacing.governed_by", "Limit set by", spacing.governed_by),
+    NUM("spacing.rule_limit_m", "Limit by the rules alone", METRES, spacing.rule_limit_m),
+    NUM("concrete.strength_pa", "Cylinder strength", QUANTITY_STRESS, concrete.fck_pa),
+    NUM("concrete.modulus_pa", "Modulus of elasticity", QUANTITY_STRESS, concrete.modulus_pa),
+    NUM("concrete.tensile_pa", "Tensile strength", QUANTITY_STRESS, concrete.tensile_pa),
+    NUM("concrete.rupture_pa", "Modulus of rupture", QUANTITY_STRESS, concrete.rupture_pa),
+    NUM("concrete.expansion_k", "Thermal expansion", QUANTITY_PER_KELVIN, concrete.expansion_k),
+    NUM("concrete.stiffness_radius_m", "Radius of relative stiffness", METRES,
+        concrete.stiffness_radius_m),
+    NUM("temperature.coldest_c", "Slab coldest", DEGC, temperature.coldest_c),
+    NUM("temperature.hottest_c", "Slab hottest", DEGC, temperature.hottest_c),
+    NUM("temperature.sealing_c", "Slab at sealing", DEGC, temperature.sealing_c),
+    NUM("temperature.zero_stress_c", "Slab at set, for isolation", DEGC, temperature.zero_stress_c),
+    NUM("temperature.crack_zero_c", "Slab at set, for cracks", DEGC, temperature.crack_zero_c),
+    NUM("temperature.deck_coldest_c", "Deck rule coldest, to compare", DEGC,
+        temperature.deck_coldest_c),
+    NUM("temperature.deck_hottest_c", "Deck rule hottest, to compare", DEGC,
+        temperature.deck_hottest_c),
+    WORD("temperature.basis", "Temperatures are", temperature.basis),
+    NUM("shrinkage.after_sealing", "Drying to come after sealing", QUANTITY_STRAIN,
+        shrinkage.after_sealing),
+    NUM("shrinkage.before_sealing", "Dried before sealing", QUANTITY_STRAIN,
+        shrinkage.before_sealing),
+    WORD("shrinkage.basis", "Drying by", shrinkage.basis),
+    NUM("shrinkage.end_years", "Looked at for, years", QUANTITY_NONE, shrinkage.end_years),
+    NUM("movement.open_m", "The widest joint opens by", MM, movement.open_m),
+    NUM("movement.close_m", "and closes by", MM, movement.close_m),
+    NUM("movement.panel_m", "Panel length of that joint", METRES, movement.panel_m),
+    WORD("movement.basis", "Base holds back by", movement.basis),
+    NUM("movement.factor", "Factor", QUANTITY_NONE, movement.factor),
+    NUM("movement.factor_open_m", "Opens by, with the factor", MM, movement.factor_open_m),
+    NUM("movement.factor_close_m", "Closes by, with the factor", MM, movement.factor_close_m),
+    NUM("movement.friction_open_m", "Opens by, with friction", MM, movement.friction_open_m),
+    NUM("movement.friction_close_m", "Closes by, with friction", MM, movement.friction_close_m),
+    NUM("seal.width_m", "Joint width at sealing", MM, seal.width_m),
+    NUM("seal.least_width_m", "Least width", MM, seal.least_width_m),
+    NUM("seal.tolerance_m", "Width tolerance", MM, seal.tolerance_m),
+    NUM("seal.depth_m", "Bead depth", MM, seal.depth_m),
+    NUM("seal.recess_m", "Left low", MM, seal.recess_m),
+    NUM("seal.extension", "Stretches", SHARE, seal.extension),
+    NUM("seal.compression", "Is squeezed", SHARE, seal.compression),
+    NUM("seal.extension_capacity", "Good for, stretch", SHARE, seal.extension_capacity),
+    NUM("seal.compression_capacity", "Good for, squeeze", SHARE, seal.compression_capacity),
+    NUM("seal.bead_strain", "Stretch at the curved edge of the bead", SHARE, seal.bead_strain),
+    NUM("seal.rod_m", "Rod", MM, seal.rod_m),
+    NUM("seal.bulge_m", "Bulge when closed", MM, seal.bulge_m),
+    NUM("seal.cut_depth_m", "Depth of the wide cut", MM, seal.cut_depth_m),
+    NUM("seal.next_down_m", "Next narrower blade", MM, seal.next_down_m),
+    NUM("seal.next_down_extension", "stretches there", SHARE, seal.next_down_extension),
+    NUM("seal.next_up_m", "Next wider blade", MM, seal.next_up_m),
+    NUM("seal.next_up_extension", "stretches there", SHARE, seal.next_up_extension),
+    NUM("seal.window_coldest_c", "May be sealed from", DEGC, seal.window_coldest_c),
+    NUM("seal.window_hottest_c", "May be sealed up to", DEGC, seal.window_hottest_c),
+    {"seal.verdict", "The seal", RESULT_VERDICT, QUANTITY_NONE, 1.0, AT(seal.verdict)},
+    WORD("seal.basis", "Judged by", seal.basis),
+    NUM("cut.least_m", "First cut at least", MM, cut.least_m),
+    NUM("cut.most_m", "First cut at most", MM, cut.most_m),
+    NUM("cut.set_m", "Set the saw to", MM, cut.set_m),
+    NUM("quantities.contraction_m", "Cut joints", METRES, quantities.contraction_m),
+    NUM("quantities.construction_m", "Pour ends", METRES, quantities.construction_m),
+    NUM("quantities.isolation_m", "Soft board", METRES, quantities.isolation_m),
+    NUM("quantities.expansion_m", "Expansion joints", METRES, quantities.expansion_m),
+    NUM("quantities.saw_m", "Sawing", METRES, quantities.saw_m),
+    NUM("quantities.sealed_m", "Sealed", METRES, quantities.sealed_m),
+    LITRES("quantities.sealant_net_l", "Sealant, net", quantities.sealant_net_m3),
+    LITRES("quantities.sealant_cusps_l", "Beside the round rod", quantities.sealant_cusps_m3),
+    LITRES("quantities.sealant_order_l", "Sealant to order", quantities.sealant_order_m3),
+    NUM("quantities.filler_m2", "Board area, m2", QUANTITY_NONE, quantities.filler_m2),
+    NUM("quantities.slab_m2", "Slab area, m2", QUANTITY_NONE, quantities.area_m2),
+    NUM("quantities.concrete_m3", "Concrete, m3", QUANTITY_NONE, quantities.volume_m3),
+    NUM("steel.dowel_diameter_m", "Dowel", MM, steel.dowel_diameter_m),
+    NUM("steel.dowel_length_m", "Dowel length", MM, steel.dowel_length_m),
+    NUM("steel.dowel_spacing_m", "Dowel spacing", MM, steel.dowel_spacing_m),
+    NUM("steel.tie_diameter_m", "Tie bar", MM, steel.tie_diameter_m),
+    NUM("steel.tie_spacing_m", "Tie bar spacing", MM, steel.tie_spacing_m),
+    NUM("steel.tie_length_m", "Tie bar length", MM, steel.tie_length_m),
+    NUM("restraint.edge_pa", "Curling stress, edge", QUANTITY_STRESS, restraint.edge_pa),
+    NUM("restraint.interior_pa", "Curling stress, inside", QUANTITY_STRESS, restraint.interior_pa),
+    NUM("restraint.lift_m", "Edge would lift", MM, restraint.lift_m),
+    NUM("restraint.settlement_m", "Own weight presses down", MM, restraint.settlement_m),
+    NUM("restraint.locked_pa", "Stress if locked, one way", QUANTITY_STRESS, restraint.locked_pa),
+    NUM("restraint.locked_both_pa", "Stress if locked, both ways", QUANTITY_STRESS,
+        restraint.locked_both_pa),
+    NUM("restraint.lift_off_hinge_k", "Lift-off limit at a joint", QUANTITY_DIFFERENCE,
+        restraint.lift_off_hinge_k),
+    NUM("restraint.lift_off_continuous_k", "Lift-off limit between joints", QUANTITY_DIFFERENCE,
+        restraint.lift_off_continuous_k),
+    NUM("restraint.rise_left_k", "Rise left before lift-off is possible", QUANTITY_DIFFERENCE,
+        restraint.rise_left_k),
+};
+const size_t result_count = sizeof result_table / sizeof *result_table;
+
+#define COLUMN(key, label, type, quantity, scale, struct_name, member)                             \
+    {key, label, type, quantity, scale, offsetof(struct struct_name, member), 0}
+#define CNUM(s, key, label, quantity, member)                                                      \
+    COLUMN(key, label, RESULT_NUMBER, quantity, 1.0, s, member)
+#define CWORD(s, key, label, member) COLUMN(key, label, RESULT_WORD, QUANTITY_NONE, 1.0, s, member)
+#define CTEXT(s, key, label, member) COLUMN(key, label, RESULT_TEXT, QUANTITY_NONE, 1.0, s, member)
+#define CINT(s, key, label, member) COLUMN(key, label, RESULT_INT, QUANTITY_NONE, 1.0, s, member)
+#define CVERDICT(s, member)                                                                        \
+    COLUMN("verdict", "verdict", RESULT_VERDICT, QUANTITY_NONE, 1.0, s, member)
+#define COUNT(table) (sizeof(table) / sizeof *(table))
+
+static const struct column limit_columns[] = {
+    CWORD(plan_limit, "rule", "rule", rule),
+    CNUM(plan_limit, "limit_m", "limit", METRES, limit_m),
+    CTEXT(plan_limit, "words", "in words", words),
+    CWORD(plan_limit, "source", "source", source),
+    COLUMN("applies", "applies", RESULT_APPLIES, QUANTITY_NONE, 1.0, plan_limit, applies),
+};
+static const struct column working_columns[] = {
+    CINT(plan_working, "n", "1 in", n),
+    CNUM(plan_working, "open_m", "opens by", MM, open_m),
+    CNUM(plan_working, "close_m", "closes by", MM, close_m),
+    CNUM(plan_working, "extension", "stretch", SHARE, extension),
+    CNUM(plan_working, "compression", "squeeze", SHARE, compression),
+    CVERDICT(plan_working, verdict),
+};
+static const struct column table_columns[] = {
+    CNUM(plan_table_row, "slab_c", "slab", DEGC, slab_c),
+    CNUM(plan_table_row, "gap_m", "width", MM, gap_m),
+    CNUM(plan_table_row, "extension", "stretch", SHARE, extension),
+    CNUM(plan_table_row, "compression", "squeeze", SHARE, compression),
+    COLUMN("too_cold", "too cold", RESULT_BOOL, QUANTITY_NONE, 1.0, plan_table_row, too_cold),
+    CVERDICT(plan_table_row, verdict),
+};
+static const struct column isolation_columns[] = {
+    CTEXT(plan_isolation, "where", "where", where),
+    CNUM(plan_isolation, "run_m", "pushed by", METRES, run_m),
+    CNUM(plan_isolation, "from_c", "from", DEGC, from_c),
+    CNUM(plan_isolation, "expansion_m", "takes up", MM, expansion_m),
+    CNUM(plan_isolation, "filler_m", "board", MM, filler_m),
+    CNUM(plan_isolation, "least_filler_m", "board at least", MM, least_filler_m),
+    CNUM(plan_isolation, "extension", "stretch", SHARE, extension),
+    CNUM(plan_isolation, "compression", "squeeze", SHARE, compression),
+    CVERDICT(plan_isolation, verdict),
+};
+static const struct column check_columns[] = {
+    CTEXT(plan_check, "id", "check", id),
+    CTEXT(plan_check, "label", "what", label),
+    CNUM(plan_check, "demand", "is", QUANTITY_NONE, demand),
+    CNUM(plan_check, "capacity", "limit", QUANTITY_NONE, capacity),
+    CWORD(plan_check, "unit", "unit", unit),
+    COLUMN("binding", "binding", RESULT_BOOL, QUANTITY_NONE, 1.0, plan_check, binding),
+    CVERDICT(plan_check, verdict),
+    CTEXT(plan_check, "source", "source", source),
+    CTEXT(plan_check, "remedy", "what to do", remedy),
+};
+static const struct column package_columns[] = {
+    COLUMN("size_l", "size", RESULT_NUMBER, QUANTITY_VOLUME, 1000.0, plan_package, size_m3),
+    CINT(plan_package, "count", "packs", count),
+};
+static const struct column rod_columns[] = {
+    CNUM(plan_rod, "diameter_m", "rod", MM, diameter_m),
+    CNUM(plan_rod, "length_m", "length", METRES, length_m),
+};
+#define JNUM(key, label, quantity, member)                                                         \
+    {key, label, RESULT_NUMBER, quantity, 1.0, offsetof(struct plan_joint, member), 1}
+static const struct column joint_columns[] = {
+    CTEXT(layout_joint, "id", "joint", id),
+    {"kind", "kind", RESULT_KIND, QUANTITY_NONE, 1.0, 0, 0},
+    CNUM(layout_joint, "x1", "x1", METRES, x1),
+    CNUM(layout_joint, "y1", "y1", METRES, y1),
+    CNUM(layout_joint, "x2", "x2", METRES, x2),
+    CNUM(layout_joint, "y2", "y2", METRES, y2),
+    JNUM("length_m", "length", METRES, length_m),
+    {"tied", "tied", RESULT_BOOL, QUANTITY_NONE, 1.0, offsetof(struct plan_joint, tied), 1},
+    JNUM("open_m", "opens by", MM, open_m),
+    JNUM("close_m", "closes by", MM, close_m),
+    JNUM("width_m", "width", MM, width_m),
+    JNUM("extension", "stretch", SHARE, extension),
+    JNUM("compression", "squeeze", SHARE, compression),
+    {"verdict", "verdict", RESULT_VERDICT, QUANTITY_NONE, 1.0, offsetof(struct plan_joint, verdict),
+     1},
+};
+
+#define ROWS(name, array, count)                                                                   \
+    static size_t name(const struct plan *plan, const void *arrays[2])                             \
+    {                                                                                              \
+        arrays[0] = plan->array;                                                                   \
+        arrays[1] = NULL;                                                                          \
+        return plan->count;                                                                        \
+    }
+ROWS(limit_rows, spacing.rows, spacing.count)
+ROWS(working_rows, working, working_count)
+ROWS(table_rows, table, table_count)
+ROWS(isolation_rows, isolation, isolation_count)
+ROWS(check_rows, checks, check_count)
+ROWS(package_rows, quantities.packages, quantities.package_count)
+ROWS(rod_rows, quantities.rods, quantities.rod_count)
+
+static size_t joint_rows(const struct plan *plan, const void *arrays[2])
+{
+    arrays[0] = plan->layout.joints;
+    arrays[1] = plan->joints;
+    return plan->joints != NULL ? plan->layout.joint_count : 0;
+}
+
+#define LIST(name, columns, type, rows) {name, columns, COUNT(columns), {sizeof(struct type), 0}, rows}
+const struct list list_table[] = {
+    LIST("spacing.limits", limit_columns, plan_limit, limit_rows),
+    LIST("working", working_columns, plan_working, working_rows),
+    LIST("sealing_table", table_columns, plan_table_row, table_rows),
+    LIST("isolation", isolation_columns, plan_isolation, isolation_rows),
+    LIST("checks", check_columns, plan_check, check_rows),
+    LIST("quantities.packages", package_columns, plan_package, package_rows),
+    LIST("quantities.rod_m", rod_columns, plan_rod, rod_rows),
+    {"joints",
+     joint_columns,
+     COUNT(joint_columns),
+     {sizeof(struct layout_joint), sizeof(struct plan_joint)},
+     joint_rows},
+};
+const size_t list_count = COUNT(list_table);
+
+const struct result *result_find(const char *path)
+{
+    for (size_t i = 0; i < result_count; i++)
+        if (strcmp(result_table[i].path, path) == 0)
+            return &result_table[i];
+    return NULL;
+}
+
+const struct list *list_find(const char *name)
+{
+    for (size_t i = 0; i < list_count; i++)
+        if (strcmp(list_table[i].name, name) == 0)
+            return &list_table[i];
+    return NULL;
+}
+
+double result_number(const struct result *result, const struct plan *plan)
+{
+    double value;
+
+    if (result->type != RESULT_NUMBER)
+        return NAN;
+    memcpy(&value, (const char *)plan + result->offset, sizeof value);
+    return value;
+}
+
+const char *applies_word(enum applies applies)
+{
+    static const char *const words[] = {"governs", "advice", "no"};
+
+    return words[applies];
+}
+
+const char *joint_kind_word(const struct layout_joint *joint)
+{
+    static const char *const words[] = {"contraction", "construction", "isolation"};
+
+    return joint->expansion ? "expansion" : words[joint->kind];
+}
+
+static void show(struct text *out, enum result_type type, enum quantity quantity, const void *place,
+                 enum unit_system units)
+{
+    switch (type) {
+    case RESULT_NUMBER:
+        unit_show(out, *(const double *)place, quantity, units);
+        break;
+    case RESULT_INT:
+        text_format(out, "%d", *(const int *)place);
+        break;
+    case RESULT_WORD:
+        text_add(out, *(const char *const *)place ? *(const char *const *)place : "none");
+        break;
+    case RESULT_TEXT:
+        text_add(out, (const char *)place);
+        break;
+    case RESULT_BOOL:
+        text_add(out, *(const bool *)place ? "yes" : "no");
+        break;
+    case RESULT_VERDICT:
+        text_add(out, verdict_screen_word(*(const enum verdict *)place));
+        break;
+    case RESULT_APPLIES:
+        text_add(out, applies_word(*(const enum applies *)place));
+        break;
+    case RESULT_KIND:
+        text_add(out, joint_kind_word((const struct layout_joint *)place));
+        break;
+    }
+}
+
+void result_show(struct text *out, const struct result *result, const struct plan *plan,
+                 enum unit_system units)
+{
+    show(out, result->type, result->quantity, (const char *)plan + result->offset, units);
+}
+
+void column_show(struct text *out, const struct column *column, const void *place,
+                 enum unit_system units)
+{
+    show(out, column->type, column->quantity, place, units);
+}
+
+const void *column_place(const struct list *list, const struct column *column,
+                         const void *const arrays[2], size_t row)
+{
+    return (const char *)arrays[column->part] + row * list->size[column->part] + column->offset;
+}
