@@ -1,0 +1,326 @@
+#include "export/answers.h"
+#include "export/names.h"
+#include "job/field.h"
+#include "job/table.h"
+#include "plan/result.h"
+#include <math.h>
+#include <stdio.h>
+#include <string.h>
+
+enum { SHOW_MOST = 48 };
+
+/* A value for people in the job's units, in a small buffer of its own. */
+struct shown {
+    char words[SHOW_MOST];
+};
+
+static struct shown show(const struct plan *plan, double si, enum quantity quantity)
+{
+    struct shown shown;
+    struct text text = {0};
+
+    unit_show(&text, si, quantity, (enum unit_system)plan->job.job_units);
+    snprintf(shown.words, sizeof shown.words, "%s", text_string(&text));
+    text_free(&text);
+    return shown;
+}
+
+#define LENGTH(si) show(plan, (si), QUANTITY_LENGTH).words
+#define SMALL(si) show(plan, (si), QUANTITY_SMALL_LENGTH).words
+#define TEMP(si) show(plan, (si), QUANTITY_TEMPERATURE).words
+
+static struct shown percent(double ratio)
+{
+    struct shown shown;
+
+    snprintf(shown.words, sizeof shown.words, "%.1f %%", 100 * ratio);
+    return shown;
+}
+#define PERCENT(ratio) percent(ratio).words
+
+/* A whole per cent without a decimal: "25 %". */
+static struct shown whole_percent(double ratio)
+{
+    struct shown shown;
+
+    snprintf(shown.words, sizeof shown.words, "%.3g %%", 100 * ratio);
+    return shown;
+}
+
+static void limit_sentence(const struct plan *plan, char *out, size_t size)
+{
+    const char *rule = plan->spacing.governed_by;
+
+    if (rule != NULL && strcmp(rule, "typed") == 0 && plan->spacing.rule_words != NULL)
+        snprintf(out, size, "Your limit; %s would be %s.", plan->spacing.rule_words,
+                 LENGTH(plan->spacing.rule_limit_m));
+    else if (plan->spacing.rule_words != NULL)
+        snprintf(out, size, "Limit set by %s.", plan->spacing.rule_words);
+    else
+        snprintf(out, size, "Your limit.");
+}
+
+static double joint_total(const struct plan *plan)
+{
+    return plan->quantities.contraction_m + plan->quantities.construction_m;
+}
+
+/* The names of the first few panels that break a rule: "7B, 8B". */
+static size_t broken_panels(const struct plan *plan, char *names, size_t size)
+{
+    size_t count = 0, used = 0;
+
+    names[0] = '\0';
+    for (size_t i = 0; i < plan->layout.panel_count; i++) {
+        char name[2 * LINE_NAME_MOST];
+        if (plan->layout.panels[i].reason_count == 0)
+            continue;
+        if (count++ < 4 && used < size) {
+            name_panel(&plan->layout, &plan->layout.panels[i], name);
+            used += (size_t)snprintf(names + used, size - used, "%s%s", used > 0 ? ", " : "", name);
+        }
+    }
+    return count;
+}
+
+/* Widest gap between neighbouring lines in one direction, as drawn. */
+static void panel_sizes(const struct plan *plan, double *along, double *across)
+{
+    *along = *across = 0;
+    for (size_t i = 0; i < plan->layout.panel_count; i++) {
+        const struct layout_panel *panel = &plan->layout.panels[i];
+        double x0 = panel->ring[0].x, x1 = x0, y0 = panel->ring[0].y, y1 = y0;
+        for (size_t j = 1; j < panel->count; j++) {
+            x0 = fmin(x0, panel->ring[j].x);
+            x1 = fmax(x1, panel->ring[j].x);
+            y0 = fmin(y0, panel->ring[j].y);
+            y1 = fmax(y1, panel->ring[j].y);
+        }
+        *along = fmax(*along, x1 - x0);
+        *across = fmax(*across, y1 - y0);
+    }
+}
+
+static void answer_joints(const struct plan *plan, char *sentence, size_t size, char *more,
+                          size_t more_size)
+{
+    double along, across;
+    char limit[160], names[64];
+    size_t broken = broken_panels(plan, names, sizeof names);
+
+    limit_sentence(plan, limit, sizeof limit);
+    if (!plan->has_outline) {
+        snprintf(sentence, size, "at most %s apart. %s", LENGTH(plan->spacing.limit_m), limit);
+        return;
+    }
+    panel_sizes(plan, &along, &across);
+    if (plan->layout.panel_count == 1)
+        snprintf(sentence, size, "none: one panel. %s", limit);
+    else if (fabs(along - across) < 0.0005)
+        snprintf(sentence, size, "every %s both ways, %s. %s", LENGTH(along),
+                 LENGTH(joint_total(plan)), limit);
+    else
+        snprintf(sentence, size, "up to %s along, %s across, %s. %s", LENGTH(along), LENGTH(across),
+                 LENGTH(joint_total(plan)), limit);
+    if (broken > 0)
+        snprintf(sentence, size, "%zu panel%s break%s a rule: %s%s (plan). %s of joint.", broken,
+                 broken == 1 ? "" : "s", broken == 1 ? "s" : "", names, broken > 4 ? " ..." : "",
+                 LENGTH(joint_total(plan)));
+    snprintf(more, more_size, "%zu panels, largest %s x %s; at least %d panels are needed.",
+             plan->layout.panel_count, LENGTH(along), LENGTH(across), plan->layout.bound_panels);
+}
+
+static void answer_cut(const struct plan *plan, char *sentence, size_t size, char *more,
+                       size_t more_size)
+{
+    char depth[2 * SHOW_MOST + 8];
+
+    snprintf(depth, sizeof depth, "%s to %s deep", SMALL(plan->cut.least_m),
+             SMALL(plan->cut.most_m));
+    if (plan->job.given[FIELD_pour_start])
+        snprintf(sentence, size, "%s; when: trial cuts (4 h in heat to 3 days in cold).", depth);
+    else
+        snprintf(sentence, size, "%s. Type the start of the pour for clock times.", depth);
+    snprintf(more, more_size,
+             "Start when the edge stays sharp; trial cuts decide. Set the saw to %s.",
+             SMALL(plan->cut.set_m));
+}
+
+static void answer_seal(const struct plan *plan, char *sentence, size_t size, char *more,
+                        size_t more_size)
+{
+    int kind = plan->job.sealant_kind;
+
+    if (kind == SEALANT_NONE) {
+        snprintf(sentence, size, "joints stay open: first cut only.");
+        return;
+    }
+    if (!isfinite(plan->seal.width_m)) {
+        snprintf(sentence, size, "nothing to seal: no joint moves.");
+        return;
+    }
+    if (kind == SEALANT_FLOOR_FILLER) {
+        snprintf(sentence, size, "fill %s wide; it will part %s, refill at 90 days.",
+                 SMALL(plan->seal.width_m), whole_percent(plan->seal.extension).words);
+        return;
+    }
+    if (kind == SEALANT_COMPRESSION_SEAL) {
+        snprintf(sentence, size, "at slab %s: %s slot for a %s seal, top %s low.",
+                 TEMP(plan->temperature.sealing_c), SMALL(plan->seal.width_m),
+                 SMALL(plan->seal.rod_m), SMALL(plan->seal.recess_m));
+        return;
+    }
+    snprintf(sentence, size, "at slab %s: %s wide, %s deep, %s rod, top %s low.",
+             TEMP(plan->temperature.sealing_c), SMALL(plan->seal.width_m),
+             SMALL(plan->seal.depth_m), SMALL(plan->seal.rod_m), SMALL(plan->seal.recess_m));
+    if (isfinite(plan->seal.window_coldest_c))
+        snprintf(more, more_size, "As cut it may be sealed with the slab from %s to %s.",
+                 TEMP(plan->seal.window_coldest_c), TEMP(plan->seal.window_hottest_c));
+}
+
+/* What would make a failing seal hold: wider, or a better sealant. */
+static void seal_remedy(const struct plan *plan, char *out, size_t size)
+{
+    double need = fmax(plan->movement.open_m, plan->movement.close_m) /
+                  (plan->seal.width_m - plan->seal.tolerance_m);
+
+    snprintf(out, size, " Needs %s wide or %s sealant.", SMALL(plan->seal.least_width_m),
+             whole_percent(ceil(100 * need - 1e-9) / 100).words);
+}
+
+static void answer_holds(const struct plan *plan, char *word, size_t word_size, char *sentence,
+                         size_t size, char *more, size_t more_size)
+{
+    const struct plan_isolation *worst = NULL;
+    char remedy[128] = "";
+
+    for (size_t i = 0; i < plan->isolation_count; i++)
+        if (plan->isolation[i].verdict == VERDICT_FAILS &&
+            (worst == NULL || plan->isolation[i].compression > worst->compression))
+            worst = &plan->isolation[i];
+    if (worst != NULL) {
+        snprintf(word, word_size, "FAILS");
+        snprintf(sentence, size, "no room at %s: the slab wants %s more on a %s day; it shoves.",
+                 worst->where, SMALL(worst->expansion_m), TEMP(plan->temperature.hottest_c));
+        return;
+    }
+    if (!plan->seal.sealed || plan->seal.verdict == VERDICT_NONE) {
+        snprintf(word, word_size, "NOTE");
+        snprintf(sentence, size, "%s", plan->job.sealant_kind == SEALANT_FLOOR_FILLER
+                                           ? "a floor filler parts from one side as the floor "
+                                             "dries; that is no failure."
+                                           : "no sealant to judge.");
+        return;
+    }
+    snprintf(word, word_size, "%s", verdict_screen_word(plan->seal.verdict));
+    if (plan->seal.verdict == VERDICT_FAILS)
+        seal_remedy(plan, remedy, sizeof remedy);
+    snprintf(sentence, size, "stretches %s, is squeezed %s; the sealant is good for %s.%s",
+             PERCENT(plan->seal.extension), PERCENT(plan->seal.compression),
+             whole_percent(plan->seal.extension_capacity).words, remedy);
+    snprintf(more, more_size, "At the curved edge of the bead the stretch is %s.",
+             PERCENT(plan->seal.bead_strain));
+}
+
+/* The what-if that breaks it first: fewer joints working. */
+static void answer_but(const struct plan *plan, char *sentence, size_t size, char *more,
+                       size_t more_size)
+{
+    const struct plan_working *breaks = NULL, *last = NULL;
+
+    for (size_t i = 0; i < plan->working_count; i++) {
+        last = &plan->working[i];
+        if (last->n > 1 && last->verdict == VERDICT_FAILS && breaks == NULL)
+            breaks = last;
+    }
+    for (size_t i = 0; i < plan->working_count; i++) /* one cut in three is the usual warning */
+        if (plan->working[i].n == 3 && plan->working[i].verdict == VERDICT_FAILS)
+            breaks = &plan->working[i];
+    if (last == NULL || !plan->seal.sealed) {
+        snprintf(sentence, size, "look after the first cold spell: how many cuts have cracked?");
+        return;
+    }
+    if (breaks == NULL) {
+        snprintf(sentence, size, "nothing within reason breaks it; worst: 1 cut in %d, %s of %s.",
+                 last->n, PERCENT(last->extension),
+                 whole_percent(plan->seal.extension_capacity).words);
+        return;
+    }
+    if (breaks->n == 3 && isfinite(plan->seal.holds_when_n3_m))
+        snprintf(sentence, size, "if only 1 cut in %d cracks through: %s, it tears. %s holds then.",
+                 breaks->n, whole_percent(round(100 * breaks->extension) / 100).words,
+                 SMALL(plan->seal.holds_when_n3_m));
+    else
+        snprintf(sentence, size, "if only 1 cut in %d cracks through: %s, it tears. Measure each.",
+                 breaks->n, whole_percent(round(100 * breaks->extension) / 100).words);
+    snprintf(more, more_size, "That joint opens by %s.", SMALL(breaks->open_m));
+}
+
+/* The inputs whose likely error changes the answer most, skipping those the user typed. */
+static void check_first(const struct plan *plan, char *out, size_t size)
+{
+    const struct job *job = &plan->job;
+    const char *words[6];
+    size_t count = 0, used = 0;
+
+    words[count++] = "cracks";
+    if (!job->given[FIELD_climate_slab_coldest])
+        words[count++] = "slab temperature";
+    if (!job->given[FIELD_concrete_shrinkage])
+        words[count++] = "drying";
+    if (plan->has_outline && job->edge_count == 0)
+        words[count++] = "walls";
+    if (!job->given[FIELD_concrete_expansion] && job->concrete_aggregate.row < 0)
+        words[count++] = "stone";
+    out[0] = '\0';
+    for (size_t i = 0; i < count && i < 3 && used < size; i++)
+        used += (size_t)snprintf(out + used, size - used, "%s%s", i > 0 ? ", " : "", words[i]);
+}
+
+static void answer_buy(const struct plan *plan, char *sentence, size_t size, char *more,
+                       size_t more_size)
+{
+    char packs[160] = "", check[96];
+    size_t used = 0;
+
+    check_first(plan, check, sizeof check);
+    for (size_t i = 0; i < plan->quantities.package_count && used < sizeof packs; i++) {
+        const struct plan_package *package = &plan->quantities.packages[i];
+        if (package->count > 0)
+            used += (size_t)snprintf(packs + used, sizeof packs - used, "%s%d x %s",
+                                     used > 0 ? " + " : "", package->count,
+                                     show(plan, package->size_m3, QUANTITY_VOLUME).words);
+    }
+    if (used == 0) {
+        snprintf(sentence, size, "no sealant. Sawing %s.  Check first: %s.",
+                 LENGTH(plan->quantities.saw_m), check);
+        return;
+    }
+    if (plan->quantities.rod_count > 0)
+        snprintf(sentence, size, "%s, %s of rod.  Check first: %s.", packs,
+                 LENGTH(plan->quantities.rods[0].length_m), check);
+    else
+        snprintf(sentence, size, "%s.  Check first: %s.", packs, check);
+    snprintf(more, more_size, "%s with %s waste%s.",
+             show(plan, plan->quantities.sealant_order_m3, QUANTITY_VOLUME).words,
+             whole_percent(plan->job.takeoff_waste).words,
+             plan->quantities.length_typed ? ", for the metres you typed" : "");
+}
+
+void answers_make(const struct plan *plan, struct answers *answers)
+{
+    static const char *const words[ANSWER_MOST] = {"JOINTS", "CUT", "SEAL", "HOLDS", "BUT", "BUY"};
+
+    *answers = (struct answers){.count = ANSWER_MOST};
+    for (size_t i = 0; i < ANSWER_MOST; i++)
+        snprintf(answers->rows[i].word, sizeof answers->rows[i].word, "%s", words[i]);
+#define ROW(i) answers->rows[i].sentence, sizeof answers->rows[i].sentence, answers->rows[i].more,  \
+               sizeof answers->rows[i].more
+    answer_joints(plan, ROW(0));
+    answer_cut(plan, ROW(1));
+    answer_seal(plan, ROW(2));
+    answer_holds(plan, answers->rows[3].word, sizeof answers->rows[3].word, ROW(3));
+    answer_but(plan, ROW(4));
+    answer_buy(plan, ROW(5));
+#undef ROW
+}
