@@ -1,0 +1,404 @@
+#include "export/report.h"
+#include "export/answers.h"
+#include "base/utf8.h"
+#include "export/names.h"
+#include "export/wrap.h"
+#include "job/field.h"
+#include "plan/result.h"
+#include <math.h>
+#include <stdio.h>
+#include <string.h>
+
+enum { LABEL_COLUMNS = 38, JOINTS_MOST = 60 };
+
+static enum unit_system units_of(const struct plan *plan)
+{
+    return (enum unit_system)plan->job.job_units;
+}
+
+static void heading(struct text *out, const char *words)
+{
+    text_format(out, "\n%s\n", words);
+}
+
+/* Pads from `start` to `columns` columns, with at least one blank. */
+static void pad(struct text *out, size_t start, int columns)
+{
+    int used = utf8_columns(text_string(out) + start);
+
+    text_add_char(out, ' ', used < columns ? (size_t)(columns - used) : 1);
+}
+
+/* All single results of a group ("seal"), a line each; those without a value are left out. */
+static void add_results(struct text *out, const struct plan *plan, const char *group)
+{
+    size_t length = strlen(group);
+
+    for (size_t i = 0; i < result_count; i++) {
+        const struct result *result = &result_table[i];
+        size_t start = out->length;
+        if (strncmp(result->path, group, length) != 0 || result->path[length] != '.')
+            continue;
+        if (result->type == RESULT_NUMBER && !isfinite(result_number(result, plan)))
+            continue;
+        text_format(out, "  %s", result->label);
+        pad(out, start, LABEL_COLUMNS);
+        result_show(out, result, plan, units_of(plan));
+        text_add_char(out, '\n', 1);
+    }
+}
+
+static void add_answers(struct text *out, const struct plan *plan)
+{
+    struct answers answers;
+
+    text_format(out, "%s\n\n", plan->job.given[FIELD_job_title] ? plan->job.job_title
+                                                                 : "A job without a title");
+    answers_make(plan, &answers);
+    for (size_t i = 0; i < answers.count; i++) {
+        wrap_add(out, answers.rows[i].word, 12, answers.rows[i].sentence, REPORT_COLUMNS);
+        if (answers.rows[i].more[0] != '\0')
+            wrap_add(out, "", 12, answers.rows[i].more, REPORT_COLUMNS);
+    }
+}
+
+static void add_fields(struct text *out, const struct plan *plan, const char *title,
+                       const enum field_id *ids, size_t count)
+{
+    if (count == 0)
+        return;
+    heading(out, title);
+    for (size_t i = 0; i < count; i++) {
+        const struct field *field = &field_table[ids[i]];
+        size_t start = out->length;
+        text_format(out, "  %s", field->label);
+        pad(out, start, 28);
+        field_show(out, &plan->job, ids[i], units_of(plan));
+        pad(out, start, 50);
+        text_format(out, "%s.%s\n", field->section, field->key);
+    }
+}
+
+static void add_job(struct text *out, const struct plan *plan)
+{
+    add_fields(out, plan, "TYPED OVER A RULE", plan->overrides, plan->override_count);
+    add_fields(out, plan, "ASSUMED (nothing was typed)", plan->assumed, plan->assumed_count);
+}
+
+
+enum { COLUMNS_MOST = 8 };
+
+/* One cell of a list as text. */
+static void cell(struct text *out, const struct list *list, const char *key,
+                 const void *const arrays[2], size_t row, enum unit_system units)
+{
+    for (size_t c = 0; c < list->column_count; c++)
+        if (strcmp(list->columns[c].key, key) == 0)
+            column_show(out, &list->columns[c], column_place(list, &list->columns[c], arrays, row),
+                        units);
+}
+
+static const char *column_label(const struct list *list, const char *key)
+{
+    for (size_t c = 0; c < list->column_count; c++)
+        if (strcmp(list->columns[c].key, key) == 0)
+            return list->columns[c].label;
+    return "";
+}
+
+/* Widest cell of a column, its label included. */
+static int column_width(const struct list *list, const char *key, const void *const arrays[2],
+                        size_t rows, enum unit_system units)
+{
+    int width = utf8_columns(column_label(list, key));
+    struct text text = {0};
+
+    for (size_t r = 0; r < rows; r++) {
+        int columns;
+        text_clear(&text);
+        cell(&text, list, key, arrays, r, units);
+        columns = utf8_columns(text_string(&text));
+        width = columns > width ? columns : width;
+    }
+    text_free(&text);
+    return width;
+}
+
+/* A list as a table: the columns named in `keys` (ended by NULL), at most `most` rows. */
+static void add_list(struct text *out, const struct plan *plan, const char *name,
+                     const char *const *keys, size_t most)
+{
+    const struct list *list = list_find(name);
+    const void *arrays[2];
+    size_t rows = list->rows(plan, arrays), shown = rows < most ? rows : most;
+    int widths[COLUMNS_MOST];
+
+    for (size_t k = 0; keys[k] != NULL; k++)
+        widths[k] = column_width(list, keys[k], arrays, shown, units_of(plan));
+    for (size_t r = 0; r <= shown; r++) { /* row 0: the labels */
+        size_t start = out->length;
+        int column = 2;
+        text_add(out, "  ");
+        for (size_t k = 0; keys[k] != NULL; k++) {
+            if (r == 0)
+                text_add(out, column_label(list, keys[k]));
+            else
+                cell(out, list, keys[k], arrays, r - 1, units_of(plan));
+            column += widths[k] + 2;
+            if (keys[k + 1] != NULL)
+                pad(out, start, column);
+        }
+        text_add_char(out, '\n', 1);
+    }
+    if (shown < rows)
+        text_format(out, "  + %zu more (--csv %s or --json)\n", rows - shown, name);
+}
+
+static void add_spacing(struct text *out, const struct plan *plan)
+{
+    static const char *const keys[] = {"rule", "limit_m", "applies", "words", NULL};
+
+    heading(out, "SPACING");
+    add_results(out, plan, "spacing");
+    text_add_char(out, '\n', 1);
+    add_list(out, plan, "spacing.limits", keys, LIMIT_MOST);
+    text_add(out, "  Advice never shortens the spacing unless rules.counts says so.\n");
+}
+
+static void add_temperature(struct text *out, const struct plan *plan)
+{
+    heading(out, "TEMPERATURE AND MOVEMENT");
+    add_results(out, plan, "temperature");
+    if (plan->temperature.basis != NULL && strcmp(plan->temperature.basis, "estimate") == 0)
+        text_add(out, "  Estimate, cautious. The deck rule is for comparison, no bound here.\n");
+    add_results(out, plan, "shrinkage");
+    add_results(out, plan, "movement");
+    add_results(out, plan, "concrete");
+}
+
+static void add_working(struct text *out, const struct plan *plan)
+{
+    static const char *const keys[] = {"n", "open_m", "extension", "compression", "verdict", NULL};
+
+    if (plan->working_count == 0)
+        return;
+    heading(out, "IF ONLY SOME CUTS CRACK THROUGH");
+    add_list(out, plan, "working", keys, WORKING_MOST);
+}
+
+static void add_seal(struct text *out, const struct plan *plan)
+{
+    heading(out, "SEAL");
+    add_results(out, plan, "seal");
+    add_results(out, plan, "cut");
+    add_working(out, plan);
+}
+
+static void add_table(struct text *out, const struct plan *plan)
+{
+    static const char *const keys[] = {"slab_c",   "gap_m",    "extension", "compression",
+                                       "verdict", "too_cold", NULL};
+
+    if (plan->table_count == 0)
+        return;
+    heading(out, "SEALING TABLE (the joint as cut, sealed at another slab temperature)");
+    add_list(out, plan, "sealing_table", keys, TABLE_MOST);
+}
+
+static void add_isolation(struct text *out, const struct plan *plan)
+{
+    static const char *const keys[] = {"where",       "run_m",   "expansion_m", "filler_m",
+                                       "compression", "verdict", NULL};
+
+    if (plan->isolation_count == 0)
+        return;
+    heading(out, "ISOLATION (soft board, from the slab temperature at set to the hottest)");
+    add_list(out, plan, "isolation", keys, JOINTS_MOST);
+}
+
+static void add_checks(struct text *out, const struct plan *plan)
+{
+    heading(out, "CHECKS (* = decides)");
+    for (size_t i = 0; i < plan->check_count; i++) {
+        const struct plan_check *check = &plan->checks[i];
+        char words[512];
+        char first[32];
+
+        snprintf(first, sizeof first, "%c %s", check->binding ? '*' : ' ',
+                 verdict_screen_word(check->verdict));
+        snprintf(words, sizeof words, "%s: %.4g, limit %.4g%s%s. %s%s%s", check->label,
+                 check->demand, check->capacity, check->unit[0] != '\0' ? " " : "", check->unit,
+                 check->source, check->verdict == VERDICT_FAILS ? " " : "",
+                 check->verdict == VERDICT_FAILS ? check->remedy : "");
+        wrap_add(out, first, 14, words, REPORT_COLUMNS);
+    }
+}
+
+static void add_quantities(struct text *out, const struct plan *plan)
+{
+    static const char *const packs[] = {"size_l", "count", NULL};
+    static const char *const rods[] = {"diameter_m", "length_m", NULL};
+
+    heading(out, "QUANTITIES");
+    add_results(out, plan, "quantities");
+    if (plan->quantities.package_count > 0)
+        add_list(out, plan, "quantities.packages", packs, PACKAGE_KINDS);
+    if (plan->quantities.boxes > 0)
+        text_format(out, "  Sold in boxes of %g: %d boxes.\n", plan->job.takeoff_box,
+                    plan->quantities.boxes);
+    if (plan->quantities.rod_count > 0)
+        add_list(out, plan, "quantities.rod_m", rods, PACKAGE_KINDS);
+    if (plan->quantities.isolation_m + plan->quantities.expansion_m > 0)
+        text_add(out, "  Sealant counts cut joints and pour ends; what goes over the soft board is\n"
+                      "  not in it.\n");
+    add_results(out, plan, "steel");
+    add_results(out, plan, "restraint");
+}
+
+static void add_joints(struct text *out, const struct plan *plan)
+{
+    static const char *const keys[] = {"id",        "kind",    "length_m", "open_m",
+                                       "extension", "verdict", "tied",     NULL};
+
+    if (plan->layout.joint_count == 0)
+        return;
+    heading(out, "JOINTS");
+    add_list(out, plan, "joints", keys, JOINTS_MOST);
+}
+
+static void add_reasons(struct text *out, const char *name, const struct layout_reason *reasons,
+                        size_t count)
+{
+    for (size_t i = 0; i < count; i++) {
+        char words[400];
+        snprintf(words, sizeof words, "%s %s", reasons[i].cause, reasons[i].remedy);
+        wrap_add(out, name, 8, words, REPORT_COLUMNS);
+    }
+}
+
+static void add_layout(struct text *out, const struct plan *plan)
+{
+    const struct layout *layout = &plan->layout;
+
+    if (!plan->has_outline)
+        return;
+    heading(out, "LAYOUT");
+    text_format(out, "  %zu panels (at least %d are needed), %zu pieces of joint, %d broken rule%s\n",
+                layout->panel_count, layout->bound_panels, layout->joint_count, layout->violations,
+                layout->violations == 1 ? "" : "s");
+    for (size_t i = 0; i < layout->box_count; i++)
+        if (layout->boxes[i].words[0] != '\0')
+            text_format(out, "  %s\n", layout->boxes[i].words);
+    add_reasons(out, "  slab", layout->reasons, layout->reason_count);
+    for (size_t i = 0; i < layout->panel_count; i++) {
+        char name[2 * LINE_NAME_MOST + 2] = "  ";
+        name_panel(layout, &layout->panels[i], name + 2);
+        add_reasons(out, name, layout->panels[i].reasons, layout->panels[i].reason_count);
+    }
+}
+
+const char *report_caution(size_t index)
+{
+    static const char *const cautions[] = {
+        "A planning aid. Local code, the contract and a licensed engineer decide.",
+        "Predictions of cracking and sawing time: trial cuts decide.",
+        "Sawing makes silica dust: water feed or extraction; dry-cutting saws are not covered by "
+        "the usual water-fed rule: extraction and respirator by local rule.",
+        "Hot-pour: burns; no water in the kettle; the container's heating limit.",
+        "Solvents and isocyanates: read the data sheet first. The data sheet beats this table.",
+        "Abrasive blasting only with a low-silica medium, never quartz sand; local law.",
+        "Traffic control first; real lamps at night.",
+        "A figure of thrust or stress is no check of a building: show it to the structural "
+        "engineer.",
+    };
+
+    return index < sizeof cautions / sizeof *cautions ? cautions[index] : NULL;
+}
+
+static void add_cautions(struct text *out, const struct plan *plan)
+{
+    (void)plan;
+    heading(out, "CAUTIONS");
+    for (size_t i = 0; report_caution(i) != NULL; i++)
+        wrap_add(out, "  -", 4, report_caution(i), REPORT_COLUMNS);
+}
+
+void report_findings(struct text *out, const struct finding_list *findings, const char *path)
+{
+    for (size_t i = 0; i < findings->count; i++) {
+        const struct finding *finding = &findings->items[i];
+        if (path != NULL)
+            text_format(out, "%s:", path);
+        if (finding->line > 0)
+            text_format(out, "%d:%d:", finding->line, finding->column);
+        if (path != NULL || finding->line > 0)
+            text_add_char(out, ' ', 1);
+        text_format(out, "%s: %s\n", severity_word(finding->severity), finding->message);
+    }
+}
+
+static void add_findings(struct text *out, const struct plan *plan)
+{
+    if (plan->findings.count == 0)
+        return;
+    heading(out, "TO PUT RIGHT, AND NOTES");
+    for (size_t i = 0; i < plan->findings.count; i++) {
+        const struct finding *finding = &plan->findings.items[i];
+        char first[16];
+        snprintf(first, sizeof first, "  %s", severity_word(finding->severity));
+        wrap_add(out, first, 11, finding->message, REPORT_COLUMNS);
+    }
+}
+
+/* The parts in their order; `key` is the top-level key of the JSON they stand for. */
+static const struct part {
+    const char *key;
+    void (*add)(struct text *out, const struct plan *plan);
+} parts[] = {
+    {"answers", add_answers},
+    {"job", add_job},
+    {"findings", add_findings},
+    {"spacing", add_spacing},
+    {"temperature", add_temperature},
+    {"seal", add_seal},
+    {"sealing_table", add_table},
+    {"isolation", add_isolation},
+    {"checks", add_checks},
+    {"quantities", add_quantities},
+    {"joints", add_joints},
+    {"layout", add_layout},
+    {"cautions", add_cautions},
+};
+/* Keys of the JSON that stand inside another part of the text. */
+static const char *const inside[][2] = {
+    {"shrinkage", "temperature"}, {"movement", "temperature"}, {"concrete", "temperature"},
+    {"working", "seal"},          {"cut", "seal"},             {"steel", "quantities"},
+    {"restraint", "quantities"},  {"program", "answers"},
+};
+
+bool report_text(struct text *out, const struct plan *plan, const char *only)
+{
+    bool found = only == NULL;
+
+    for (size_t i = 0; only != NULL && i < sizeof inside / sizeof *inside; i++)
+        if (strcmp(only, inside[i][0]) == 0) {
+            only = inside[i][1];
+            break;
+        }
+    for (size_t i = 0; i < sizeof parts / sizeof *parts; i++)
+        if (only == NULL || strcmp(only, parts[i].key) == 0) {
+            parts[i].add(out, plan);
+            found = true;
+        }
+    return found;
+}
+
+void report_checks(struct text *out, const struct plan *plan)
+{
+    struct answers answers;
+
+    answers_make(plan, &answers);
+    wrap_add(out, answers.rows[3].word, 12, answers.rows[3].sentence, REPORT_COLUMNS);
+    add_checks(out, plan);
+    add_layout(out, plan);
+}
