@@ -1,0 +1,175 @@
+#include "plan/plan.h"
+#include "base/array.h"
+#include "job/field.h"
+#include "plan/plan_steps.h"
+#include <math.h>
+#include <stdlib.h>
+#include <string.h>
+
+const char *verdict_word(enum verdict verdict)
+{
+    static const char *const words[] = {"holds", "tight", "fails", ""};
+
+    return words[verdict];
+}
+
+const char *verdict_screen_word(enum verdict verdict)
+{
+    static const char *const words[] = {"HOLDS", "JUST HOLDS", "FAILS", "-"};
+
+    return words[verdict];
+}
+
+enum verdict verdict_of(double demand, double capacity)
+{
+    if (!isfinite(demand) || !isfinite(capacity))
+        return VERDICT_NONE;
+    if (demand > capacity * (1 + 1e-9))
+        return VERDICT_FAILS;
+    return demand > 0.9 * capacity ? VERDICT_TIGHT : VERDICT_HOLDS;
+}
+
+/* Every double of the results that no step sets stays "none". */
+static void clear_results(struct plan *plan)
+{
+    plan->spacing.limit_m = plan->spacing.across_limit_m = plan->spacing.rule_limit_m = NAN;
+    plan->movement.open_m = plan->movement.close_m = plan->movement.panel_m = NAN;
+    plan->movement.factor_open_m = plan->movement.factor_close_m = NAN;
+    plan->movement.friction_open_m = plan->movement.friction_close_m = NAN;
+    plan->movement.factor = NAN;
+    plan->seal.width_m = plan->seal.least_width_m = plan->seal.depth_m = NAN;
+    plan->seal.recess_m = plan->seal.tolerance_m = NAN;
+    plan->seal.extension = plan->seal.compression = plan->seal.bead_strain = NAN;
+    plan->seal.extension_capacity = plan->seal.compression_capacity = NAN;
+    plan->seal.rod_m = plan->seal.bulge_m = plan->seal.cut_depth_m = NAN;
+    plan->seal.next_down_m = plan->seal.next_down_extension = NAN;
+    plan->seal.next_down_compression = plan->seal.next_up_compression = NAN;
+    plan->seal.next_up_m = plan->seal.next_up_extension = plan->seal.holds_when_n3_m = NAN;
+    plan->seal.window_coldest_c = plan->seal.window_hottest_c = NAN;
+    plan->seal.verdict = VERDICT_NONE;
+    plan->steel.dowel_diameter_m = plan->steel.dowel_length_m = plan->steel.dowel_spacing_m = NAN;
+    plan->steel.tie_diameter_m = plan->steel.tie_length_m = plan->steel.tie_spacing_m = NAN;
+    plan->steel.drag_steel_m2_per_m = NAN;
+    plan->restraint.edge_pa = plan->restraint.interior_pa = plan->restraint.lift_m = NAN;
+    plan->restraint.bradbury_x = plan->restraint.bradbury_y = plan->restraint.settlement_m = NAN;
+    plan->restraint.rise_left_k = NAN;
+    plan->quantities.sealant_net_m3 = plan->quantities.sealant_cusps_m3 = NAN;
+    plan->quantities.sealant_order_m3 = plan->quantities.filler_m2 = NAN;
+    plan->quantities.area_m2 = plan->quantities.volume_m3 = NAN;
+    plan->governing_joint = SIZE_MAX;
+}
+
+/* A default is worth naming when an answer leans on it: texts, empty optional things and fields of
+ * parts the job does not use are left out. */
+static bool default_counts(const struct plan *plan, enum field_id id)
+{
+    const struct field *field = &field_table[id];
+    double number;
+
+    switch (field->type) {
+    case FIELD_TEXT:
+    case FIELD_DATE:
+    case FIELD_TIME:
+    case FIELD_COUNTS:
+        return false;
+    case FIELD_NUMBER:
+        memcpy(&number, (const char *)&plan->job + field->offset, sizeof number);
+        return isfinite(number);
+    default:
+        return true;
+    }
+}
+
+static void list_assumed(struct plan *plan)
+{
+    static const enum field_id overriding[] = {
+        FIELD_rules_spacing,         FIELD_rules_spacing_across,  FIELD_climate_slab_coldest,
+        FIELD_climate_slab_hottest,  FIELD_sealing_factor,        FIELD_base_friction,
+        FIELD_concrete_modulus,      FIELD_sealant_extension,     FIELD_sealant_compression,
+        FIELD_takeoff_length,        FIELD_sealant_rod,           FIELD_isolation_filler,
+        FIELD_concrete_shrinkage_ultimate, FIELD_pour_zero_stress_temperature,
+    };
+
+    for (int id = 0; id < FIELD_COUNT; id++)
+        if (!plan->job.given[id] && default_counts(plan, (enum field_id)id))
+            plan->assumed[plan->assumed_count++] = (enum field_id)id;
+    for (size_t i = 0; i < sizeof overriding / sizeof *overriding; i++)
+        if (plan->job.given[overriding[i]])
+            plan->overrides[plan->override_count++] = overriding[i];
+}
+
+static enum status run_chain(struct plan *plan, const struct plan_progress *progress)
+{
+    enum status status = STATUS_OK;
+
+    plan_set_concrete(plan);
+    plan_set_temperature(plan);
+    plan_set_shrinkage(plan);
+    plan_set_spacing(plan);
+    if (plan->has_outline)
+        status = plan_set_layout(plan, progress);
+    if (status == STATUS_OK)
+        status = plan_set_movement(plan);
+    if (status != STATUS_OK)
+        return status;
+    plan_set_seal(plan);
+    plan_set_joint_seals(plan);
+    status = plan_set_isolation(plan);
+    if (status != STATUS_OK)
+        return status;
+    plan_set_restraint(plan);
+    plan_set_steel(plan);
+    plan_set_quantities(plan);
+    return plan_set_checks(plan);
+}
+
+enum status plan_make(const struct job *job, struct plan_cache *cache,
+                      const struct plan_progress *progress, struct plan *plan)
+{
+    enum status status;
+
+    (void)cache; /* nothing is remembered yet: a plan with a cache equals a plan without */
+    memset(plan, 0, sizeof *plan);
+    clear_results(plan);
+    status = job_copy(&plan->job, job);
+    if (status != STATUS_OK)
+        return status;
+    job_settle(&plan->job, &plan->findings);
+    job_check(&plan->job, &plan->findings);
+    plan->has_outline = plan->job.outline.count >= 3;
+    if (finding_has_error(&plan->findings))
+        return STATUS_REFUSED;
+    list_assumed(plan);
+    status = run_chain(plan, progress);
+    if (status == STATUS_OK && plan->findings.failed)
+        status = STATUS_NO_MEMORY;
+    if (status == STATUS_OK && finding_has_error(&plan->findings))
+        status = STATUS_REFUSED;
+    return status;
+}
+
+void plan_free(struct plan *plan)
+{
+    job_free(&plan->job);
+    finding_free(&plan->findings);
+    layout_free(&plan->layout);
+    free(plan->isolation);
+    free(plan->checks);
+    free(plan->joints);
+    plan->isolation = NULL;
+    plan->checks = NULL;
+    plan->joints = NULL;
+    plan->isolation_count = plan->check_count = plan->check_capacity = 0;
+}
+
+int plan_exit_status(const struct plan *plan)
+{
+    if (finding_has_error(&plan->findings))
+        return 2;
+    if (plan->layout.violations > 0)
+        return 1;
+    for (size_t i = 0; i < plan->check_count; i++)
+        if (plan->checks[i].binding && plan->checks[i].verdict == VERDICT_FAILS)
+            return 1;
+    return 0;
+}

@@ -1,0 +1,83 @@
+#include "base/utf8.h"
+#include "plan/why.h"
+#include <stdio.h>
+#include <string.h>
+
+enum { WHY_COLUMNS = 78 };
+
+static void pad_to(struct text *out, size_t line_start, int column)
+{
+    int used = utf8_columns(text_string(out) + line_start);
+
+    text_add_char(out, ' ', used < column ? (size_t)(column - used) : 1);
+}
+
+/* Words after a label, wrapped at WHY_COLUMNS with an indent of ten. */
+static void paragraph(struct text *out, const char *label, const char *words)
+{
+    size_t start = out->length;
+
+    if (words[0] == '\0')
+        return;
+    text_add(out, label);
+    pad_to(out, start, 10);
+    while (*words != '\0') {
+        size_t length = strcspn(words, " ");
+        if (utf8_columns(text_string(out) + start) + (int)length > WHY_COLUMNS) {
+            text_add_char(out, '\n', 1);
+            start = out->length;
+            text_add_char(out, ' ', 10);
+        }
+        text_add_bytes(out, words, length);
+        words += length;
+        words += strspn(words, " ");
+        if (*words != '\0')
+            text_add_char(out, ' ', 1);
+    }
+    text_add_char(out, '\n', 1);
+}
+
+static void add_line(struct text *out, const struct why_line *line)
+{
+    size_t start = out->length;
+
+    text_format(out, "  %s", line->step);
+    pad_to(out, start, 11);
+    text_add(out, line->words);
+    if (line->sum[0] != '\0') {
+        text_add_char(out, '\n', 1);
+        start = out->length;
+        pad_to(out, start, 15);
+        text_add(out, line->sum);
+    }
+    pad_to(out, start, 54);
+    text_add(out, line->value);
+    pad_to(out, start, 66);
+    text_add(out, line->from);
+    while (out->length > 0 && out->bytes[out->length - 1] == ' ')
+        out->bytes[--out->length] = '\0';
+    text_add_char(out, '\n', 1);
+}
+
+void why_print(struct text *out, const struct why *why)
+{
+    paragraph(out, "WHY", why->question);
+    paragraph(out, "", why->answer);
+    text_add_char(out, '\n', 1);
+    for (size_t i = 0; i < why->line_count; i++)
+        add_line(out, &why->lines[i]);
+    text_add_char(out, '\n', 1);
+    paragraph(out, "FORMULA", why->formula);
+    for (size_t i = 0; i < why->try_count; i++) {
+        size_t start = out->length;
+        text_add(out, i == 0 ? "TRY" : "");
+        pad_to(out, start, 10);
+        text_add(out, why->tries[i].words);
+        pad_to(out, start, 54);
+        text_add(out, why->tries[i].value);
+        pad_to(out, start, 66);
+        text_format(out, "%s\n", why->tries[i].verdict);
+    }
+    paragraph(out, "VALID", why->valid);
+    paragraph(out, "SOURCE", why->source);
+}
