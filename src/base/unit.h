@@ -64,6 +64,8 @@ const char *unit_list(enum quantity quantity);
 void unit_show(struct text *out, double si, enum quantity quantity, enum unit_system system);
 /* Adds a value that reads back to the same double to 1e-12 relative, for the job file. */
 void unit_write(struct text *out, double si, enum quantity quantity, enum unit_system system);
+/* The same in a unit of your choice; adds nothing for nan, inf or an unknown unit. */
+void unit_write_as(struct text *out, double si, enum quantity quantity, const char *unit);
 /* Shortest exact-enough decimal: at most `decimals`, trailing zeros cut. */
 void unit_add_number(struct text *out, double number, int decimals);
 

@@ -40,7 +40,8 @@ static struct unit_reading failure(const char *problem, size_t at)
     return (struct unit_reading){.problem = problem, .at = at, .si = NAN};
 }
 
-/* [sign] digits [. digits] | . digits, then [e [sign] digits]; an exponent without digits is none. */
+/* [sign] digits [. digits] | . digits, then [e [sign] digits]; an exponent without digits is none.
+ */
 static bool scan_number(struct cursor *c)
 {
     size_t digits, mark;
@@ -170,8 +171,8 @@ static bool take_mark(struct cursor *c, char mark, const char *word)
     return false;
 }
 
-/* inches with their mark; false leaves the cursor. */
-static bool read_inches(struct cursor *c, double *metres)
+/* Inches with their mark; false leaves the cursor. */
+static bool read_inches(struct cursor *c, double *result)
 {
     struct cursor start = *c;
     double inches;
@@ -179,7 +180,7 @@ static bool read_inches(struct cursor *c, double *metres)
     if (read_inch_number(c, &inches)) {
         skip_blanks(c);
         if (take_mark(c, '"', "in")) {
-            *metres = inches * 0.0254;
+            *result = inches;
             return true;
         }
     }
@@ -187,8 +188,9 @@ static bool read_inches(struct cursor *c, double *metres)
     return false;
 }
 
-/* feet [ - ] inches | feet | inches, with an optional sign before; false leaves the cursor. */
-static bool read_feet_inches(struct cursor *c, double *metres)
+/* feet [ - ] inches | feet | inches, in inches, with an optional sign before; false leaves the
+ * cursor. */
+static bool read_feet_inches(struct cursor *c, double *result)
 {
     struct cursor start = *c;
     double sign = 1, feet, inches = 0;
@@ -196,8 +198,8 @@ static bool read_feet_inches(struct cursor *c, double *metres)
 
     if (peek(c) == '-' || peek(c) == '+')
         sign = c->text[c->at++] == '-' ? -1 : 1;
-    if (read_inches(c, metres)) {
-        *metres *= sign;
+    if (read_inches(c, result)) {
+        *result *= sign;
         return true;
     }
     from = c->at;
@@ -213,7 +215,7 @@ static bool read_feet_inches(struct cursor *c, double *metres)
                 skip_blanks(c);
                 if (!read_inches(c, &inches))
                     *c = end;
-                *metres = sign * (feet * 0.3048 + inches);
+                *result = sign * (feet * 12 + inches);
                 return true;
             }
         }
@@ -263,7 +265,7 @@ static struct unit_reading read_with_unit(struct cursor c, enum quantity quantit
         if (unit == NULL)
             unit = unit_table_of(quantity);
     }
-    reading.si = number * unit->scale + unit->offset;
+    reading.si = unit_apply(unit, number);
     return isfinite(reading.si) ? reading : failure("is too large a number", 0);
 }
 
@@ -272,14 +274,14 @@ struct unit_reading unit_read(const char *text, size_t count, enum quantity quan
 {
     struct cursor c = {text, count, 0};
     struct unit_reading reading = {0};
-    double metres;
+    double inches;
 
     if (count == 0)
         return failure("is empty", 0);
-    if (unit_is_length(quantity) && read_feet_inches(&c, &metres)) {
-        if (!isfinite(metres))
+    if (unit_is_length(quantity) && read_feet_inches(&c, &inches)) {
+        if (!isfinite(inches))
             return failure("is too large a number", 0);
-        reading.si = metres;
+        reading.si = inches * 254 / 10000;
         reading.has_unit = true;
         reading.length = c.at;
         return reading;

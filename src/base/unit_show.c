@@ -15,7 +15,8 @@ static void add_fixed(struct text *out, double number, int decimals, int least)
     snprintf(digits, sizeof digits, "%.*f", decimals, number);
     dot = strchr(digits, '.');
     length = strlen(digits);
-    while (dot != NULL && digits[length - 1] == '0' && length - (size_t)(dot - digits) - 1 > (size_t)least)
+    while (dot != NULL && digits[length - 1] == '0' &&
+           length - (size_t)(dot - digits) - 1 > (size_t)least)
         digits[--length] = '\0';
     if (dot != NULL && digits[length - 1] == '.')
         digits[--length] = '\0';
@@ -118,9 +119,10 @@ static void show_time(struct text *out, double seconds)
     static const struct {
         double least, size;
         const char *word;
-    } scales[] = {
-        {2 * 365.25 * 86400, 365.25 * 86400, "years"}, {2 * 86400.0, 86400, "days"},
-        {3600, 3600, "h"}, {0, 60, "min"}};
+    } scales[] = {{2 * 365.25 * 86400, 365.25 * 86400, "years"},
+                  {2 * 86400.0, 86400, "days"},
+                  {3600, 3600, "h"},
+                  {0, 60, "min"}};
 
     for (size_t i = 0; i < sizeof scales / sizeof *scales; i++)
         if (fabs(seconds) >= scales[i].least) {
@@ -200,15 +202,22 @@ void unit_show(struct text *out, double si, enum quantity quantity, enum unit_sy
     }
 }
 
-void unit_write(struct text *out, double si, enum quantity quantity, enum unit_system system)
+void unit_write_as(struct text *out, double si, enum quantity quantity, const char *unit)
 {
-    const char *unit = unit_name(quantity, system);
     char digits[40];
     double number = si, back = NAN;
+    bool millionths;
 
-    unit_from_si(si, unit, quantity, &number);
+    if (!isfinite(si) || !unit_from_si(si, unit, quantity, &number))
+        return;
+    /* 10e-6 /K reads better than 1e-05; above 0.01 plain */
+    millionths = (quantity == QUANTITY_STRAIN || quantity == QUANTITY_PER_KELVIN) &&
+                 fabs(number) >= 1e-9 && fabs(number) < 0.01;
     for (int precision = 6; precision <= 17; precision++) {
-        snprintf(digits, sizeof digits, "%.*g", precision, number);
+        if (millionths)
+            snprintf(digits, sizeof digits, "%.*ge-6", precision, number * 1e6);
+        else
+            snprintf(digits, sizeof digits, "%.*g", precision, number);
         unit_to_si(strtod(digits, NULL), unit, quantity, &back);
         if (back == si)
             break;
@@ -216,4 +225,9 @@ void unit_write(struct text *out, double si, enum quantity quantity, enum unit_s
     text_add(out, digits);
     if (unit[0] != '\0')
         text_format(out, " %s", unit);
+}
+
+void unit_write(struct text *out, double si, enum quantity quantity, enum unit_system system)
+{
+    unit_write_as(out, si, quantity, unit_name(quantity, system));
 }

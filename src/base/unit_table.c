@@ -9,79 +9,96 @@
 #define LB 0.45359237
 #define PSI (LBF / (INCH * INCH))
 #define GALLON 3.785411784e-3
-#define FLOZ (GALLON / 128)
 #define YARD3 (0.9144 * 0.9144 * 0.9144)
-#define FIVE_NINTHS (5.0 / 9.0)
 #define DAY 86400.0
 #define YEAR (365.25 * DAY)
 
-static const struct unit none[] = {{"", 1, 0, false}, {NULL, 0, 0, false}};
+#define UNIT(name, scale, divisor)                                                                 \
+    {                                                                                              \
+        name, scale, divisor, 0, false                                                             \
+    }
+#define ALIAS(name, scale, divisor)                                                                \
+    {                                                                                              \
+        name, scale, divisor, 0, true                                                              \
+    }
+#define SHIFTED(name, scale, divisor, shift)                                                       \
+    {                                                                                              \
+        name, scale, divisor, shift, false                                                         \
+    }
+#define END                                                                                        \
+    {                                                                                              \
+        NULL, 1, 1, 0, false                                                                       \
+    }
+
+static const struct unit none[] = {UNIT("", 1, 1), END};
 static const struct unit lengths[] = {
-    {"mm", 1e-3, 0, false}, {"cm", 1e-2, 0, false}, {"m", 1, 0, false},
-    {"km", 1e3, 0, false},  {"in", INCH, 0, false}, {"ft", FOOT, 0, false},
-    {"\"", INCH, 0, true},  {"'", FOOT, 0, true},   {NULL, 0, 0, false}};
+    UNIT("mm", 1, 1000),     UNIT("cm", 1, 100),      UNIT("m", 1, 1),
+    UNIT("km", 1000, 1),     UNIT("in", 254, 10000),  UNIT("ft", 3048, 10000),
+    ALIAS("\"", 254, 10000), ALIAS("'", 3048, 10000), END};
 static const struct unit stresses[] = {
-    {"Pa", 1, 0, false},     {"kPa", 1e3, 0, false}, {"MPa", 1e6, 0, false},
-    {"GPa", 1e9, 0, false},  {"N/mm2", 1e6, 0, false}, {"psi", PSI, 0, false},
-    {"ksi", 1e3 * PSI, 0, false}, {"N/mm²", 1e6, 0, true}, {NULL, 0, 0, false}};
-static const struct unit subgrades[] = {{"MPa/m", 1e6, 0, false},
-                                        {"kN/m3", 1e3, 0, false},
-                                        {"pci", PSI / INCH, 0, false},
-                                        {"kN/m³", 1e3, 0, true},
-                                        {NULL, 0, 0, false}};
-static const struct unit unit_weights[] = {{"kN/m3", 1e3, 0, false},
-                                           {"pcf", LBF / (FOOT * FOOT * FOOT), 0, false},
-                                           {"N/m3", 1, 0, true},
-                                           {"kN/m³", 1e3, 0, true},
-                                           {NULL, 0, 0, false}};
-static const struct unit temperatures[] = {
-    {"degC", 1, 0, false}, {"C", 1, 0, false},
-    {"°C", 1, 0, false},   {"degF", FIVE_NINTHS, -32 * FIVE_NINTHS, false},
-    {"F", FIVE_NINTHS, -32 * FIVE_NINTHS, false},
-    {"°F", FIVE_NINTHS, -32 * FIVE_NINTHS, false},
-    {"K", 1, -273.15, false}, {NULL, 0, 0, false}};
+    UNIT("Pa", 1, 1),          UNIT("kPa", 1e3, 1),    UNIT("MPa", 1e6, 1),
+    UNIT("GPa", 1e9, 1),       UNIT("N/mm2", 1e6, 1),  UNIT("psi", PSI, 1),
+    UNIT("ksi", 1e3 * PSI, 1), ALIAS("N/mm²", 1e6, 1), END};
+static const struct unit subgrades[] = {UNIT("MPa/m", 1e6, 1), UNIT("kN/m3", 1e3, 1),
+                                        UNIT("pci", PSI / INCH, 1), ALIAS("kN/m³", 1e3, 1), END};
+static const struct unit unit_weights[] = {UNIT("kN/m3", 1e3, 1),
+                                           UNIT("pcf", LBF / (FOOT * FOOT * FOOT), 1),
+                                           ALIAS("N/m3", 1, 1), ALIAS("kN/m³", 1e3, 1), END};
+static const struct unit temperatures[] = {UNIT("degC", 1, 1),
+                                           UNIT("C", 1, 1),
+                                           UNIT("°C", 1, 1),
+                                           SHIFTED("degF", 5, 9, -32),
+                                           SHIFTED("F", 5, 9, -32),
+                                           SHIFTED("°F", 5, 9, -32),
+                                           SHIFTED("K", 1, 1, -273.15),
+                                           END};
 static const struct unit differences[] = {
-    {"K", 1, 0, false},   {"degC", 1, 0, false}, {"degF", FIVE_NINTHS, 0, false},
-    {"C", 1, 0, true},    {"°C", 1, 0, true},    {"F", FIVE_NINTHS, 0, true},
-    {"°F", FIVE_NINTHS, 0, true}, {NULL, 0, 0, false}};
-static const struct unit gradients[] = {{"K/m", 1, 0, false},
-                                        {"degF/in", FIVE_NINTHS / INCH, 0, false},
-                                        {NULL, 0, 0, false}};
-static const struct unit per_kelvins[] = {
-    {"/K", 1, 0, false},   {"/degC", 1, 0, false}, {"/degF", 1.8, 0, false}, {"1/K", 1, 0, true},
-    {"1/degC", 1, 0, true}, {"1/degF", 1.8, 0, true}, {"/C", 1, 0, true},   {"/F", 1.8, 0, true},
-    {"/°C", 1, 0, true},   {"/°F", 1.8, 0, true},  {NULL, 0, 0, false}};
-static const struct unit strains[] = {{"", 1, 0, false},
-                                      {"microstrain", 1e-6, 0, false},
-                                      {"mm/m", 1e-3, 0, true},
-                                      {NULL, 0, 0, false}};
-static const struct unit ratios[] = {{"", 1, 0, false}, {"%", 1e-2, 0, false}, {NULL, 0, 0, false}};
+    UNIT("K", 1, 1),   UNIT("degC", 1, 1), UNIT("degF", 5, 9), ALIAS("C", 1, 1),
+    ALIAS("°C", 1, 1), ALIAS("F", 5, 9),   ALIAS("°F", 5, 9),  END};
+static const struct unit gradients[] = {UNIT("K/m", 1, 1), UNIT("degF/in", 5, 9 * INCH), END};
+static const struct unit per_kelvins[] = {UNIT("/K", 1, 1),
+                                          UNIT("/degC", 1, 1),
+                                          UNIT("/degF", 9, 5),
+                                          ALIAS("1/K", 1, 1),
+                                          ALIAS("1/degC", 1, 1),
+                                          ALIAS("1/degF", 9, 5),
+                                          ALIAS("/C", 1, 1),
+                                          ALIAS("/F", 9, 5),
+                                          ALIAS("/°C", 1, 1),
+                                          ALIAS("/°F", 9, 5),
+                                          END};
+/* micro sign U+00B5 and Greek mu U+03BC both occur on keyboards */
+static const struct unit strains[] = {
+    UNIT("", 1, 1),        UNIT("microstrain", 1, 1e6), ALIAS("mm/m", 1, 1000),
+    ALIAS("µε", 1, 1e6),   ALIAS("με", 1, 1e6),         ALIAS("µm/m", 1, 1e6),
+    ALIAS("μm/m", 1, 1e6), ALIAS("um/m", 1, 1e6),       END};
+static const struct unit ratios[] = {UNIT("", 1, 1), UNIT("%", 1, 100), END};
 static const struct unit volumes[] = {
-    {"ml", 1e-6, 0, false},  {"l", 1e-3, 0, false},   {"m3", 1, 0, false}, {"floz", FLOZ, 0, false},
-    {"gal", GALLON, 0, false}, {"mL", 1e-6, 0, true}, {"L", 1e-3, 0, true}, {"m³", 1, 0, true},
-    {NULL, 0, 0, false}};
-static const struct unit densities[] = {{"kg/m3", 1, 0, false},
-                                        {"pcf", LB / (FOOT * FOOT * FOOT), 0, false},
-                                        {"kg/m³", 1, 0, true},
-                                        {NULL, 0, 0, false}};
-static const struct unit speeds[] = {{"m/s", 1, 0, false},
-                                     {"km/h", 1 / 3.6, 0, false},
-                                     {"mph", 0.44704, 0, false},
-                                     {NULL, 0, 0, false}};
-static const struct unit paces[] = {{"m/h", 1 / 3600.0, 0, false},
-                                    {"ft/h", FOOT / 3600, 0, false},
-                                    {"m/min", 1 / 60.0, 0, false},
-                                    {"ft/min", FOOT / 60, 0, true},
-                                    {"m/s", 1, 0, true},
-                                    {NULL, 0, 0, false}};
-static const struct unit volume_rates[] = {{"m3/h", 1 / 3600.0, 0, false},
-                                           {"yd3/h", YARD3 / 3600, 0, false},
-                                           {"m³/h", 1 / 3600.0, 0, true},
-                                           {NULL, 0, 0, false}};
-static const struct unit angles[] = {{"deg", 1, 0, false}, {"°", 1, 0, true}, {NULL, 0, 0, false}};
-static const struct unit times[] = {{"min", 60, 0, false}, {"h", 3600, 0, false},
-                                    {"d", DAY, 0, false},  {"a", YEAR, 0, false},
-                                    {"s", 1, 0, true},     {NULL, 0, 0, false}};
+    UNIT("ml", 1, 1e6),        UNIT("l", 1, 1000),     UNIT("m3", 1, 1),
+    UNIT("floz", GALLON, 128), UNIT("gal", GALLON, 1), ALIAS("mL", 1, 1e6),
+    ALIAS("L", 1, 1000),       ALIAS("m³", 1, 1),      END};
+static const struct unit densities[] = {
+    UNIT("kg/m3", 1, 1), UNIT("pcf", LB / (FOOT * FOOT * FOOT), 1), ALIAS("kg/m³", 1, 1), END};
+static const struct unit speeds[] = {UNIT("m/s", 1, 1), UNIT("km/h", 1, 3.6),
+                                     UNIT("mph", 0.44704, 1), END};
+static const struct unit paces[] = {UNIT("m/h", 1, 3600), UNIT("ft/h", FOOT, 3600),
+                                    UNIT("m/min", 1, 60), ALIAS("ft/min", FOOT, 60),
+                                    ALIAS("m/s", 1, 1),   END};
+static const struct unit volume_rates[] = {UNIT("m3/h", 1, 3600), UNIT("yd3/h", YARD3, 3600),
+                                           ALIAS("m³/h", 1, 3600), END};
+static const struct unit angles[] = {UNIT("deg", 1, 1), ALIAS("°", 1, 1), END};
+static const struct unit times[] = {UNIT("min", 60, 1), UNIT("h", 3600, 1), UNIT("d", DAY, 1),
+                                    UNIT("a", YEAR, 1), ALIAS("s", 1, 1),   END};
+
+double unit_apply(const struct unit *unit, double number)
+{
+    return (number + unit->shift) * unit->scale / unit->divisor;
+}
+
+double unit_undo(const struct unit *unit, double si)
+{
+    return si * unit->divisor / unit->scale - unit->shift;
+}
 
 const struct unit *unit_table_of(enum quantity quantity)
 {
@@ -129,7 +146,7 @@ bool unit_to_si(double number, const char *unit, enum quantity quantity, double 
 
     if (found == NULL)
         return false;
-    *si = number * found->scale + found->offset;
+    *si = unit_apply(found, number);
     return true;
 }
 
@@ -139,7 +156,7 @@ bool unit_from_si(double si, const char *unit, enum quantity quantity, double *n
 
     if (found == NULL)
         return false;
-    *number = (si - found->offset) / found->scale;
+    *number = unit_undo(found, si);
     return true;
 }
 

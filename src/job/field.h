@@ -56,9 +56,12 @@ extern const size_t repeated_field_count;
 /* NULL / FIELD_COUNT when there is none. */
 const struct field *field_find(const char *section, const char *key);
 enum field_id field_id_of(const char *section, const char *key);
-/* n-th word of a choice field, "" outside. */
-const char *field_choice(const struct field *field, int index);
+/* The n-th word of a choice field into out[size]; "" outside. */
+enum { CHOICE_MOST = 24 };
+void field_choice_word(const struct field *field, int index, char *out, size_t size);
 int field_choice_index(const struct field *field, const char *word, size_t length); /* -1: none */
+/* The unit in which a time is written and read without one: "h", "d" or "a" by its limits. */
+const char *field_time_unit(const struct field *field);
 const char *field_group_word(enum field_group group); /* "drawing", "ticket", ... "the rest" */
 
 /* The value of a single field for people ("200 mm", "granular", "C32/40", "25 %") in the job's or
