@@ -25,11 +25,14 @@ static void add_limits(struct text *out, const struct field *field)
 
 static void add_default(struct text *out, const struct field *field)
 {
+    char word[CHOICE_MOST];
+
     text_add(out, " Left out: ");
+    field_choice_word(field, (int)field->initial, word, sizeof word);
     if (field->words[0] != '\0')
         text_add(out, field->words);
     else if (field->type == FIELD_CHOICE)
-        text_add(out, field_choice(field, (int)field->initial));
+        text_add(out, word);
     else if (field->type == FIELD_NUMBER && isfinite(field->initial))
         unit_show(out, field->initial, field->quantity, UNITS_METRIC);
     else

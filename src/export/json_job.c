@@ -68,7 +68,7 @@ static void add_field(struct json *json, const struct job *job, enum field_id id
 {
     const struct field *field = &field_table[id];
     const void *place = (const char *)job + field->offset;
-    char key[96];
+    char key[96], word[CHOICE_MOST];
 
     snprintf(key, sizeof key, "%s.%s", field->section, field->key);
     switch (field->type) {
@@ -76,7 +76,8 @@ static void add_field(struct json *json, const struct job *job, enum field_id id
         json_number(json, key, *(const double *)place);
         break;
     case FIELD_CHOICE:
-        json_string(json, key, field_choice(field, *(const int *)place));
+        field_choice_word(field, *(const int *)place, word, sizeof word);
+        json_string(json, key, word);
         break;
     case FIELD_TEXT:
         json_string(json, key, job->given[id] ? (const char *)place : NULL);
@@ -133,13 +134,15 @@ void json_add_job(struct json *json, const struct plan *plan)
 
 static void add_choices(struct json *json, const struct field *field)
 {
+    char word[CHOICE_MOST];
+
     if (field->choices == NULL) {
         json_null(json, "choices");
         return;
     }
     json_open(json, "choices", '[');
-    for (int i = 0; field_choice(field, i)[0] != '\0'; i++)
-        json_string(json, NULL, field_choice(field, i));
+    for (int i = 0; field_choice_word(field, i, word, sizeof word), word[0] != '\0'; i++)
+        json_string(json, NULL, word);
     json_close(json, ']');
 }
 
@@ -177,9 +180,11 @@ static void add_in_unit(struct json *json, const char *key, double si, const str
 
 static void add_default(struct json *json, const struct field *field)
 {
-    if (field->type == FIELD_CHOICE && field->words[0] == '\0')
-        json_string(json, "default", field_choice(field, (int)field->initial));
-    else if (field->words[0] != '\0' || field->type != FIELD_NUMBER)
+    if (field->type == FIELD_CHOICE && field->words[0] == '\0') {
+        char word[CHOICE_MOST];
+        field_choice_word(field, (int)field->initial, word, sizeof word);
+        json_string(json, "default", word);
+    } else if (field->words[0] != '\0' || field->type != FIELD_NUMBER)
         json_string(json, "default", field->words);
     else
         add_in_unit(json, "default", field->initial, field);
