@@ -1,0 +1,89 @@
+/* A sealed joint: least width, strains, bead shape, gap against slab temperature, sealing window,
+ * compression seals, choice of a blade. m, degC, ratios of the width at sealing. */
+#ifndef SLABGAP_CORE_SEALANT_H
+#define SLABGAP_CORE_SEALANT_H
+
+#include <stdbool.h>
+#include <stddef.h>
+
+struct sealant_capacity {
+    double extension, compression; /* each way, of the width at sealing (ASTM C920, C719) */
+};
+struct sealant_strain {
+    double extension, compression; /* >= 0 */
+};
+#define SEALANT_TIGHT 0.9 /* above this share of the capacity a joint only just holds */
+
+/* max(open/S_ext, close/S_comp) + tolerance. */
+double sealant_least_width(double open_m, double close_m, struct sealant_capacity capacity,
+                           double tolerance_m);
+/* Basis of the mean width (movement accommodation factor, BS 6093 from memory). */
+double sealant_least_mean_width(double open_m, double close_m, double factor);
+/* Strains of a joint this wide at sealing. */
+struct sealant_strain sealant_strains(double open_m, double close_m, double width_m);
+/* The worse of both as a share of the capacity: <= 0.9 holds, <= 1 just holds. */
+double sealant_demand(struct sealant_strain strain, struct sealant_capacity capacity);
+
+/* Edge strain of the bead's face (Tons 1959): width at rest, depth, width opened to. Information.
+ */
+double sealant_bead_strain(double width_m, double depth_m, double opened_m);
+/* How far the bead's face stands above (closing) or sags below (opening) the edge line, m. */
+double sealant_bulge(double width_m, double depth_m, double width_now_m);
+/* Bead depth: ratio x width, clamped. */
+double sealant_depth(double width_m, double ratio, double least_m, double most_m);
+/* Deepest bead recommended beside the widths of Allen: width / 2, 6 to 13 mm. */
+#define SEALANT_DEPTH_RATIO 0.5
+#define SEALANT_DEPTH_LEAST 0.006
+#define SEALANT_DEPTH_MOST 0.013
+
+/* A joint at its place, for the sealing table and the window. `move` gives the movement of the
+ * joint for a free strain >= 0; NULL: length_m x strain. */
+struct sealant_joint {
+    double width_m, cut_c; /* cut to this width at this slab temperature */
+    double coldest_c, hottest_c;
+    double expansion; /* 1/K */
+    double shrinkage; /* still to come after sealing */
+    double length_m;  /* factor x mean panel length; used when move is NULL */
+    double (*move)(const void *context, double strain);
+    const void *context;
+    struct sealant_capacity capacity;
+};
+struct sealant_row {
+    double slab_c, gap_m, extension, compression;
+    bool open_gap; /* false: the joint is shut, strains are 1 and 1 */
+};
+struct sealant_row sealant_row_at(const struct sealant_joint *joint, double slab_c);
+/* Slab temperatures between coldest and hottest at which the joint may be sealed (both strains
+ * within capacity, within 1e-6 K). False: none. */
+bool sealant_window(const struct sealant_joint *joint, double *coldest_c, double *hottest_c);
+
+/* Narrowest stock width that holds (demand <= 0.9 at width less tolerance) within least..most; -1
+ * when none does. Widths in any order. */
+int sealant_choose_width(const double *widths_m, size_t count, double least_m, double most_m,
+                         double open_m, double close_m, struct sealant_capacity capacity,
+                         double tolerance_m);
+
+/* Preformed compression seal (ASTM D2628; FHWA). Compressions are ratios of the seal's own width.
+ */
+struct sealant_seal {
+    double seal_m;      /* uncompressed width */
+    double least, most; /* working compression, usual 0.20 to 0.50 */
+};
+/* Least uncompressed width for a movement. */
+double sealant_seal_least(double movement_m, double least, double most);
+/* Compression at setting by the linear published formula, and the slot it asks for. */
+double sealant_seal_setting(const struct sealant_seal *seal, double slab_c, double coldest_c,
+                            double hottest_c);
+double sealant_seal_slot(const struct sealant_seal *seal, double setting);
+/* Both ends with the slot as cut: compression at the coldest and at the hottest. */
+struct sealant_seal_ends {
+    double cold, hot;
+    bool holds;
+};
+struct sealant_seal_ends sealant_seal_check(const struct sealant_seal *seal, double slot_m,
+                                            double open_m, double close_m);
+/* Slots that hold; false when there are none. */
+bool sealant_seal_slots(const struct sealant_seal *seal, double open_m, double close_m,
+                        double *least_m, double *most_m);
+
+#endif
