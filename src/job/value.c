@@ -143,6 +143,13 @@ static const char *default_unit(const struct field *field)
     return field_time_unit(field);
 }
 
+size_t value_skip_blanks(const struct value *value, size_t at)
+{
+    while (at < value->count && (value->bytes[at] == ' ' || value->bytes[at] == '\t'))
+        at++;
+    return at;
+}
+
 static bool read_number(const struct value *value, const struct field *field, double *place)
 {
     struct unit_reading reading =
@@ -153,7 +160,7 @@ static bool read_number(const struct value *value, const struct field *field, do
         return false;
     }
     if (reading.length != value->count) {
-        value_refuse(value, reading.length, "",
+        value_refuse(value, value_skip_blanks(value, reading.length), "",
                      "has something after the value; one value with its "
                      "unit stands here");
         return false;

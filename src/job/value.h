@@ -26,6 +26,7 @@ bool value_read_list(const struct value *value, const struct field *field, doubl
                      size_t *count);
 /* Reads the value and throws it away: whether it is good for the field. */
 bool value_good(const struct value *value, const struct field *field);
+size_t value_skip_blanks(const struct value *value, size_t at);
 /* Adds an error finding about the value, its column moved by `at` bytes. */
 __attribute__((format(printf, 4, 5))) void value_refuse(const struct value *value, size_t at,
                                                         const char *limit, const char *format, ...);

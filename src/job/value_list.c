@@ -88,7 +88,7 @@ static bool read_piece(const struct value *value, struct piece piece, enum quant
         return false;
     }
     if (reading.length != piece.length) {
-        value_refuse(&part, reading.length, "",
+        value_refuse(&part, value_skip_blanks(&part, reading.length), "",
                      "has something after the value; a comma separates "
                      "values");
         return false;
