@@ -119,7 +119,7 @@ static bool path_read(const char *text, struct path *path)
 
     *path = (struct path){.text = text};
     path->name.at = path->key.at = "";
-    if (count > PARTS_MOST || !assign_parts(path, parts, lengths, count))
+    if (text[0] == '\0' || count > PARTS_MOST || !assign_parts(path, parts, lengths, count))
         return false;
     path->field = field_of(path);
     return true;
@@ -262,12 +262,12 @@ static enum status check_change(const struct change *change)
     const struct path *path = change->path;
     enum status status;
 
+    if (path->kind == SECTION_UNKNOWN)
+        return refuse(change->findings, path->text, "", "there is no section of that name.");
     if (path->key.length == 0)
         return change->value[0] == '\0' ? STATUS_OK
                                         : refuse(change->findings, path->text, "",
                                                  "name a key after it, such as slab.thickness.");
-    if (path->kind == SECTION_UNKNOWN)
-        return refuse(change->findings, path->text, "", "there is no section of that name.");
     if (path->field == NULL && (change->value[0] != '\0' || change->target.line < 0))
         return refuse(change->findings, path->text, "",
                       "there is no such key; the command fields lists them all.");
