@@ -69,7 +69,7 @@ function c_value(text, unit)
     if (unit == "mm")
         return text " / 1000.0"
     if (unit == "in")
-        return text " * 254 / 10000"
+        return text " * 25.4 / 1000"
     if (unit == "ml")
         return text " / 1e6"
     if (unit == "l")
