@@ -50,7 +50,7 @@ struct sealant_joint {
 };
 struct sealant_row {
     double slab_c, gap_m, extension, compression;
-    bool open_gap; /* false: the joint is shut, strains are 1 and 1 */
+    bool open_gap; /* false: the joint is shut, both strains are 10 */
 };
 struct sealant_row sealant_row_at(const struct sealant_joint *joint, double slab_c);
 /* Slab temperatures between coldest and hottest at which the joint may be sealed (both strains

@@ -20,8 +20,8 @@ struct shrinkage {
     double ultimate_drying; /* value drying goes to, all size and humidity factors in */
 };
 
-/* Mix values of an average ACI 209 concrete: slump 75 mm, fines 50 %, 400 kg/m3, air 6 % would all
- * give factors near 1; these are used when nothing is known. From memory. */
+/* Mix values when nothing is known: slump 75 mm, fines 40 %, 350 kg/m3 cement, air 5 %. From
+ * memory. */
 void shrinkage_mix_default(struct shrinkage_slab *slab);
 
 struct shrinkage shrinkage_en1992(const struct shrinkage_slab *slab, double age_days);

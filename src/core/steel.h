@@ -34,7 +34,8 @@ bool steel_dowels_fit(double thickness_m);
 /* Distributed (drag) steel across a joint-to-joint length: mu L w / (2 fs), m2 per metre width.
  * weight: of the slab per area, N/m2. */
 double steel_drag(double friction, double length_m, double weight_pa, double steel_pa);
-/* How many bars stand in a joint of this length: one in the middle of each spacing. */
+/* How many bars stand in a joint of this length, the first and the last `clear` from its ends
+ * (dowels: half a spacing). */
 int steel_bar_count(double joint_m, double spacing_m, double clear_m);
 
 #endif
