@@ -56,6 +56,8 @@ struct document {
     size_t counts[SECTION_CRACK + 1];
 };
 
+/* Cuts the bytes into lines and reads their grammar (document_parse.c). */
+enum status document_read_lines(struct document *document, struct finding_list *findings);
 enum section_kind section_kind_of(const char *word, size_t length);
 /* The most sections of a kind a file may hold; 0 = one. */
 size_t section_most(enum section_kind kind);
