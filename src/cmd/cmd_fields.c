@@ -28,7 +28,9 @@ static void add_default(struct text *out, const struct field *field)
     char word[CHOICE_MOST];
 
     text_add(out, " Left out: ");
-    field_choice_word(field, (int)field->initial, word, sizeof word);
+    word[0] = '\0';
+    if (field->type == FIELD_CHOICE && isfinite(field->initial))
+        field_choice_word(field, (int)field->initial, word, sizeof word);
     if (field->words[0] != '\0')
         text_add(out, field->words);
     else if (field->type == FIELD_CHOICE)
