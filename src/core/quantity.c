@@ -31,7 +31,7 @@ double quantity_order(double net_m3, double waste)
 
 /* ---- packages ---- */
 
-enum { PACKAGE_LIMIT = 1000000, TABLE_MOST = 2000000 };
+enum { PACKAGE_LIMIT = 1000000, TABLE_MOST = 2000000, UNIT_MOST = 200000 };
 
 /* Sizes in whole units, largest first. */
 struct sizes {
@@ -56,14 +56,16 @@ static double common_measure(double a, double b, double least)
 
 static double unit_of(const double *sizes_m3, size_t count)
 {
-    double least = HUGE_VAL, measure = 0;
-    for (size_t i = 0; i < count; i++)
+    double least = HUGE_VAL, most = 0, measure = 0;
+    for (size_t i = 0; i < count; i++) {
         least = fmin(least, sizes_m3[i] > 0 ? sizes_m3[i] : HUGE_VAL);
+        most = fmax(most, sizes_m3[i]);
+    }
     for (size_t i = 0; i < count; i++) {
         if (sizes_m3[i] > 0)
             measure = common_measure(fmax(sizes_m3[i], measure), fmin(sizes_m3[i], measure), least);
     }
-    return measure >= least / 1000 ? measure : least / 1000;
+    return fmax(fmax(measure, least / 1000), most / UNIT_MOST);
 }
 
 static void sizes_make(struct sizes *sizes, const double *sizes_m3, size_t count)
@@ -73,6 +75,8 @@ static void sizes_make(struct sizes *sizes, const double *sizes_m3, size_t count
         if (!(sizes_m3[i] > 0))
             continue;
         long long units = (long long)floor(sizes_m3[i] / sizes->unit_m3 + 1e-3);
+        if (units < 1) /* less than a 200 000th of the largest */
+            continue;
         size_t at = sizes->count++;
         for (; at > 0 && sizes->units[at - 1] < units; at--) {
             sizes->units[at] = sizes->units[at - 1];

@@ -75,7 +75,7 @@ struct barber {
 static struct barber barber_make(const struct slab_day *day)
 {
     const double ft = 0.3048, btu = 1055.05585262, lb = 0.45359237;
-    double k = fmax(day->conductivity, 0.01) * ft * 1.8 * 3600 / btu; /* BTU/(ft h degF) */
+    double k = fmax(day->conductivity, 0.01) * ft * 3600 / (1.8 * btu); /* BTU/(ft h degF) */
     double w = fmax(day->density, 1) * ft * ft * ft / lb;             /* lb/ft3 */
     double s = fmax(day->heat_capacity, 1) * lb / (1.8 * btu);        /* BTU/(lb degF) */
     double mph = fmax(day->wind_m_s, 0) * 3600 / 1609.344;
