@@ -140,8 +140,27 @@ static enum status cover(const struct sizes *sizes, long long wanted, int *count
     return STATUS_OK;
 }
 
+/* Takes out packages that the amount does not need, smallest first (sizes rounded down may leave
+ * one), and gives what the packages hold. */
+static double drop_idle(const struct sizes *sizes, const double *sizes_m3, double amount_m3,
+                        int *counts)
+{
+    double held = 0;
+    for (size_t i = 0; i < sizes->count; i++)
+        held += counts[sizes->index[i]] * sizes_m3[sizes->index[i]];
+    for (size_t i = sizes->count; i-- > 0;) {
+        double size = sizes_m3[sizes->index[i]];
+        while (counts[sizes->index[i]] > 0 && held - size >= amount_m3 * (1 - 1e-12)) {
+            counts[sizes->index[i]]--;
+            held -= size;
+        }
+    }
+    return held;
+}
+
 /* Exact: a table of sums in the packages' common measure (10 ml for 310 and 600 ml). Sizes without
- * one count in thousandths of the smallest, rounded down, so the amount is always covered. */
+ * one count in thousandths of the smallest, rounded down: the amount is always covered, the
+ * left-over then least to about a thousandth of a package for each package. */
 enum status quantity_packages(const double *sizes_m3, size_t count, double amount_m3, int *counts,
                               double *left_over_m3)
 {
@@ -163,11 +182,9 @@ enum status quantity_packages(const double *sizes_m3, size_t count, double amoun
     if (status != STATUS_OK)
         return status;
     found[sizes.index[0]] += (int)bulk;
-    double held = 0;
-    for (size_t i = 0; i < count; i++) {
+    double held = drop_idle(&sizes, sizes_m3, fmax(amount_m3, 0), found);
+    for (size_t i = 0; i < count; i++)
         counts[i] = found[i];
-        held += found[i] * sizes_m3[i];
-    }
     *left_over_m3 = fmax(held - fmax(amount_m3, 0), 0);
     return STATUS_OK;
 }
