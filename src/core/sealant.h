@@ -31,7 +31,7 @@ double sealant_bead_strain(double width_m, double depth_m, double opened_m);
 double sealant_bulge(double width_m, double depth_m, double width_now_m);
 /* Bead depth: ratio x width, clamped. */
 double sealant_depth(double width_m, double ratio, double least_m, double most_m);
-/* Deepest bead recommended beside the widths of Allen: width / 2, 6 to 13 mm. */
+/* Depth of silicone beads: width / 2, 6 to 13 mm (Allen, Architectural Detailing). */
 #define SEALANT_DEPTH_RATIO 0.5
 #define SEALANT_DEPTH_LEAST 0.006
 #define SEALANT_DEPTH_MOST 0.013
