@@ -76,8 +76,8 @@ static struct barber barber_make(const struct slab_day *day)
 {
     const double ft = 0.3048, btu = 1055.05585262, lb = 0.45359237;
     double k = fmax(day->conductivity, 0.01) * ft * 3600 / (1.8 * btu); /* BTU/(ft h degF) */
-    double w = fmax(day->density, 1) * ft * ft * ft / lb;             /* lb/ft3 */
-    double s = fmax(day->heat_capacity, 1) * lb / (1.8 * btu);        /* BTU/(lb degF) */
+    double w = fmax(day->density, 1) * ft * ft * ft / lb;               /* lb/ft3 */
+    double s = fmax(day->heat_capacity, 1) * lb / (1.8 * btu);          /* BTU/(lb degF) */
     double mph = fmax(day->wind_m_s, 0) * 3600 / 1609.344;
     double h = 1.3 + 0.62 * pow(mph, 0.75);                /* BTU/(ft2 h degF) */
     double langley = fmax(day->radiation_j_m2, 0) / 41840; /* cal/cm2 in the day */
