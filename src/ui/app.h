@@ -1,0 +1,48 @@
+/* The form as pure state: keys in, a canvas out. No curses, no clock, no files: what needs one of
+ * these is a request that the terminal loop takes and carries out. */
+#ifndef SLABGAP_UI_APP_H
+#define SLABGAP_UI_APP_H
+
+#include "base/status.h"
+#include "job/job.h"
+#include "ui/canvas.h"
+#include <stdbool.h>
+#include <stdint.h>
+
+enum { PATH_MOST = 512 };
+enum request_kind { REQUEST_NONE, REQUEST_SAVE, REQUEST_OPEN, REQUEST_LEAVE };
+struct request {
+    enum request_kind kind;
+    char path[PATH_MOST];
+    bool replace; /* save: an existing other file may be overwritten; the user said so */
+    bool leave;   /* save: leave afterwards */
+};
+
+struct app;
+
+/* `today` is the day shown; year 0 shows none. NULL without memory. */
+struct app *app_make(struct date today);
+void app_free(struct app *app);
+/* Starts with a job's text. A NULL path: not saved yet. An example is marked on every page.
+ * STATUS_REFUSED: errors in it are shown in the form; STATUS_NO_MEMORY: nothing changed. */
+enum status app_load(struct app *app, const char *bytes, size_t count, const char *path,
+                     bool example);
+/* A new slab by the questions of the own-slab page. */
+void app_start_own(struct app *app);
+void app_resize(struct app *app, int columns, int rows);
+void app_key(struct app *app, uint32_t key);
+/* Whether a letter pressed now is text: then no letter is dropped as a bounce of the key. */
+bool app_takes_text(const struct app *app);
+void app_draw(const struct app *app, struct canvas *canvas);
+/* The next thing to do outside; false when there is none. */
+bool app_take_request(struct app *app, struct request *request);
+/* The job's text, to be saved. */
+void app_write(const struct app *app, struct text *out);
+/* It was saved there at that clock time ("17:42"). */
+void app_saved(struct app *app, const char *path, const char *clock);
+/* The file is there and is another one: ask before overwriting. */
+void app_ask_replace(struct app *app, const struct request *request);
+/* One sentence in the help row until the next key. */
+void app_say(struct app *app, const char *sentence);
+
+#endif

@@ -1,0 +1,451 @@
+/* The plan: a cross with the tape readings, things added and taken away by eye. */
+#include "export/names.h"
+#include "ui/app_ask.h"
+#include <float.h>
+#include <math.h>
+#include <stdio.h>
+#include <string.h>
+
+enum { ADD_HOLE = 5, ADD_WALL = 6, ADD_OLD_JOINT = 7, ADD_COUNT };
+static const struct {
+    const char *word, *kind, *size; /* kind: of an object; size: the usual one */
+    const char *us_size;
+    char letter;
+} things[ADD_COUNT] = {
+    {"column", "column", "0.4 x 0.4 m", "16 x 16 in", 'C'},
+    {"manhole", "manhole", "0.8 m", "30 in", 'M'},
+    {"drain", "drain", "0.4 x 0.4 m", "16 x 16 in", 'D'},
+    {"channel", "channel", "6 x 0.3 m", "20 x 1 ft", 'T'},
+    {"post", "post", "0.2 m", "8 in", 'P'},
+    {"hole", NULL, "1.2 x 1.2 m", "4 x 4 ft", 0},
+    {"wall along the side", NULL, NULL, NULL, 0},
+    {"old joint beside the side", NULL, NULL, NULL, 0},
+};
+
+const char *plan_kind_word(int kind)
+{
+    return things[kind].word;
+}
+
+void plan_next_kind(struct app *app, int step)
+{
+    app->add_kind = (app->add_kind + step + ADD_COUNT) % ADD_COUNT;
+}
+
+/* ---- what lies under the cross ---- */
+
+static double side_distance(const struct row *a, const struct row *b, double x, double y,
+                            double *along)
+{
+    double dx = b->x - a->x, dy = b->y - a->y, length = hypot(dx, dy);
+    double t = length > 0 ? ((x - a->x) * dx + (y - a->y) * dy) / (length * length) : 0;
+
+    t = fmax(0, fmin(1, t));
+    *along = t * length;
+    return hypot(a->x + t * dx - x, a->y + t * dy - y);
+}
+
+/* The nearest side of the outline, from 0; -1 for none. */
+static int nearest_side(const struct app *app, double *along, double *distance)
+{
+    const struct rows *rows = &app->job.outline;
+    int best = -1;
+
+    *distance = DBL_MAX;
+    for (size_t i = 0; i < rows->count; i++) {
+        double here, from = side_distance(&rows->items[i], &rows->items[(i + 1) % rows->count],
+                                          app->cross_x, app->cross_y, &here);
+        if (from < *distance) {
+            *distance = from;
+            *along = here;
+            best = (int)i;
+        }
+    }
+    return best;
+}
+
+static const struct object *object_under(const struct app *app)
+{
+    for (size_t i = 0; i < app->job.object_count; i++) {
+        const struct object *object = &app->job.objects[i];
+        double half_w = fmax(object->w / 2, 0.26), half_d = fmax(object->d / 2, 0.26);
+        if (fabs(app->cross_x - object->x) <= half_w && fabs(app->cross_y - object->y) <= half_d)
+            return object;
+    }
+    return NULL;
+}
+
+static bool inside(double x, double y, const struct layout_point *ring, size_t count)
+{
+    bool in = false;
+
+    for (size_t i = 0, j = count - 1; i < count; j = i++)
+        if ((ring[i].y > y) != (ring[j].y > y) &&
+            x < (ring[j].x - ring[i].x) * (y - ring[i].y) / (ring[j].y - ring[i].y) + ring[i].x)
+            in = !in;
+    return in;
+}
+
+static const struct opening *opening_under(const struct app *app)
+{
+    for (size_t i = 0; i < app->job.opening_count; i++) {
+        const struct rows *rows = &app->job.openings[i].rows;
+        double x0 = DBL_MAX, x1 = -DBL_MAX, y0 = DBL_MAX, y1 = -DBL_MAX;
+        for (size_t j = 0; j < rows->count; j++) {
+            x0 = fmin(x0, rows->items[j].x);
+            x1 = fmax(x1, rows->items[j].x);
+            y0 = fmin(y0, rows->items[j].y);
+            y1 = fmax(y1, rows->items[j].y);
+        }
+        if (app->cross_x >= x0 && app->cross_x <= x1 && app->cross_y >= y0 && app->cross_y <= y1)
+            return &app->job.openings[i];
+    }
+    return NULL;
+}
+
+static const struct layout_panel *panel_under(const struct app *app)
+{
+    const struct layout *layout = &app->plan.layout;
+
+    for (size_t i = 0; app->has_plan && i < layout->panel_count; i++)
+        if (inside(app->cross_x, app->cross_y, layout->panels[i].ring, layout->panels[i].count))
+            return &layout->panels[i];
+    return NULL;
+}
+
+static void add_size(const struct app *app, struct text *out, double a, double b)
+{
+    unit_show(out, a, QUANTITY_LENGTH, app_units(app));
+    text_add(out, " x ");
+    unit_show(out, b, QUANTITY_LENGTH, app_units(app));
+}
+
+static void under_words(const struct app *app, struct text *out)
+{
+    const struct object *object = object_under(app);
+    const struct opening *opening = opening_under(app);
+    const struct layout_panel *panel = panel_under(app);
+    char name[2 * LINE_NAME_MOST], kind[CHOICE_MOST];
+
+    if (object != NULL) {
+        field_choice_word(field_find("object", "kind"), (int)object->kind, kind, sizeof kind);
+        text_format(out, "%s %s, ", kind, object->name);
+        add_size(app, out, object->w, object->d);
+        text_add(out, "; the joints meet its box. d takes it away.");
+    } else if (opening != NULL) {
+        text_format(out, "hole %s. d takes it away.", opening->name);
+    } else if (panel != NULL) {
+        name_panel(&app->plan.layout, panel, name);
+        text_format(out, "panel %s, ", name);
+        add_size(app, out, panel->length, panel->width);
+        text_format(out, ", long to short %.2f. ", panel->aspect);
+        if (panel->reason_count > 0)
+            text_format(out, "%s %s", panel->reasons[0].cause, panel->reasons[0].remedy);
+        else
+            text_add(out, "Keeps every rule.");
+    } else {
+        text_add(out, "off the slab, or in a box.");
+    }
+}
+
+/* ---- adding ---- */
+
+static void put_item(struct change_item *item, const char *path, const char *value)
+{
+    *item = (struct change_item){0};
+    snprintf(item->path, sizeof item->path, "%s", path);
+    snprintf(item->value, sizeof item->value, "%s", value);
+}
+
+static void point_words(double x, double y, char *out, size_t size)
+{
+    struct text words = {0};
+
+    unit_add_number(&words, x, 4);
+    text_add(&words, ", ");
+    unit_add_number(&words, y, 4);
+    text_add(&words, " m");
+    snprintf(out, size, "%s", text_string(&words));
+    text_free(&words);
+}
+
+static void free_name(const struct app *app, char letter, char *out, size_t size)
+{
+    for (int n = 1; n < 10000; n++) {
+        bool taken = false;
+        if (letter != 0)
+            snprintf(out, size, "%c%d", letter, n);
+        else
+            snprintf(out, size, "hole%d", n);
+        for (size_t i = 0; i < app->job.object_count; i++)
+            taken = taken || strcmp(app->job.objects[i].name, out) == 0;
+        for (size_t i = 0; i < app->job.opening_count; i++)
+            taken = taken || strcmp(app->job.openings[i].name, out) == 0;
+        if (!taken)
+            return;
+    }
+}
+
+static void add_object(struct app *app)
+{
+    struct change_item items[3];
+    char name[16], path[64], at[64], words[WORDS_MOST];
+    const char *size = app->editor.bytes;
+
+    free_name(app, things[app->add_kind].letter, name, sizeof name);
+    point_words(app->cross_x, app->cross_y, at, sizeof at);
+    snprintf(path, sizeof path, "object.%s.kind", name);
+    put_item(&items[0], path, things[app->add_kind].kind);
+    snprintf(path, sizeof path, "object.%s.at", name);
+    put_item(&items[1], path, at);
+    snprintf(path, sizeof path, "object.%s.%s", name,
+             strchr(size, 'x') != NULL ? "size" : "diameter");
+    put_item(&items[2], path, size);
+    snprintf(words, sizeof words, "%s %s at %s", things[app->add_kind].word, name, at);
+    edit_change(app, items, 3, words);
+}
+
+/* Both sizes of "1.2 x 1.2 m"; false when they are none. */
+static bool read_sizes(const char *string, double *w, double *d)
+{
+    const char *x = strchr(string, 'x');
+    const char *unit = string + strcspn(string, "fimc");
+    char first[EDITOR_MOST];
+    struct unit_reading a, b;
+
+    if (x == NULL)
+        return false;
+    snprintf(first, sizeof first, "%.*s%s", (int)(x - string), string, unit < x ? "" : unit);
+    x += 1 + strspn(x + 1, " ");
+    a = unit_read(first, strlen(first), QUANTITY_LENGTH, "m");
+    b = unit_read(x, strlen(x), QUANTITY_LENGTH, "m");
+    *w = a.si;
+    *d = b.si;
+    return a.problem == NULL && b.problem == NULL && a.si > 0 && b.si > 0;
+}
+
+static void add_hole(struct app *app)
+{
+    struct change_item items[4];
+    char name[16], path[64], at[64], words[WORDS_MOST];
+    double w, d;
+
+    if (!read_sizes(app->editor.bytes, &w, &d)) {
+        app_tell(app, "Type two sizes, such as 1.2 x 1.2 m.");
+        return;
+    }
+    free_name(app, 0, name, sizeof name);
+    for (int i = 0; i < 4; i++) {
+        point_words(app->cross_x + (i == 1 || i == 2 ? w : -w) / 2,
+                    app->cross_y + (i >= 2 ? d : -d) / 2, at, sizeof at);
+        snprintf(path, sizeof path, "opening.%s.point.%d", name, i + 1);
+        put_item(&items[i], path, at);
+    }
+    snprintf(words, sizeof words, "hole %s added", name);
+    edit_change(app, items, 4, words);
+}
+
+static void add_at_side(struct app *app, bool joint)
+{
+    struct change_item items[2];
+    char path[64], value[EDITOR_MOST];
+    double along, distance;
+    int side = nearest_side(app, &along, &distance);
+    const char *written;
+    struct text text = {0};
+
+    if (side < 0) {
+        app_tell(app, "There is no side yet: open the row Shape.");
+        return;
+    }
+    snprintf(path, sizeof path, "edge.%d.against", side + 1);
+    put_item(&items[0], path, joint ? "slab" : "wall");
+    snprintf(path, sizeof path, "edge.%d.joints", side + 1);
+    written = document_get(app->document, path);
+    unit_add_number(&text, along, 3);
+    if (written != NULL && written[0] != '\0') {
+        size_t digits = strcspn(written, "mfi");
+        while (digits > 0 && written[digits - 1] == ' ')
+            digits--;
+        snprintf(value, sizeof value, "%.*s, %s m", (int)digits, written, text_string(&text));
+    } else {
+        snprintf(value, sizeof value, "%s m", text_string(&text));
+    }
+    put_item(&items[1], path, value);
+    text_free(&text);
+    edit_change(app, items, joint ? 2 : 1, joint ? "old joint added" : "wall along a side");
+}
+
+void plan_add_kind(struct app *app)
+{
+    if (app->add_kind == ADD_WALL || app->add_kind == ADD_OLD_JOINT)
+        add_at_side(app, app->add_kind == ADD_OLD_JOINT);
+    else
+        app_ask(app, ASK_ADD_SIZE,
+                app_units(app) == UNITS_US ? things[app->add_kind].us_size
+                                           : things[app->add_kind].size);
+}
+
+void plan_add(struct app *app)
+{
+    if (app->add_kind == ADD_HOLE)
+        add_hole(app);
+    else
+        add_object(app);
+}
+
+void plan_cross_to(struct app *app)
+{
+    double x, y;
+    const char *string = app->editor.bytes;
+    struct unit_reading east = unit_read_number(string, strlen(string)), north;
+
+    if (east.problem == NULL) {
+        string += east.length;
+        string += strspn(string, " ,;m");
+        north = unit_read_number(string, strlen(string));
+        x = east.si;
+        y = north.si;
+        if (north.problem == NULL && fabs(x) < 1e5 && fabs(y) < 1e5) {
+            app->cross_x = x;
+            app->cross_y = y;
+            return;
+        }
+    }
+    app_tell(app, "Type metres east and north of the corner, such as 10.4 4.9.");
+}
+
+/* ---- taking away ---- */
+
+static void take_away(struct app *app)
+{
+    const struct object *object = object_under(app);
+    const struct opening *opening = opening_under(app);
+    struct change_item item = {0};
+    char path[64], words[WORDS_MOST];
+    double along, distance;
+    int side = nearest_side(app, &along, &distance);
+
+    if (object != NULL)
+        snprintf(path, sizeof path, "object.%.40s", object->name);
+    else if (opening != NULL)
+        snprintf(path, sizeof path, "opening.%.40s", opening->name);
+    else if (side >= 0 && distance < 0.6)
+        snprintf(path, sizeof path, "edge.%d.against", side + 1);
+    else {
+        app_tell(app, "Nothing under the cross that was added.");
+        return;
+    }
+    put_item(&item, path, "");
+    snprintf(words, sizeof words, "%.60s taken away", path);
+    edit_change(app, &item, 1, words);
+}
+
+/* ---- the page ---- */
+
+static int count(const struct app *app)
+{
+    (void)app;
+    return 0;
+}
+
+static bool row(const struct app *app, int index, struct entry *out)
+{
+    (void)app;
+    (void)index;
+    (void)out;
+    return false;
+}
+
+static void draw(const struct app *app, struct canvas *canvas)
+{
+    struct text words = {0}, under = {0};
+    int rows = app->rows - (app_roomy(app) ? 8 : 5);
+
+    draw_title(app, canvas, false);
+    draw_plan(app, canvas, 1, 1, rows, app->columns - 2, true);
+    text_add(&words, "PLAN    cross ");
+    unit_show(&words, app->cross_x, QUANTITY_LENGTH, app_units(app));
+    text_add(&words, " east, ");
+    unit_show(&words, app->cross_y, QUANTITY_LENGTH, app_units(app));
+    text_add(&words, " north.  a add  d take away  z nearer  x farther");
+    canvas_words(canvas, rows + 1, 0, app->columns, STYLE_PLAIN, text_string(&words));
+    canvas_mark(canvas, rows + 1, 0, 4, STYLE_BOLD);
+    under_words(app, &under);
+    canvas_format(canvas, rows + 2, 0, app->columns, STYLE_PLAIN, "UNDER IT %s",
+                  text_string(&under));
+    canvas_mark(canvas, rows + 2, 0, 8, STYLE_BOLD);
+    if (app_roomy(app))
+        draw_answers(app, canvas, rows + 3, 0, 0, 2);
+    draw_foot(app, canvas,
+              "Arrows move the cross by 0.5 m; digits type where it stands. Enter says more.");
+    text_free(&words);
+    text_free(&under);
+}
+
+static void say_under(struct app *app)
+{
+    struct text words = {0};
+
+    under_words(app, &words);
+    app_tell(app, "%s", text_string(&words));
+    text_free(&words);
+}
+
+static bool move_cross(struct app *app, uint32_t pressed)
+{
+    double step = app->zoom >= 4 ? 0.1 : 0.5;
+
+    switch (pressed) {
+    case PRESS_LEFT:
+        app->cross_x -= step;
+        break;
+    case PRESS_RIGHT:
+        app->cross_x += step;
+        break;
+    case PRESS_UP:
+        app->cross_y += step;
+        break;
+    case PRESS_DOWN:
+        app->cross_y -= step;
+        break;
+    default:
+        return false;
+    }
+    app->cross_x = fmax(-1e5, fmin(1e5, round(app->cross_x * 1000) / 1000));
+    app->cross_y = fmax(-1e5, fmin(1e5, round(app->cross_y * 1000) / 1000));
+    app->show_change = false;
+    return true;
+}
+
+static bool key(struct app *app, uint32_t pressed)
+{
+    if (move_cross(app, pressed))
+        return true;
+    if ((pressed >= '0' && pressed <= '9') || pressed == '-' || pressed == '.') {
+        app_ask(app, ASK_CROSS, "");
+        editor_key(&app->editor, pressed);
+        return true;
+    }
+    switch (key_action(pressed, PLACE_PLAN)) {
+    case ACTION_ADD:
+        app_ask(app, ASK_ADD_KIND, "");
+        return true;
+    case ACTION_TAKE_AWAY:
+        take_away(app);
+        return true;
+    case ACTION_NEARER:
+        app->zoom = fmin(64, app->zoom * 2);
+        return true;
+    case ACTION_FARTHER:
+        app->zoom = fmax(1, app->zoom / 2);
+        return true;
+    case ACTION_ENTER:
+        say_under(app);
+        return true;
+    default:
+        return false;
+    }
+}
+
+const struct page page_plan = {"plan", count, row, draw, key};
