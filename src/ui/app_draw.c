@@ -46,11 +46,11 @@ static void add_practice(const struct app *app, struct text *out)
 
 static void add_saved(const struct app *app, struct text *out)
 {
+    if (app->example)
+        return;
     if (app->job.job_revision[0] != '\0')
         text_format(out, "rev %.8s, ", app->job.job_revision);
-    if (app->example)
-        text_add(out, "nothing saved");
-    else if (app->history.saved == app->history.now)
+    if (app->history.saved == app->history.now)
         text_format(out, "saved%s%s", app->saved[0] != '\0' ? " " : "", app->saved);
     else
         text_add(out, "not saved");
@@ -64,7 +64,7 @@ void draw_title(const struct app *app, struct canvas *canvas, bool in_hand)
     int width, room;
 
     if (app->example)
-        text_add(&right, wide ? "EXAMPLE, not a job for site      " : "EXAMPLE   ");
+        text_add(&right, wide ? "EXAMPLE, not a job for site" : "EXAMPLE");
     add_saved(app, &right);
     text_add(&right, wide ? "      " : "   ");
     add_practice(app, &right);
@@ -100,7 +100,7 @@ static void draw_value(const struct app *app, struct canvas *canvas, const struc
     } else {
         row_show(app, row, &words);
     }
-    canvas_words(canvas, place.row, place.column + place.label, place.value,
+    canvas_words(canvas, place.row, place.column + place.label, place.value - 1,
                  in_hand && app->open == OPEN_CHOICE ? STYLE_BOLD : STYLE_PLAIN,
                  text_string(&words));
     text_free(&words);
@@ -137,16 +137,6 @@ static int word_style(const struct app *app, const char *word)
     return STYLE_BOLD;
 }
 
-/* The value the standing answers are for, when another one is being filled in. */
-static void add_old(const struct app *app, struct text *out)
-{
-    struct text old = {0};
-
-    row_show(app, &app->row, &old);
-    text_format(out, " (for the old %s)", text_string(&old));
-    text_free(&old);
-}
-
 int draw_answers(const struct app *app, struct canvas *canvas, int row, size_t first, size_t last,
                  int lines)
 {
@@ -166,14 +156,14 @@ int draw_answers(const struct app *app, struct canvas *canvas, int row, size_t f
         text_add(&sentence, answers.rows[i].sentence);
         if (app->columns >= 110 && answers.rows[i].more[0] != '\0')
             text_format(&sentence, " %s", answers.rows[i].more);
-        if (half)
-            add_old(app, &sentence);
-        else if (app->stale)
-            text_add(&sentence, " (before the last change)");
         canvas_format(canvas, row + used, 0, word, word_style(app, answers.rows[i].word), "%s%s",
                       half || app->stale ? "~" : "", answers.rows[i].word);
-        took = canvas_wrap(canvas, row + used, word, app->columns - word, spare > 0 ? 2 : 1,
-                           STYLE_PLAIN, text_string(&sentence));
+        if (spare > 0)
+            took = canvas_wrap(canvas, row + used, word, app->columns - word, 2, STYLE_PLAIN,
+                               text_string(&sentence));
+        else
+            took = canvas_words(canvas, row + used, word, app->columns - word, STYLE_PLAIN,
+                                text_string(&sentence)) > 0;
         spare -= took > 1;
         used += took > 0 ? took : 1;
         text_free(&sentence);
@@ -281,6 +271,18 @@ static bool draw_question(const struct app *app, struct canvas *canvas, int row)
     return true;
 }
 
+/* While a row is being filled in: whose answers are standing. */
+static void draw_old(const struct app *app, struct canvas *canvas, int row)
+{
+    struct text old = {0};
+
+    row_show(app, &app->row, &old);
+    canvas_format(canvas, row, 0, app->columns, STYLE_PLAIN,
+                  "%s: Enter keeps, Esc gives back. ~ marks answers for the old %s.",
+                  app->row.label, text_string(&old));
+    text_free(&old);
+}
+
 void draw_foot(const struct app *app, struct canvas *canvas, const char *help)
 {
     int keys = app->rows - 1, row = keys - (app_roomy(app) ? 2 : 1);
@@ -300,13 +302,17 @@ void draw_foot(const struct app *app, struct canvas *canvas, const char *help)
     }
     if (done)
         return;
+    if (app->open == OPEN_TEXT && app->editor.touched && app->said[0] == '\0') {
+        draw_old(app, canvas, row);
+        return;
+    }
     if (app->said[0] != '\0')
         canvas_words(canvas, row, 0, app->columns, STYLE_BOLD, app->said);
     else if (app->show_change && app->change[0] != '\0')
         canvas_format(canvas, row, 0, app->columns, STYLE_PLAIN,
                       "Last change: %.120s (undo takes it back).", app->change);
     else
-        canvas_words(canvas, row, 0, app->columns, STYLE_PLAIN, help);
+        canvas_wrap(canvas, row, 0, app->columns, 1, STYLE_PLAIN, help);
 }
 
 void app_draw(const struct app *app, struct canvas *canvas)

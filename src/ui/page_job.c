@@ -85,8 +85,8 @@ static const char *usual_help(const struct app *app, struct text *words)
     struct entry entry;
 
     if (app->example && app->history.now == 0 && app->open == OPEN_NOT)
-        text_add(words, "EXAMPLE, not your slab:  n my own slab   o open a job   b only metres   s "
-                        "seal now?");
+        text_add(words, "EXAMPLE, not your slab:  n my own slab  o open a job  b only metres  "
+                        "s seal now?");
     else if (app->at[PAGE_JOB] < 0)
         text_add(words, "Title: Enter opens it. Practice and units: more.");
     else if (row(app, app->at[PAGE_JOB], &entry))
@@ -112,7 +112,7 @@ static void draw(const struct app *app, struct canvas *canvas)
         draw_small_sheet(app, canvas, sheet);
     }
     if (app->columns - column >= 24)
-        draw_plan(app, canvas, 1, column, sheet, app->columns - column, false);
+        draw_plan(app, canvas, 1, column, sheet, app->columns - column + 1, false);
     canvas_rule(canvas, sheet + 1);
     draw_answers(app, canvas, sheet + 2, 0, ANSWERS - 1, answers);
     draw_foot(app, canvas, usual_help(app, &words));

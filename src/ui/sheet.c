@@ -221,8 +221,8 @@ static void show_pair(const struct app *app, const struct entry *row, struct tex
         return;
     }
     if (job->sealant_kind != SEALANT_NONE) {
-        field_show(out, job, FIELD_sealant_class, app_units(app));
-        text_add(out, " ");
+        unit_add_number(out, 100 * job->sealant_class.extension, 1);
+        text_add(out, " % ");
     }
     field_show(out, job, FIELD_sealant_kind, app_units(app));
 }
@@ -302,8 +302,7 @@ void row_show(const struct app *app, const struct entry *row, struct text *out)
         size_t yours = 0, all = 0;
         for (int id = 0; id < FIELD_COUNT; id++)
             all++, yours += app->job.given[id];
-        text_format(out, "%zu more", all - (size_t)SHEET_COUNT);
-        (void)yours;
+        text_format(out, "%zu; %zu yours", all - (size_t)SHEET_COUNT, yours);
         break;
     }
     case ROW_FIELD:

@@ -10,7 +10,6 @@
 #include <stdlib.h>
 #include <string.h>
 #include <sys/ioctl.h>
-#include <term.h>
 #include <time.h>
 #include <unistd.h>
 
@@ -83,7 +82,7 @@ static void ask_for_paste(bool on)
 
     define_key(on ? "\033[200~" : NULL, PASTE_BEGINS);
     define_key(on ? "\033[201~" : NULL, PASTE_ENDS);
-    putp(words);
+    fputs(words, stdout);
     fflush(stdout);
 }
 
