@@ -154,7 +154,10 @@ int draw_answers(const struct app *app, struct canvas *canvas, int row, size_t f
         struct text sentence = {0};
         int word = strcmp(answers.rows[i].word, "JUST HOLDS") == 0 ? 12 : 8, took;
         text_add(&sentence, answers.rows[i].sentence);
-        if (app->columns >= 110 && answers.rows[i].more[0] != '\0')
+        if (app->columns >= 110 && answers.rows[i].more[0] != '\0' &&
+            (spare > 0 || utf8_columns(answers.rows[i].sentence) +
+                                  utf8_columns(answers.rows[i].more) + word + 1 <=
+                              app->columns))
             text_format(&sentence, " %s", answers.rows[i].more);
         canvas_format(canvas, row + used, 0, word, word_style(app, answers.rows[i].word), "%s%s",
                       half || app->stale ? "~" : "", answers.rows[i].word);

@@ -153,7 +153,7 @@ bool edit_replace(struct app *app, const char *bytes, size_t count, const char *
     app->opened = 0;
     plan_free(&app->plan);
     app->has_plan = false;
-    snprintf(app->change, sizeof app->change, "%s", words);
+    app->change[0] = '\0';
     if (!remember(app, words))
         app_tell(app, "Not enough memory; this cannot be undone.");
     edit_recompute(app);

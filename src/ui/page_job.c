@@ -102,9 +102,9 @@ static void draw(const struct app *app, struct canvas *canvas)
 
     draw_title(app, canvas, app->at[PAGE_JOB] < 0);
     if (roomy) {
-        answers = app->rows - 32;
+        answers = app->rows - 32; /* the sheet needs 26 rows */
         answers = answers > 11 ? 11 : answers;
-        sheet = app->rows - 5 - answers;
+        sheet = app->rows - 6 - answers;
         draw_roomy_sheet(app, canvas);
         canvas_rule(canvas, app->rows - 4);
     } else {

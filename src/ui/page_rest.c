@@ -10,8 +10,7 @@ static const struct {
 } folds[] = {
     {"BASE: friction, modulus, slip", " base. "},
     {"DRYING: model, humidity, cement, relaxation", " concrete. climate.humidity "},
-    {"RULES: spacing, long to short, narrowest, box, steel, soft board",
-     " rules. slab. isolation. "},
+    {"RULES: spacing, narrowest panel, box, steel, soft board", " rules. slab. isolation. "},
     {"SEALING: least temperature, dew, waiting, base holds back", " sealing. sealant. "},
     {"STOCK AND SITE: packs, saws, weather, strips", " takeoff. sawing. pour. pours. climate. "},
     {"PAPER: names, revision, place", " job. place. "},

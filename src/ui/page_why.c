@@ -51,7 +51,7 @@ static void draw_line(const struct app *app, struct canvas *canvas, const struct
                       int at, bool in_hand)
 {
     bool wide = app->columns >= 110;
-    int words = wide ? 58 : 43, value = wide ? 92 : 59;
+    int words = wide ? 58 : 50, value = wide ? 92 : 61;
 
     canvas_format(canvas, at, 0, 4, STYLE_PLAIN, "%c%s", in_hand ? '>' : ' ', line->step);
     canvas_words(canvas, at, 4, words - 4, STYLE_PLAIN, line->words);
@@ -86,8 +86,9 @@ static int draw_tries(const struct app *app, struct canvas *canvas, const struct
     for (size_t i = 0; i < why->try_count && i < 8; i++) {
         int column = 8 + (i % 2 ? half : 0);
         used = (int)i / 2;
-        canvas_format(canvas, at + used, column, half - 1, STYLE_PLAIN, "%.*s %s %s", half - 15,
-                      why->tries[i].words, why->tries[i].value, why->tries[i].verdict);
+        canvas_format(canvas, at + used, column, half - 1, STYLE_PLAIN, "%.*s %s %s", half - 11,
+                      why->tries[i].words, why->tries[i].value,
+                      strcmp(why->tries[i].verdict, "HOLDS") != 0 ? why->tries[i].verdict : "");
     }
     return used + 1;
 }
@@ -125,7 +126,7 @@ static void draw(const struct app *app, struct canvas *canvas)
                      "There is no such result in this job. Left and right ask the next one.");
     free(why);
     draw_foot(app, canvas,
-              "Enter goes to the field behind the line, Esc back. Left, right: the next question.");
+              "Enter goes to the field behind the line, Esc back. Left, right: others.");
 }
 
 static void go_behind(struct app *app)

@@ -101,7 +101,7 @@ static void cut_draw(const struct app *app, struct canvas *canvas)
     canvas_words(canvas, 2, 8, app->columns - 8, STYLE_PLAIN,
                  "Trial cuts every 20 min in the first concrete. Edge stays sharp: start");
     canvas_words(canvas, 3, 8, app->columns - 8, STYLE_PLAIN,
-                 "sawing. Edge crumbles: wait 20 minutes. Clock times are not worked out here.");
+                 "sawing. Edge crumbles: wait 20 minutes. No clock times are worked out.");
     canvas_rule(canvas, 4);
     draw_rows(app, canvas, 5, 22, 22);
     canvas_rule(canvas, 5 + CUT_ROWS);
@@ -239,7 +239,7 @@ static void seal_draw(const struct app *app, struct canvas *canvas)
         draw_table(app, canvas, 5, 36, body - 1);
     else
         canvas_words(canvas, 5, 36, app->columns - 36, STYLE_PLAIN, "No sealant to judge.");
-    canvas_rule(canvas, sketch - 1 + 1);
+    canvas_rule(canvas, sketch);
     if (app->has_plan && app->rows >= 22) {
         draw_section(app, canvas, sketch + 1);
         draw_order(canvas, sketch + 1);
@@ -247,7 +247,8 @@ static void seal_draw(const struct app *app, struct canvas *canvas)
     canvas_words(
         canvas, app->rows - (app_roomy(app) ? 4 : 3), 0, app->columns, STYLE_PLAIN,
         "SAFE    data sheet first: solvents, skin; hot-pour burns; traffic. Tin beats this.");
-    canvas_mark(canvas, app->rows - (app_roomy(app) ? 4 : 3), 0, 4, STYLE_BOLD);
+    if (app->rows > 24)
+        canvas_mark(canvas, app->rows - (app_roomy(app) ? 4 : 3), 0, 4, STYLE_BOLD);
     draw_foot(app, canvas, help_of(app, &words));
     text_free(&words);
 }
@@ -413,8 +414,8 @@ static void buy_draw(const struct app *app, struct canvas *canvas)
         canvas_rule(canvas, 12);
         draw_others(app, canvas, 13);
         canvas_words(canvas, app->rows - 4 - app_roomy(app), 0, app->columns, STYLE_PLAIN,
-                     "NOT IN IT  primer, board and sealant at walls. The maker's data sheet beats "
-                     "this.");
+                     "NOT IN IT  primer, board and sealant at walls. The maker's data sheet "
+                     "wins.");
         canvas_mark(canvas, app->rows - 4 - app_roomy(app), 0, 9, STYLE_BOLD);
     }
     draw_foot(app, canvas, help_of(app, &words));
