@@ -48,6 +48,7 @@ $(foreach l,$(LAYERS),$(eval $(call layer_library,$(l))))
 # link order: a layer before what it includes
 libs_cmd = cmd file export plan job core base
 libs_ui = ui file export plan job core base
+libs_term = $(libs_ui)
 libs_file = file export plan job core base
 libs_export = export plan job core base
 libs_plan = plan job core base
@@ -66,6 +67,15 @@ TESTS = $(patsubst tests/%.c,$(B)/tests/%,$(TEST_SOURCES))
 $(B)/tests/%: tests/%.c $$(call archives,$$(libs_$$(firstword $$(subst /, ,$$*))))
 	@mkdir -p $(@D)
 	$(CC) $(CFLAGS) -Itests -MMD -MP $(LDFLAGS) -o $@ $< $(filter %.a,$^) -lcmocka $(TEST_LIBS) $(LIBS)
+
+# the form's tests need curses; the terminal's a private terminal type and libvterm
+$(B)/tests/ui/%: TEST_LIBS = $(CURSES)
+$(B)/tests/term/%: TEST_LIBS = $(CURSES) -lvterm -lutil
+$(B)/tests/term/%: CFLAGS += -DTERMINFO_FOLDER='"$(abspath $(B))/terminfo"'
+$(B)/tests/term/test_term: $(B)/terminfo/stamp
+$(B)/terminfo/stamp: tests/term/slabgap-term.ti
+	@mkdir -p $(@D)
+	tic -x -o $(@D) $< && touch $@
 
 .PHONY: all clean
 clean:

@@ -222,6 +222,16 @@ static void draw_order(struct canvas *canvas, int top)
                      words[i]);
 }
 
+static void draw_safe(const struct app *app, struct canvas *canvas)
+{
+    int line = app->rows - (app_roomy(app) ? 4 : 3);
+
+    canvas_words(
+        canvas, line, 0, app->columns, STYLE_PLAIN,
+        "SAFE    data sheet first: solvents, skin; hot-pour burns; traffic. Tin beats this.");
+    canvas_mark(canvas, line, 0, 4, STYLE_BOLD);
+}
+
 static void seal_draw(const struct app *app, struct canvas *canvas)
 {
     struct text words = {0};
@@ -244,11 +254,8 @@ static void seal_draw(const struct app *app, struct canvas *canvas)
         draw_section(app, canvas, sketch + 1);
         draw_order(canvas, sketch + 1);
     }
-    canvas_words(
-        canvas, app->rows - (app_roomy(app) ? 4 : 3), 0, app->columns, STYLE_PLAIN,
-        "SAFE    data sheet first: solvents, skin; hot-pour burns; traffic. Tin beats this.");
     if (app->rows > 24)
-        canvas_mark(canvas, app->rows - (app_roomy(app) ? 4 : 3), 0, 4, STYLE_BOLD);
+        draw_safe(app, canvas);
     draw_foot(app, canvas, help_of(app, &words));
     text_free(&words);
 }

@@ -22,7 +22,7 @@ struct terminal {
     SCREEN *screen;
     struct canvas canvas;
     struct app *app;
-    bool ascii, colour, pasting, over;
+    bool ascii, colour, pasting, over, gone;
     sigset_t before; /* the mask while waiting */
     struct sigaction old_winch, old_hup, old_term;
     unsigned long events;
@@ -125,9 +125,12 @@ static void stop(struct terminal *terminal)
         delscreen(terminal->screen);
         sigaction(SIGWINCH, &terminal->old_winch, NULL);
     }
-    sigaction(SIGHUP, &terminal->old_hup, NULL);
+    sigprocmask(SIG_SETMASK, &terminal->before, NULL); /* what is pending goes to our handler */
+    if (terminal->gone)
+        signal(SIGHUP, SIG_IGN); /* the hang-up's signal may come behind its end of input */
+    else
+        sigaction(SIGHUP, &terminal->old_hup, NULL);
     sigaction(SIGTERM, &terminal->old_term, NULL);
-    sigprocmask(SIG_SETMASK, &terminal->before, NULL);
     canvas_free(&terminal->canvas);
 }
 
@@ -403,9 +406,8 @@ int terminal_run(struct app *app)
         return 2;
     }
     while (!terminal.over && redraw(&terminal)) {
-        if (!wait_event(&terminal))
-            break;
-        if (at_end_of_input())
+        terminal.gone = !wait_event(&terminal) || at_end_of_input();
+        if (terminal.gone)
             break;
     }
     stop(&terminal);
