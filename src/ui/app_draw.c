@@ -7,9 +7,6 @@
 #include <stdio.h>
 #include <string.h>
 
-static const char *const months[] = {"Jan", "Feb", "Mar", "Apr", "May", "Jun",
-                                     "Jul", "Aug", "Sep", "Oct", "Nov", "Dec"};
-
 void draw_size(const struct app *app, struct text *out, double si, enum quantity quantity)
 {
     if (isfinite(si))
@@ -71,7 +68,7 @@ void draw_title(const struct app *app, struct canvas *canvas, bool in_hand)
     if (app->columns >= 72)
         text_add(&right, app_units(app) == UNITS_US ? "   ft, in, °F" : "   m, mm, °C");
     if (app->today.year != 0 && app->columns >= 72)
-        text_format(&right, "   %d %s", app->today.day, months[(app->today.month + 11) % 12]);
+        text_format(&right, "   %d %s", app->today.day, month_word(app->today.month));
     width = utf8_columns(text_string(&right));
     room = app->columns - width - 3;
     canvas_words(canvas, 0, 0, room > 8 ? room : 8, in_hand ? STYLE_REVERSE : STYLE_BOLD, title);
@@ -286,6 +283,15 @@ static void draw_old(const struct app *app, struct canvas *canvas, int row)
     text_free(&old);
 }
 
+/* What has to be put right before the answers are new again. */
+static const char *to_put_right(const struct app *app)
+{
+    for (size_t i = 0; i < app->findings.count; i++)
+        if (app->findings.items[i].severity == SEVERITY_ERROR)
+            return app->findings.items[i].message;
+    return "The answers are older than the job.";
+}
+
 void draw_foot(const struct app *app, struct canvas *canvas, const char *help)
 {
     int keys = app->rows - 1, row = keys - (app_roomy(app) ? 2 : 1);
@@ -311,6 +317,8 @@ void draw_foot(const struct app *app, struct canvas *canvas, const char *help)
     }
     if (app->said[0] != '\0')
         canvas_words(canvas, row, 0, app->columns, STYLE_BOLD, app->said);
+    else if (app->stale)
+        canvas_wrap(canvas, row, 0, app->columns, 1, STYLE_BOLD, to_put_right(app));
     else if (app->show_change && app->change[0] != '\0')
         canvas_format(canvas, row, 0, app->columns, STYLE_PLAIN,
                       "Last change: %.120s (undo takes it back).", app->change);

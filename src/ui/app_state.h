@@ -153,7 +153,18 @@ bool row_apply(struct app *app, const struct entry *row, const char *string);
 bool row_is_choice(const struct entry *row);
 void row_help(const struct app *app, const struct entry *row, struct text *out);
 
+void row_path_of(const struct field *field, char out[64]);
+bool row_given(const struct app *app, const struct entry *row);
+unsigned row_bit(const struct entry *row); /* its bit in app->opened; 0: none */
+void row_show_year(const struct app *app, const struct entry *row, struct text *out);
+const char *month_word(int month);
+
+/* ---- app_row.c: an opened row ---- */
+bool row_has_own_page(struct app *app, const struct entry *row); /* and goes there */
+void row_key(struct app *app, uint32_t key);
+
 /* ---- app.c ---- */
+void app_move(struct app *app, int step); /* to the next row that can be stood on */
 void app_go(struct app *app, enum page_id page);
 void app_open_row(struct app *app, const struct entry *row, uint32_t first);
 void app_ask(struct app *app, enum ask ask, const char *start);

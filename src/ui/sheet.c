@@ -57,7 +57,7 @@ int sheet_count(void)
     return SHEET_COUNT;
 }
 
-static void path_of(const struct field *field, char out[64])
+void row_path_of(const struct field *field, char out[64])
 {
     snprintf(out, 64, "%s.%s", field->section, field->key);
 }
@@ -73,7 +73,7 @@ void row_of_field(enum field_id id, struct entry *row)
                           .group = field_group_word(field->group),
                           .help = field->help};
     snprintf(row->label, sizeof row->label, "%s", field->label);
-    path_of(field, row->path);
+    row_path_of(field, row->path);
 }
 
 void sheet_row(int index, struct entry *row)
@@ -96,6 +96,13 @@ void sheet_row(int index, struct entry *row)
 
 /* ---- what stands in a row ---- */
 
+static bool whole_feet(double metres)
+{
+    double feet = metres / 0.3048;
+
+    return fabs(feet - round(feet)) < 0.005;
+}
+
 static void show_shape(const struct app *app, struct text *out)
 {
     const struct rows *rows = &app->job.outline;
@@ -114,6 +121,10 @@ static void show_shape(const struct app *app, struct text *out)
         y1 = fmax(y1, rows->items[i].y);
     }
     text_add(out, rows->count == 4 ? "" : rows->count == 6 ? "L " : "corners ");
+    if (app_units(app) == UNITS_US && whole_feet(x1 - x0) && whole_feet(y1 - y0)) {
+        text_format(out, "%.0f x %.0f ft", (x1 - x0) / 0.3048, (y1 - y0) / 0.3048);
+        return;
+    }
     if (app_units(app) == UNITS_US) {
         unit_show(out, x1 - x0, QUANTITY_LENGTH, UNITS_US);
         text_add(out, " x ");
@@ -164,17 +175,22 @@ static void show_touches(const struct app *app, struct text *out)
         text_add(out, "nothing");
 }
 
-static const char *const months[] = {"Jan", "Feb", "Mar", "Apr", "May", "Jun",
-                                     "Jul", "Aug", "Sep", "Oct", "Nov", "Dec"};
+const char *month_word(int month)
+{
+    static const char *const months[] = {"Jan", "Feb", "Mar", "Apr", "May", "Jun",
+                                         "Jul", "Aug", "Sep", "Oct", "Nov", "Dec"};
+
+    return month >= 1 && month <= 12 ? months[month - 1] : "";
+}
 
 static void add_day(struct text *out, struct date date)
 {
     if (date.year != 0 && date.month >= 1 && date.month <= 12)
-        text_format(out, "%d %s", date.day, months[date.month - 1]);
+        text_format(out, "%d %s", date.day, month_word(date.month));
 }
 
 /* Both slab temperatures; when none is typed the plan's own. */
-static void show_year(const struct app *app, const struct entry *row, struct text *out)
+void row_show_year(const struct app *app, const struct entry *row, struct text *out)
 {
     double cold, hot;
     bool slab = row->id == FIELD_climate_slab_coldest;
@@ -220,7 +236,7 @@ static void show_pair(const struct app *app, const struct entry *row, struct tex
         add_day(out, job->sealing_date);
         return;
     }
-    if (job->sealant_kind != SEALANT_NONE) {
+    if (job->sealant_kind < SEALANT_COMPRESSION_SEAL) { /* the kinds that have a class */
         unit_add_number(out, 100 * job->sealant_class.extension, 1);
         text_add(out, " % ");
     }
@@ -263,7 +279,12 @@ static void show_field(const struct app *app, const struct entry *row, struct te
 
     if (row->id == FIELD_COUNT) {
         const char *written = document_get(app->document, row->path);
-        text_add(out, written != NULL ? written : "-");
+        if (written != NULL)
+            text_add(out, written);
+        else if (row_is_choice(row)) /* left out: the first word */
+            text_add_bytes(out, row->field->choices, strcspn(row->field->choices, " "));
+        else
+            text_add(out, "-");
         return;
     }
     value = app->job.given[row->id] ? NAN : chosen(app, row->id);
@@ -288,7 +309,7 @@ void row_show(const struct app *app, const struct entry *row, struct text *out)
         show_touches(app, out);
         break;
     case ROW_YEAR:
-        show_year(app, row, out);
+        row_show_year(app, row, out);
         break;
     case ROW_STARTS:
     case ROW_SLAB_THEN:
@@ -326,7 +347,7 @@ static bool overruled(const struct app *app, const struct entry *row)
     return false;
 }
 
-static bool row_given(const struct app *app, const struct entry *row)
+bool row_given(const struct app *app, const struct entry *row)
 {
     const struct job *job = &app->job;
 
@@ -347,7 +368,7 @@ static bool row_given(const struct app *app, const struct entry *row)
     }
 }
 
-static unsigned sheet_bit(const struct entry *row)
+unsigned row_bit(const struct entry *row)
 {
     for (int i = 0; i < SHEET_COUNT; i++)
         if (sheet[i].kind == row->kind && sheet[i].id == row->id)
@@ -362,181 +383,7 @@ const char *row_whose(const struct app *app, const struct entry *row)
         return "";
     if (row_given(app, row))
         return overruled(app, row) ? "not used" : "you";
-    return row->guess && (app->opened & sheet_bit(row)) == 0 ? "guess" : "usual";
-}
-
-/* ---- opening and keeping ---- */
-
-bool row_is_choice(const struct entry *row)
-{
-    return row->kind == ROW_FIELD && row->field != NULL && row->field->choices != NULL;
-}
-
-static void add_written(const struct app *app, enum field_id id, struct text *out)
-{
-    if (!app->job.given[id])
-        return;
-    if (out->length > 0)
-        text_add(out, " ");
-    field_write(out, &app->job, id, app_units(app));
-}
-
-void row_text(const struct app *app, const struct entry *row, struct text *out)
-{
-    const char *written;
-
-    if (row->kind == ROW_YEAR) {
-        if (row_given(app, row))
-            show_year(app, row, out);
-    } else if (row->kind == ROW_DRYING) {
-        if (row_given(app, row))
-            text_format(out, "%g", 1000 * app->job.concrete_shrinkage);
-    } else if (row->kind == ROW_STARTS) {
-        add_written(app, FIELD_pour_date, out);
-        add_written(app, FIELD_pour_start, out);
-    } else if (row->kind == ROW_SLAB_THEN || row->kind == ROW_GOOD_FOR) {
-        add_written(app, row->id, out);
-        add_written(app, row->second, out);
-    } else if (row->id != FIELD_COUNT && row->field->type != FIELD_TEXT) {
-        add_written(app, row->id, out);
-    } else {
-        written = document_get(app->document, row->path);
-        text_add(out, written != NULL ? written : "");
-    }
-}
-
-/* "1,5 m": the comma between digits is a point, in the form only. */
-static void decimal_comma(char *string)
-{
-    for (char *c = string; *c != '\0'; c++)
-        if (*c == ',' && c > string && c[-1] >= '0' && c[-1] <= '9' && c[1] >= '0' && c[1] <= '9')
-            *c = '.';
-}
-
-static void item(struct change_item *out, enum field_id id, const char *value)
-{
-    *out = (struct change_item){0};
-    path_of(&field_table[id], out->path);
-    snprintf(out->value, sizeof out->value, "%s", value);
-}
-
-/* "-8 to 40 °C", "-8 40", "5F to 90F". */
-static size_t read_year(const struct entry *row, const char *string, struct change_item *items)
-{
-    const char *unit = strpbrk(string, "FCfcK°"), *to = strstr(string, " to ");
-    char first[EDITOR_MOST], second[EDITOR_MOST] = "";
-    size_t cut = to != NULL ? (size_t)(to - string) : strcspn(string, " ");
-
-    snprintf(first, sizeof first, "%.*s", (int)cut, string);
-    snprintf(second, sizeof second, "%s", to != NULL ? to + 4 : string + cut);
-    if (second[strspn(second, " ")] == '\0') {
-        item(&items[0], row->id, first);
-        return 1;
-    }
-    if (unit != NULL && strpbrk(first, "FCfcK°") == NULL) {
-        size_t n = strlen(first);
-        const char *word = second + strcspn(second, "FCfcK°");
-        snprintf(first + n, sizeof first - n, " %s", word);
-    }
-    item(&items[0], row->id, first);
-    item(&items[1], row->second, second + strspn(second, " "));
-    return 2;
-}
-
-/* Words into the two fields of a pair by what they look like. */
-static size_t read_pair(const struct entry *row, const char *string, struct change_item *items)
-{
-    char first[EDITOR_MOST] = "", second[EDITOR_MOST] = "";
-    size_t count = 0;
-
-    while (*string != '\0') {
-        size_t n = strcspn(string, " ");
-        bool date = n >= 8 && string[4] == '-';
-        bool clock = memchr(string, ':', n) != NULL;
-        bool word = strchr("cfhpsn", string[0]) != NULL && n > 3;
-        bool to_second = row->kind == ROW_STARTS      ? date || !clock
-                         : row->kind == ROW_SLAB_THEN ? date
-                                                      : word;
-        char *into = to_second ? second : first;
-        size_t used = strlen(into);
-        snprintf(into + used, EDITOR_MOST - used, "%s%.*s", used > 0 ? " " : "", (int)n, string);
-        string += n;
-        string += strspn(string, " ");
-    }
-    if (first[0] != '\0')
-        item(&items[count++], row->id, first);
-    if (second[0] != '\0')
-        item(&items[count++], row->second, second);
-    return count;
-}
-
-/* mm a metre; a tested strain such as 200e-6 is taken as it is. */
-static size_t read_drying(const char *string, struct change_item *items)
-{
-    char value[64], *end;
-    double number = strtod(string, &end);
-
-    if (*string != '\0' && end != string && number >= 0.003)
-        snprintf(value, sizeof value, "%.9g", number / 1000);
-    else
-        snprintf(value, sizeof value, "%.60s", string);
-    item(&items[0], FIELD_concrete_shrinkage, value);
-    item(&items[1], FIELD_concrete_shrinkage_model, value[0] != '\0' ? "typed" : "");
-    return 2;
-}
-
-static size_t read_row(const struct entry *row, const char *string, struct change_item *items)
-{
-    bool empty = string[0] == '\0';
-
-    if (row->kind == ROW_DRYING)
-        return read_drying(string, items);
-    if (empty && row->second < FIELD_COUNT) {
-        item(&items[0], row->id, "");
-        item(&items[1], row->second, "");
-        return 2;
-    }
-    if (row->kind == ROW_YEAR)
-        return read_year(row, string, items);
-    if (row->second < FIELD_COUNT)
-        return read_pair(row, string, items);
-    *items = (struct change_item){0};
-    snprintf(items->path, sizeof items->path, "%s", row->path);
-    snprintf(items->value, sizeof items->value, "%s", string);
-    return 1;
-}
-
-bool row_apply(struct app *app, const struct entry *row, const char *string)
-{
-    struct change_item items[2];
-    char typed[EDITOR_MOST], words[WORDS_MOST];
-    struct text old = {0}, now = {0};
-    size_t count, length;
-    bool done;
-
-    snprintf(typed, sizeof typed, "%s", string + strspn(string, " "));
-    length = strlen(typed);
-    while (length > 0 && typed[length - 1] == ' ')
-        typed[--length] = '\0';
-    if (row->field != NULL && row->field->type == FIELD_NUMBER)
-        decimal_comma(typed);
-    count = read_row(row, typed, items);
-    row_show(app, row, &old);
-    done = edit_change(app, items, count, row->label);
-    if (done) {
-        row_show(app, row, &now);
-        snprintf(words, sizeof words, "%s %.60s to %.60s", row->label, text_string(&old),
-                 text_string(&now));
-        snprintf(app->change, sizeof app->change, "%s", words);
-        free(app->history.steps[app->history.now].words);
-        app->history.steps[app->history.now].words = strdup(words);
-        if (app->history.steps[app->history.now].words == NULL)
-            app->history.steps[app->history.now].words = strdup("");
-        app->opened |= sheet_bit(row);
-    }
-    text_free(&old);
-    text_free(&now);
-    return done;
+    return row->guess && (app->opened & row_bit(row)) == 0 ? "guess" : "usual";
 }
 
 /* ---- the help row ---- */

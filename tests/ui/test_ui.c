@@ -210,6 +210,28 @@ static void test_refused_keeps_everything(void **state)
     app_free(app);
 }
 
+/* A value good in itself that makes the job impossible: kept, marked, mended. */
+static void test_impossible_job(void **state)
+{
+    struct app *app = open_example(false);
+    struct text bytes = {0};
+
+    (void)state;
+    app_goto_field(app, "climate.slab-coldest");
+    press(app, "45 to 40~");
+    app_write(app, &bytes);
+    assert_non_null(strstr(text_string(&bytes), "slab-coldest = 45"));
+    assert_true(app->stale);
+    press(app, "(");
+    assert_true(shows(app, "~HOLDS"));
+    assert_true(shows(app, "swap the two"));
+    press(app, "u");
+    assert_false(app->stale);
+    assert_true(shows(app, "-8 to 40"));
+    text_free(&bytes);
+    app_free(app);
+}
+
 static void test_arrows_change_nothing(void **state)
 {
     struct app *app = open_example(false);
@@ -464,6 +486,7 @@ int main(void)
         cmocka_unit_test(test_sides),
         cmocka_unit_test(test_edit_and_undo),
         cmocka_unit_test(test_refused_keeps_everything),
+        cmocka_unit_test(test_impossible_job),
         cmocka_unit_test(test_arrows_change_nothing),
         cmocka_unit_test(test_choice),
         cmocka_unit_test(test_example_never_leaks),
