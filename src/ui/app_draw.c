@@ -283,15 +283,6 @@ static void draw_old(const struct app *app, struct canvas *canvas, int row)
     text_free(&old);
 }
 
-/* What has to be put right before the answers are new again. */
-static const char *to_put_right(const struct app *app)
-{
-    for (size_t i = 0; i < app->findings.count; i++)
-        if (app->findings.items[i].severity == SEVERITY_ERROR)
-            return app->findings.items[i].message;
-    return "The answers are older than the job.";
-}
-
 void draw_foot(const struct app *app, struct canvas *canvas, const char *help)
 {
     int keys = app->rows - 1, row = keys - (app_roomy(app) ? 2 : 1);
@@ -318,7 +309,7 @@ void draw_foot(const struct app *app, struct canvas *canvas, const char *help)
     if (app->said[0] != '\0')
         canvas_words(canvas, row, 0, app->columns, STYLE_BOLD, app->said);
     else if (app->stale)
-        canvas_wrap(canvas, row, 0, app->columns, 1, STYLE_BOLD, to_put_right(app));
+        canvas_wrap(canvas, row, 0, app->columns, 1, STYLE_BOLD, edit_first_error(&app->findings));
     else if (app->show_change && app->change[0] != '\0')
         canvas_format(canvas, row, 0, app->columns, STYLE_PLAIN,
                       "Last change: %.120s (undo takes it back).", app->change);

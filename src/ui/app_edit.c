@@ -4,12 +4,19 @@
 #include <stdlib.h>
 #include <string.h>
 
-/* The first error, else nothing. */
-static const char *first_error(const struct finding_list *findings)
+/* The first error without the file's name of its field, which the row's label says; else "". */
+const char *edit_first_error(const struct finding_list *findings)
 {
-    for (size_t i = 0; i < findings->count; i++)
-        if (findings->items[i].severity == SEVERITY_ERROR)
-            return findings->items[i].message;
+    for (size_t i = 0; i < findings->count; i++) {
+        const struct finding *finding = &findings->items[i];
+        size_t n = strlen(finding->field);
+        if (finding->severity != SEVERITY_ERROR)
+            continue;
+        if (n > 0 && strncmp(finding->message, finding->field, n) == 0 &&
+            strncmp(finding->message + n, ": ", 2) == 0)
+            return finding->message + n + 2;
+        return finding->message;
+    }
     return "";
 }
 
@@ -59,7 +66,7 @@ void edit_recompute(struct app *app)
     if (status == STATUS_NO_MEMORY)
         app_tell(app, "Not enough memory; close other programs. The answers are the old ones.");
     else if (app->stale)
-        app_tell(app, "%s", first_error(&app->findings));
+        app_tell(app, "%s", edit_first_error(&app->findings));
     job_free(&raw);
     free(made);
 }
@@ -79,7 +86,7 @@ static bool remember(struct app *app, const char *words)
 /* What the refusal says, and at most 14 cells of it for the row. */
 static void say_refused(struct app *app, const struct finding_list *findings)
 {
-    const char *message = first_error(findings), *word = "to put right";
+    const char *message = edit_first_error(findings), *word = "to put right";
 
     if (strstr(message, "at least") != NULL || strstr(message, "too small") != NULL)
         word = "too small";
@@ -159,7 +166,7 @@ bool edit_replace(struct app *app, const char *bytes, size_t count, const char *
     edit_recompute(app);
     if (status == STATUS_REFUSED) {
         app->stale = true;
-        app_tell(app, "%s", first_error(&findings));
+        app_tell(app, "%s", edit_first_error(&findings));
     }
     finding_append(&app->findings, &findings);
     finding_free(&findings);

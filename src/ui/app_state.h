@@ -136,6 +136,7 @@ bool edit_change(struct app *app, const struct change_item *items, size_t count,
 bool edit_replace(struct app *app, const char *bytes, size_t count, const char *path, bool example,
                   const char *words);
 void edit_undo(struct app *app, int step); /* -1 undo, 1 redo */
+const char *edit_first_error(const struct finding_list *findings);
 void edit_recompute(struct app *app);
 /* Whether there is something not saved. */
 bool edit_unsaved(const struct app *app);
