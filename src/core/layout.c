@@ -1,0 +1,320 @@
+/* Lays out a slab: its own frame, rings, forced lines, engine, joints and panels, checks. */
+#include "core/layout.h"
+#include "core/layout_place.h"
+#include <math.h>
+#include <stdio.h>
+#include <stdlib.h>
+#include <string.h>
+
+static const double pi = 3.14159265358979323846;
+
+/* The direction of the longest side, between -45 and 45 degrees. */
+static void find_frame(struct work *w)
+{
+    double longest = 0, angle = 0;
+    const struct layout *out = w->out;
+    for (size_t i = 0; i < out->outline_count; i++) {
+        const struct layout_point a = out->outline[i], b = out->outline[(i + 1) % out->outline_count];
+        const double length = hypot(b.x - a.x, b.y - a.y);
+        if (length <= longest * (1 + 1e-9))
+            continue;
+        longest = length;
+        angle = atan2(b.y - a.y, b.x - a.x);
+    }
+    angle -= pi / 2 * floor(angle / (pi / 2) + 0.5);
+    if (fabs(angle) < 1e-7)
+        angle = 0;
+    w->cosine = cos(angle);
+    w->sine = angle == 0 ? 0 : sin(angle);
+}
+
+static bool ring_make(struct work *w, const struct layout_point *points, size_t count, int object)
+{
+    struct work_ring *r = &w->rings[w->ring_count];
+    r->x = calloc(count + 1, sizeof *r->x);
+    r->y = calloc(count + 1, sizeof *r->y);
+    r->count = count;
+    w->ring_object[w->ring_count++] = object;
+    if (!r->x || !r->y)
+        return false;
+    for (size_t i = 0; i < count; i++)
+        work_frame(w, points[i].x, points[i].y, &r->x[i], &r->y[i]);
+    return true;
+}
+
+/* After turning, coordinates that belong together differ by less than 0.1 mm: make them one. */
+static void align(const struct work *w, bool second)
+{
+    for (size_t r = 0; w->sine != 0 && r < w->ring_count; r++)
+        for (size_t i = 0; i < w->rings[r].count; i++)
+            for (size_t q = 0; q <= r; q++)
+                for (size_t k = 0; k < (q == r ? i : w->rings[q].count); k++) {
+                    int64_t *a = second ? w->rings[r].y : w->rings[r].x;
+                    const int64_t *b = second ? w->rings[q].y : w->rings[q].x;
+                    if (llabs(a[i] - b[k]) <= 8)
+                        a[i] = b[k];
+                }
+}
+
+/* A rectangle round a long thin object, run on to the slab edge where the rest would be too narrow. */
+static bool ring_object(struct work *w, int index)
+{
+    const struct layout_object *o = &w->input->objects[index];
+    const double a = o->angle_deg * pi / 180, c = cos(a), s = sin(a), clear = 0.05;
+    int64_t x0 = INT64_MAX, x1 = INT64_MIN, y0 = INT64_MAX, y1 = INT64_MIN;
+    for (int k = 0; k < 4; k++) {
+        const double dx = (k & 1 ? 0.5 : -0.5) * (o->w + 2 * clear);
+        const double dy = (k & 2 ? 0.5 : -0.5) * (o->d + 2 * clear);
+        int64_t x, y;
+        work_frame(w, o->x + dx * c - dy * s, o->y + dx * s + dy * c, &x, &y);
+        x0 = x < x0 ? x : x0;
+        x1 = x > x1 ? x : x1;
+        y0 = y < y0 ? y : y0;
+        y1 = y > y1 ? y : y1;
+    }
+    const int64_t near = llround(w->input->min_side * LAYOUT_UNIT), mx = x0 + (x1 - x0) / 2,
+                  my = y0 + (y1 - y0) / 2;
+    const struct work_ring *g = &w->rings[0];
+    for (size_t i = 0; i < g->count; i++) {
+        const size_t k = (i + 1) % g->count;
+        if (g->x[i] == g->x[k] && (g->y[i] < my) != (g->y[k] < my)) {
+            x0 = llabs(x0 - g->x[i]) < near ? g->x[i] : x0;
+            x1 = llabs(x1 - g->x[i]) < near ? g->x[i] : x1;
+        }
+        if (g->y[i] == g->y[k] && (g->x[i] < mx) != (g->x[k] < mx)) {
+            y0 = llabs(y0 - g->y[i]) < near ? g->y[i] : y0;
+            y1 = llabs(y1 - g->y[i]) < near ? g->y[i] : y1;
+        }
+    }
+    struct work_ring *r = &w->rings[w->ring_count];
+    const struct layout_point none[4] = {{0, 0}, {0, 0}, {0, 0}, {0, 0}};
+    if (!ring_make(w, none, 4, index))
+        return false;
+    r->x[0] = r->x[3] = x0;
+    r->x[1] = r->x[2] = x1;
+    r->y[0] = r->y[1] = y0;
+    r->y[2] = r->y[3] = y1;
+    return true;
+}
+
+static bool make_rings(struct work *w)
+{
+    const size_t room = w->input->opening_count + w->input->object_count + 2;
+    w->rings = calloc(room, sizeof *w->rings);
+    w->ring_object = calloc(room, sizeof *w->ring_object);
+    if (!w->rings || !w->ring_object || !ring_make(w, w->out->outline, w->out->outline_count, -1))
+        return false;
+    for (size_t i = 0; i < w->out->opening_count; i++)
+        if (!ring_make(w, w->out->openings[i].points, w->out->openings[i].count, -1))
+            return false;
+    align(w, false);
+    align(w, true);
+    for (size_t i = 0; i < w->input->object_count; i++)
+        if (w->input->objects[i].isolate && place_is_rectangle(w, &w->input->objects[i]) &&
+            !ring_object(w, (int)i))
+            return false;
+    return true;
+}
+
+static bool is_rectilinear(const struct work *w)
+{
+    for (size_t r = 0; r < w->ring_count; r++)
+        for (size_t i = 0; i < w->rings[r].count; i++) {
+            const struct work_ring *g = &w->rings[r];
+            const size_t k = (i + 1) % g->count;
+            if (g->x[i] != g->x[k] && g->y[i] != g->y[k])
+                return false;
+        }
+    return true;
+}
+
+static bool is_convex(const struct layout *out)
+{
+    bool left = false, right = false;
+    for (size_t i = 0; i < out->outline_count; i++) {
+        const struct layout_point a = out->outline[i], b = out->outline[(i + 1) % out->outline_count];
+        const struct layout_point c = out->outline[(i + 2) % out->outline_count];
+        const double turn = (b.x - a.x) * (c.y - b.y) - (b.y - a.y) * (c.x - b.x);
+        left |= turn > 1e-9;
+        right |= turn < -1e-9;
+    }
+    return left != right;
+}
+
+/* The sides of all rings, those parallel to y and those parallel to x. */
+static enum status build(struct work *w)
+{
+    struct rect_edge *edges[2] = {NULL, NULL};
+    size_t count[2] = {0, 0}, total = 0;
+    for (size_t r = 0; r < w->ring_count; r++)
+        total += w->rings[r].count;
+    edges[0] = calloc(total + 1, sizeof *edges[0]);
+    edges[1] = calloc(total + 1, sizeof *edges[1]);
+    enum status status = STATUS_NO_MEMORY;
+    for (size_t r = 0; edges[0] && edges[1] && r < w->ring_count; r++)
+        for (size_t i = 0; i < w->rings[r].count; i++) {
+            const struct work_ring *g = &w->rings[r];
+            const size_t k = (i + 1) % g->count;
+            const int axis = g->x[i] == g->x[k] ? 0 : 1;
+            const int64_t a = axis ? g->x[i] : g->y[i], b = axis ? g->x[k] : g->y[k];
+            if (a != b)
+                edges[axis][count[axis]++] = (struct rect_edge){
+                    axis ? g->y[i] : g->x[i], a < b ? a : b, a < b ? b : a};
+        }
+    if (edges[0] && edges[1])
+        status = rect_build(&w->slab, edges, count);
+    free(edges[0]);
+    free(edges[1]);
+    return status;
+}
+
+static void set_rules(struct work *w)
+{
+    const struct layout_input *in = w->input;
+    const double turn = fabs(sin(in->axis_deg * pi / 180) * w->cosine - cos(in->axis_deg * pi / 180) * w->sine);
+    const bool swap = turn > 0.7;
+    w->slab.rules.side[swap] = in->max_side_x * LAYOUT_UNIT;
+    w->slab.rules.side[!swap] = in->max_side_y * LAYOUT_UNIT;
+    w->slab.rules.aspect = in->max_aspect;
+    w->slab.rules.least = in->min_side * LAYOUT_UNIT;
+    w->slab.rules.raster = in->us_units ? 127 : 80;
+    if (in->round_to > 0)
+        w->slab.rules.raster = llround(in->round_to * LAYOUT_UNIT);
+    w->slab.allowed = (uint64_t)(2e6 * (in->effort > 0 ? in->effort : 1));
+}
+
+/* Panels meet a scan line in one piece: at least so many across, at least so much joint (design 5). */
+static void find_bounds(struct work *w)
+{
+    double length = 0, area = 0;
+    for (int axis = 0; axis < 2; axis++)
+        for (size_t i = 0; i < w->slab.family[axis].arc_count; i++) {
+            const struct rect_arc *a = &w->slab.family[axis].arcs[i];
+            const double v = (double)(a->v1 - a->v0), u = (double)(a->u1 - a->u0);
+            length += u / LAYOUT_UNIT * (ceil(v / w->slab.rules.side[1 - axis] - 2e-3) - 1);
+            area += axis ? 0 : u * v;
+        }
+    for (size_t i = 0; i < w->box_count; i++)
+        length -= 4 * (double)w->boxes[i].half / LAYOUT_UNIT;
+    w->out->bound_joint_m = length > 0 ? length : 0;
+    const double side[2] = {w->slab.rules.side[0], w->slab.rules.side[1]};
+    w->out->bound_panels = (int)ceil(area / (side[0] * side[1]) / (1.002 * 1.002) - 1e-9);
+    if (w->rings[0].count == 4 && w->ring_count == 1) {
+        const struct rect_arc *a = &w->slab.family[0].arcs[0];
+        w->out->bound_panels = (int)(ceil((double)(a->u1 - a->u0) / side[0] - 2e-3) *
+                                     ceil((double)(a->v1 - a->v0) / side[1] - 2e-3));
+    }
+}
+
+static enum status solve_rectilinear(struct work *w)
+{
+    set_rules(w);
+    enum status status = build(w);
+    if (status)
+        return status;
+    if (!place_boxes(w) || !place_lines(w) || !place_expansion(w) || !place_matches(w) ||
+        !place_force_boxes(w))
+        return STATUS_NO_MEMORY;
+    status = rect_solve(&w->slab);
+    if (!status)
+        status = layout_emit(w);
+    find_bounds(w);
+    return status;
+}
+
+/* A shape that is neither rectilinear nor convex: the whole as one panel, and it is said. */
+static enum status solve_other(struct work *w)
+{
+    const bool plain = is_convex(w->out) && !w->out->opening_count && !w->input->object_count;
+    struct layout_reason reason = {.code = "GIVEN_ANGLE", .rule = "panel.corner"};
+    if (plain)
+        return layout_convex(w);
+    snprintf(reason.cause, sizeof reason.cause,
+             "This outline has slanting or curved sides with inside corners, openings or objects.");
+    snprintf(reason.remedy, sizeof reason.remedy,
+             "Split it into rectangular and tapered parts, and lay each out as a slab of its own.");
+    w->out->violations++;
+    return layout_reason_add(&w->out->reasons, &w->out->reason_count, reason) ? STATUS_OK
+                                                                              : STATUS_NO_MEMORY;
+}
+
+static int orient(struct layout_point a, struct layout_point b, struct layout_point c)
+{
+    const double d = (b.x - a.x) * (c.y - a.y) - (b.y - a.y) * (c.x - a.x);
+    return (d > 1e-12) - (d < -1e-12);
+}
+
+static bool crosses_itself(const struct layout *out)
+{
+    const size_t n = out->outline_count;
+    for (size_t i = 0; i < n; i++)
+        for (size_t k = i + 2; k < n; k++) {
+            if (i == 0 && k == n - 1)
+                continue;
+            const struct layout_point a = out->outline[i], b = out->outline[i + 1];
+            const struct layout_point c = out->outline[k], d = out->outline[(k + 1) % n];
+            if (orient(a, b, c) * orient(a, b, d) < 0 && orient(c, d, a) * orient(c, d, b) < 0)
+                return true;
+        }
+    return false;
+}
+
+static void work_free(struct work *w)
+{
+    for (size_t i = 0; w->rings && i < w->ring_count; i++) {
+        free(w->rings[i].x);
+        free(w->rings[i].y);
+    }
+    free(w->rings);
+    free(w->ring_object);
+    free(w->boxes);
+    free(w->lines);
+    free(w->panels);
+    rect_free(&w->slab);
+}
+
+enum status layout_solve(const struct layout_input *input, struct layout *layout)
+{
+    struct layout out = {0};
+    struct work w = {.input = input, .out = &out, .cosine = 1};
+    if (input->outline.count < 3 || !(input->max_side_x > 0) || !(input->max_side_y > 0))
+        return STATUS_REFUSED;
+    enum status status = layout_copy_rings(&w);
+    if (!status && crosses_itself(&out))
+        status = STATUS_REFUSED;
+    if (!status) {
+        find_frame(&w);
+        status = make_rings(&w) ? STATUS_OK : STATUS_NO_MEMORY;
+    }
+    if (!status)
+        status = is_rectilinear(&w) ? solve_rectilinear(&w) : solve_other(&w);
+    if (!status)
+        status = layout_check_panels(&w);
+    out.evaluations = w.slab.evaluations;
+    work_free(&w);
+    if (status)
+        layout_free(&out);
+    else
+        *layout = out;
+    return status;
+}
+
+void layout_free(struct layout *layout)
+{
+    free(layout->outline);
+    for (size_t i = 0; i < layout->opening_count; i++)
+        free(layout->openings[i].points);
+    free(layout->openings);
+    for (size_t i = 0; i < layout->edge_count; i++)
+        free(layout->edges[i].joints);
+    free(layout->edges);
+    free(layout->joints);
+    for (size_t i = 0; i < layout->panel_count; i++) {
+        free(layout->panels[i].ring);
+        free(layout->panels[i].reasons);
+    }
+    free(layout->panels);
+    free(layout->boxes);
+    free(layout->reasons);
+    *layout = (struct layout){0};
+}

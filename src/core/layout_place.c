@@ -1,0 +1,365 @@
+/* What forces joints: objects and their boxes, pour lines, neighbours, expansion, the user's own. */
+#include "core/layout_place.h"
+#include <math.h>
+#include <stdio.h>
+#include <stdlib.h>
+#include <string.h>
+
+#define UNITS(m) llround((m) * LAYOUT_UNIT)
+static const double clearance_m = 0.1; /* own choice: box corner beyond the object's corner */
+static const double snap_m = 0.3;      /* design, "Snapping": a box may be moved so far */
+
+bool work_line_add(struct work *w, struct work_line line)
+{
+    if (w->line_count == w->line_room) {
+        const size_t room = w->line_room ? 2 * w->line_room : 32;
+        struct work_line *more = realloc(w->lines, room * sizeof *more);
+        if (!more)
+            return false;
+        w->lines = more;
+        w->line_room = room;
+    }
+    w->lines[w->line_count++] = line;
+    return true;
+}
+
+/* Half diagonal of the diamond that clears the object (design, "Objects"). */
+static double half_of(const struct work *w, const struct layout_object *o)
+{
+    if (o->box_half_given)
+        return o->box_half;
+    if (o->round)
+        return o->w / sqrt(2) + clearance_m * sqrt(2);
+    const double a = o->angle_deg * 3.14159265358979323846 / 180;
+    const double c = cos(a) * w->cosine + sin(a) * w->sine, s = sin(a) * w->cosine - cos(a) * w->sine;
+    double half = 0;
+    for (int k = -1; k <= 1; k += 2) {
+        const double x = o->w / 2 * c - k * o->d / 2 * s, y = o->w / 2 * s + k * o->d / 2 * c;
+        half = fmax(half, fabs(x) + fabs(y));
+    }
+    return half + clearance_m;
+}
+
+/* Long thin and very large things get a rectangle along the slab's axes instead of a diamond. */
+bool place_is_rectangle(const struct work *w, const struct layout_object *o)
+{
+    const double longer = fmax(o->w, o->d), shorter = fmin(o->w, o->d);
+    if (o->round || o->box_half_given)
+        return false;
+    return (longer > 3 * shorter && longer > 1.0) || o->edge_kind_channel || half_of(w, o) > 1.4;
+}
+
+/* The nearest slab edge parallel to an axis that the box would cross. */
+static bool near_edge(const struct work *w, int axis, int64_t x, int64_t y, int64_t half, int64_t *u)
+{
+    int64_t best = half;
+    bool found = false;
+    for (size_t r = 0; r < w->ring_count; r++)
+        for (size_t i = 0; i < w->rings[r].count; i++) {
+            const struct work_ring *g = &w->rings[r];
+            const size_t k = (i + 1) % g->count;
+            const int64_t *at = axis ? g->y : g->x, *along = axis ? g->x : g->y;
+            const int64_t v = axis ? x : y, d = llabs(at[i] - (axis ? y : x));
+            const int64_t low = along[i] < along[k] ? along[i] : along[k];
+            const int64_t high = along[i] < along[k] ? along[k] : along[i];
+            if (at[i] != at[k] || v < low || v > high || d > best)
+                continue;
+            best = d;
+            *u = at[i];
+            found = true;
+        }
+    return found;
+}
+
+bool place_boxes(struct work *w)
+{
+    const struct layout_input *in = w->input;
+    w->boxes = calloc(in->object_count + 1, sizeof *w->boxes);
+    if (!w->boxes)
+        return false;
+    for (size_t i = 0; i < in->object_count; i++) {
+        const struct layout_object *o = &in->objects[i];
+        if (!o->isolate || place_is_rectangle(w, o))
+            continue;
+        struct work_box *b = &w->boxes[w->box_count++];
+        *b = (struct work_box){.object = (int)i, .half = UNITS(half_of(w, o))};
+        work_frame(w, o->x, o->y, &b->x, &b->y);
+        if (o->box_at_given) {
+            int64_t x, y;
+            work_frame(w, o->box_x, o->box_y, &x, &y);
+            b->half += o->box_half_given ? 0 : llabs(x - b->x) + llabs(y - b->y);
+            b->x = x;
+            b->y = y;
+        }
+    }
+    return true;
+}
+
+static int compare_int64(const void *a, const void *b)
+{
+    const int64_t p = *(const int64_t *)a, q = *(const int64_t *)b;
+    return (p > q) - (p < q);
+}
+
+static void snap_one(struct work_box *b, int axis, int64_t to)
+{
+    int64_t *at = axis ? &b->y : &b->x, *moved = axis ? &b->moved_y : &b->moved_x;
+    *moved = to - *at;
+    b->half += llabs(*moved);
+    *at = to;
+}
+
+/* Centres that lie within twice the tolerance share one line, on a fixed line if there is one. */
+static bool snap_axis(struct work *w, int axis)
+{
+    int64_t *list = calloc(w->box_count + 1, sizeof *list);
+    if (!list)
+        return false;
+    for (size_t i = 0; i < w->box_count; i++)
+        list[i] = axis ? w->boxes[i].y : w->boxes[i].x;
+    qsort(list, w->box_count, sizeof *list, compare_int64);
+    const int64_t reach = UNITS(snap_m);
+    for (size_t i = 0; i < w->box_count;) {
+        size_t k = i;
+        while (k + 1 < w->box_count && list[k + 1] - list[i] <= 2 * reach)
+            k++;
+        int64_t to = list[i] + (list[k] - list[i]) / 2 / 80 * 80;
+        if (list[i] == list[k])
+            to = list[i];
+        for (size_t r = 0; r < w->ring_count; r++)
+            for (size_t n = 0; n < w->rings[r].count; n++) {
+                const int64_t u = axis ? w->rings[r].y[n] : w->rings[r].x[n];
+                if (llabs(u - list[i]) <= reach && llabs(u - list[k]) <= reach)
+                    to = u;
+            }
+        for (size_t n = 0; n < w->line_count; n++)
+            if (w->lines[n].axis == axis && llabs(w->lines[n].u - list[i]) <= reach &&
+                llabs(w->lines[n].u - list[k]) <= reach)
+                to = w->lines[n].u;
+        for (size_t n = 0; n < w->box_count; n++) {
+            const int64_t u = axis ? w->boxes[n].y : w->boxes[n].x;
+            const struct layout_object *o = &w->input->objects[w->boxes[n].object];
+            if (u >= list[i] && u <= list[k] && !o->box_at_given && u != to)
+                snap_one(&w->boxes[n], axis, to);
+        }
+        i = k + 1;
+    }
+    free(list);
+    return true;
+}
+
+static bool force_box(struct work *w, struct work_box *b)
+{
+    int64_t u;
+    if (near_edge(w, 0, b->x, b->y, b->half, &u)) {
+        snap_one(b, 0, u);
+        b->on_x = true;
+    }
+    if (near_edge(w, 1, b->x, b->y, b->half, &u)) {
+        snap_one(b, 1, u);
+        b->on_y = true;
+    }
+    const struct layout_object *o = &w->input->objects[b->object];
+    for (int axis = 0; axis < 2; axis++) {
+        if (axis ? b->on_y : b->on_x)
+            continue;
+        const int64_t at = axis ? b->y : b->x, v = axis ? b->x : b->y;
+        rect_force(&w->slab, axis, at, v);
+        struct work_line line = {.axis = axis, .u = at, .v0 = INT64_MIN, .v1 = INT64_MAX};
+        snprintf(line.name, sizeof line.name, "the line of %.8s %.32s", o->kind ? o->kind : "object",
+                 o->id);
+        if (!work_line_add(w, line))
+            return false;
+    }
+    return true;
+}
+
+bool place_force_boxes(struct work *w)
+{
+    bool fine = snap_axis(w, 0) && snap_axis(w, 1);
+    for (size_t i = 0; fine && i < w->box_count; i++)
+        fine = force_box(w, &w->boxes[i]);
+    return fine;
+}
+
+static void span(const struct work *w, int axis, int64_t *low, int64_t *high)
+{
+    *low = INT64_MAX;
+    *high = INT64_MIN;
+    for (size_t i = 0; i < w->rings[0].count; i++) {
+        const int64_t u = axis ? w->rings[0].y[i] : w->rings[0].x[i];
+        *low = u < *low ? u : *low;
+        *high = u > *high ? u : *high;
+    }
+}
+
+/* Forces every chord that a line from v0 to v1 at u crosses. */
+static void force_along(struct work *w, int axis, int64_t u, int64_t v0, int64_t v1)
+{
+    const struct rect_family *f = &w->slab.family[axis];
+    for (size_t i = 0; i < f->gate_count; i++)
+        if (f->gates[i].u == u && f->gates[i].v0 < v1 && f->gates[i].v1 > v0)
+            rect_force(&w->slab, axis, u, f->gates[i].v0 + (f->gates[i].v1 - f->gates[i].v0) / 2);
+    for (size_t i = 0; i < f->arc_count; i++) {
+        const struct rect_arc *a = &f->arcs[i];
+        if (a->u0 < u && u < a->u1 && a->v0 < v1 && a->v1 > v0)
+            rect_force(&w->slab, axis, u, a->v0 + (a->v1 - a->v0) / 2);
+    }
+}
+
+/* An axis-parallel line of the plan in the slab's frame; false: it is slanted. */
+static bool to_line(const struct work *w, const struct layout_segment *s, struct work_line *line)
+{
+    int64_t x1, y1, x2, y2;
+    work_frame(w, s->x1, s->y1, &x1, &y1);
+    work_frame(w, s->x2, s->y2, &x2, &y2);
+    const bool up = llabs(x1 - x2) <= 8, flat = llabs(y1 - y2) <= 8;
+    if (up == flat)
+        return false;
+    line->axis = up ? 0 : 1;
+    line->u = up ? x1 : y1;
+    line->v0 = up ? (y1 < y2 ? y1 : y2) : (x1 < x2 ? x1 : x2);
+    line->v1 = up ? (y1 < y2 ? y2 : y1) : (x1 < x2 ? x2 : x1);
+    return true;
+}
+
+static bool add_forced(struct work *w, struct work_line line)
+{
+    force_along(w, line.axis, line.u, line.v0, line.v1);
+    line.labels = true;
+    return work_line_add(w, line);
+}
+
+/* Strips no wider than asked between the typed lines and the ends, each gap in equal ones. */
+static bool pour_strips(struct work *w, int axis)
+{
+    int64_t low, high;
+    span(w, axis, &low, &high);
+    int64_t *at = calloc(w->line_count + 2, sizeof *at);
+    if (!at)
+        return false;
+    size_t n = 0;
+    at[n++] = low;
+    for (size_t i = 0; i < w->line_count; i++)
+        if (w->lines[i].axis == axis && w->lines[i].u > low && w->lines[i].u < high)
+            at[n++] = w->lines[i].u;
+    at[n++] = high;
+    qsort(at, n, sizeof *at, compare_int64);
+    bool fine = true;
+    for (size_t i = 0; fine && i + 1 < n; i++) {
+        const double gap = (double)(at[i + 1] - at[i]);
+        const int64_t strips = (int64_t)ceil((gap - 80) / (w->input->pour_width * LAYOUT_UNIT));
+        for (int64_t k = 1; fine && k < strips; k++) {
+            const int64_t u = at[i] + llround(gap * (double)k / (double)strips / 80) * 80;
+            fine = add_forced(w, (struct work_line){.axis = axis,
+                                                    .u = u,
+                                                    .v0 = INT64_MIN,
+                                                    .v1 = INT64_MAX,
+                                                    .kind = LAYOUT_CONSTRUCTION,
+                                                    .along_pour = true,
+                                                    .name = "a construction joint between strips"});
+        }
+    }
+    free(at);
+    return fine;
+}
+
+static bool unplaced(struct work *w, const char *rule, const char *cause)
+{
+    struct layout_reason reason = {.code = "GIVEN_ANGLE", .rule = rule};
+    snprintf(reason.cause, sizeof reason.cause, "%s", cause);
+    snprintf(reason.remedy, sizeof reason.remedy,
+             "Draw it along the slab's main directions, or move it onto the slab.");
+    w->out->violations++;
+    return layout_reason_add(&w->out->reasons, &w->out->reason_count, reason);
+}
+
+bool place_lines(struct work *w)
+{
+    const struct layout_input *in = w->input;
+    const double turn = in->pour_direction_deg * 3.14159265358979323846 / 180;
+    const double along = fabs(cos(turn) * w->cosine + sin(turn) * w->sine);
+    const int strip_axis = along > 0.7 ? 1 : 0;
+    for (size_t i = 0; in->has_pours && i < in->pour_line_count; i++) {
+        struct work_line line = {.kind = LAYOUT_CONSTRUCTION, .name = "a construction joint"};
+        if (!to_line(w, &in->pour_lines[i], &line)) {
+            if (!unplaced(w, "pour.line", "A pour line runs aslant to the slab and was left out."))
+                return false;
+            continue;
+        }
+        line.along_pour = line.axis == strip_axis;
+        if (!add_forced(w, line))
+            return false;
+    }
+    if (in->has_pours && in->pour_width > 0 && !pour_strips(w, strip_axis))
+        return false;
+    for (size_t i = 0; i < in->drawn_count; i++) {
+        struct work_line line = {.kind = in->drawn[i].kind,
+                                 .expansion = in->drawn[i].expansion,
+                                 .name = "a joint you drew"};
+        if (!in->drawn[i].keep)
+            continue;
+        if (to_line(w, &in->drawn[i].at, &line) ? !add_forced(w, line)
+                                                : !unplaced(w, "joint.end", "A joint you drew runs aslant to the slab and was left out."))
+            return false;
+    }
+    return true;
+}
+
+/* Expansion joints across the long direction, equally far apart, none further than asked. */
+bool place_expansion(struct work *w)
+{
+    if (w->input->expansion_every <= 0)
+        return true;
+    int64_t low, high, low_y, high_y;
+    span(w, 0, &low, &high);
+    span(w, 1, &low_y, &high_y);
+    const int axis = high_y - low_y > high - low;
+    if (axis) {
+        low = low_y;
+        high = high_y;
+    }
+    const double gap = (double)(high - low);
+    const int64_t n = (int64_t)ceil((gap - 80) / (w->input->expansion_every * LAYOUT_UNIT));
+    for (int64_t k = 1; k < n; k++) {
+        const struct work_line line = {.axis = axis,
+                                       .u = low + llround(gap * (double)k / (double)n / 80) * 80,
+                                       .v0 = INT64_MIN,
+                                       .v1 = INT64_MAX,
+                                       .kind = LAYOUT_ISOLATION,
+                                       .expansion = true,
+                                       .name = "an expansion joint"};
+        if (!add_forced(w, line))
+            return false;
+    }
+    return true;
+}
+
+/* The neighbour's joints along a side: a chord ends at each. */
+bool place_matches(struct work *w)
+{
+    for (size_t i = 0; i < w->input->edge_count; i++) {
+        const struct layout_edge *e = &w->input->edges[i];
+        const struct work_ring *r = &w->rings[0];
+        if (e->kind != LAYOUT_EDGE_EXISTING || e->isolate || e->side >= r->count)
+            continue;
+        const size_t k = (e->side + 1) % r->count;
+        const int axis = r->x[e->side] == r->x[k] ? 1 : 0;
+        const int64_t from = axis ? r->y[e->side] : r->x[e->side], to = axis ? r->y[k] : r->x[k];
+        for (size_t j = 0; j < e->joint_count; j++) {
+            const int64_t d = UNITS(e->joints[j]);
+            struct work_line line = {.axis = axis, .u = from + (to > from ? d : -d)};
+            line.v0 = INT64_MIN;
+            line.v1 = INT64_MAX;
+            snprintf(line.name, sizeof line.name, "the neighbour's joint at %.3f m", e->joints[j]);
+            if (llabs(line.u - from) < 8 || llabs(line.u - to) < 8)
+                continue;
+            if (!rect_force(&w->slab, axis, line.u, axis ? r->x[k] : r->y[k]) &&
+                !unplaced(w, "edge.match", "A neighbour's joint lies beyond the end of its side."))
+                return false;
+            if (!work_line_add(w, line))
+                return false;
+        }
+    }
+    return true;
+}
