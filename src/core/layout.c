@@ -14,7 +14,8 @@ static void find_frame(struct work *w)
     double longest = 0, angle = 0;
     const struct layout *out = w->out;
     for (size_t i = 0; i < out->outline_count; i++) {
-        const struct layout_point a = out->outline[i], b = out->outline[(i + 1) % out->outline_count];
+        const struct layout_point a = out->outline[i],
+                                  b = out->outline[(i + 1) % out->outline_count];
         const double length = hypot(b.x - a.x, b.y - a.y);
         if (length <= longest * (1 + 1e-9))
             continue;
@@ -56,7 +57,8 @@ static void align(const struct work *w, bool second)
                 }
 }
 
-/* A rectangle round a long thin object, run on to the slab edge where the rest would be too narrow. */
+/* A rectangle round a long thin object, run on to the slab edge where the rest would be too narrow.
+ */
 static bool ring_object(struct work *w, int index)
 {
     const struct layout_object *o = &w->input->objects[index];
@@ -132,7 +134,8 @@ static bool is_convex(const struct layout *out)
 {
     bool left = false, right = false;
     for (size_t i = 0; i < out->outline_count; i++) {
-        const struct layout_point a = out->outline[i], b = out->outline[(i + 1) % out->outline_count];
+        const struct layout_point a = out->outline[i],
+                                  b = out->outline[(i + 1) % out->outline_count];
         const struct layout_point c = out->outline[(i + 2) % out->outline_count];
         const double turn = (b.x - a.x) * (c.y - b.y) - (b.y - a.y) * (c.x - b.x);
         left |= turn > 1e-9;
@@ -158,8 +161,8 @@ static enum status build(struct work *w)
             const int axis = g->x[i] == g->x[k] ? 0 : 1;
             const int64_t a = axis ? g->x[i] : g->y[i], b = axis ? g->x[k] : g->y[k];
             if (a != b)
-                edges[axis][count[axis]++] = (struct rect_edge){
-                    axis ? g->y[i] : g->x[i], a < b ? a : b, a < b ? b : a};
+                edges[axis][count[axis]++] =
+                    (struct rect_edge){axis ? g->y[i] : g->x[i], a < b ? a : b, a < b ? b : a};
         }
     if (edges[0] && edges[1])
         status = rect_build(&w->slab, edges, count);
@@ -171,7 +174,8 @@ static enum status build(struct work *w)
 static void set_rules(struct work *w)
 {
     const struct layout_input *in = w->input;
-    const double turn = fabs(sin(in->axis_deg * pi / 180) * w->cosine - cos(in->axis_deg * pi / 180) * w->sine);
+    const double turn =
+        fabs(sin(in->axis_deg * pi / 180) * w->cosine - cos(in->axis_deg * pi / 180) * w->sine);
     const bool swap = turn > 0.7;
     w->slab.rules.side[swap] = in->max_side_x * LAYOUT_UNIT;
     w->slab.rules.side[!swap] = in->max_side_y * LAYOUT_UNIT;
@@ -183,7 +187,8 @@ static void set_rules(struct work *w)
     w->slab.allowed = (uint64_t)(2e6 * (in->effort > 0 ? in->effort : 1));
 }
 
-/* Panels meet a scan line in one piece: at least so many across, at least so much joint (design 5). */
+/* Panels meet a scan line in one piece: at least so many across, at least so much joint (design 5).
+ */
 static void find_bounds(struct work *w)
 {
     double length = 0, area = 0;

@@ -1,4 +1,5 @@
-/* The rules each panel must keep, measured on the finished rings, and the reason where one gives. */
+/* The rules each panel must keep, measured on the finished rings, and the reason where one gives.
+ */
 #include "core/layout_work.h"
 #include <math.h>
 #include <stdio.h>
@@ -47,8 +48,7 @@ static double measure(struct layout_panel *p)
         const double length = hypot(b.x - a.x, b.y - a.y);
         if (length < 1e-9)
             continue;
-        const struct extents e =
-            extents_along(p, (b.x - a.x) / length, (b.y - a.y) / length);
+        const struct extents e = extents_along(p, (b.x - a.x) / length, (b.y - a.y) / length);
         const double s = e.s1 - e.s0, t = e.t1 - e.t0, big = fmax(s, t), small = fmin(s, t);
         least = fmin(least, t);
         const double limit = best * (1 - 1e-6);
@@ -96,13 +96,15 @@ static void find_cause(const struct work *w, size_t panel, bool long_side,
     const int64_t v = axis ? r->x0 + (r->x1 - r->x0) / 2 : r->y0 + (r->y1 - r->y0) / 2;
     bool first, second;
     const char *a = name_of(w, axis, from, v, &first), *b = name_of(w, axis, to, v, &second);
-    snprintf(reason->cause, sizeof reason->cause, "It lies between %s and %s, %.2f m apart%s.", a, b,
-             (double)(to - from) / LAYOUT_UNIT,
+    snprintf(reason->cause, sizeof reason->cause, "It lies between %s and %s, %.2f m apart%s.", a,
+             b, (double)(to - from) / LAYOUT_UNIT,
              first && second ? "; both are fixed" : "; the rows beside it need them");
     reason->code = first && second ? "FORCED_PAIR" : "ROW_COUPLING";
-    snprintf(reason->remedy, sizeof reason->remedy,
-             "%s", first && second ? "Move one of the two, put a construction joint between, or reinforce this panel."
-                                   : "Allow a smaller spacing, put a construction joint here, or reinforce this panel.");
+    snprintf(
+        reason->remedy, sizeof reason->remedy, "%s",
+        first && second
+            ? "Move one of the two, put a construction joint between, or reinforce this panel."
+            : "Allow a smaller spacing, put a construction joint here, or reinforce this panel.");
 }
 
 static bool add(struct work *w, size_t panel, const char *rule, double value, double limit,
@@ -115,8 +117,9 @@ static bool add(struct work *w, size_t panel, const char *rule, double value, do
     } else {
         snprintf(reason.cause, sizeof reason.cause,
                  "The slab edge is slanted here: the panel is %.2f x %.2f m.", p->length, p->width);
-        snprintf(reason.remedy, sizeof reason.remedy,
-                 "Place joints closer here, cast the narrow part with its neighbour, or reinforce.");
+        snprintf(
+            reason.remedy, sizeof reason.remedy,
+            "Place joints closer here, cast the narrow part with its neighbour, or reinforce.");
     }
     w->out->violations++;
     return layout_reason_add(&p->reasons, &p->reason_count, reason);

@@ -1,5 +1,5 @@
-/* Convex outlines with slanting sides: straight joints right across the outline. A tapered strip gets
- * joints square to its axis, closer where it is narrow; else the user's own joints. */
+/* Convex outlines with slanting sides: straight joints right across the outline. A tapered strip
+ * gets joints square to its axis, closer where it is narrow; else the user's own joints. */
 #include "core/layout_work.h"
 #include <math.h>
 #include <stdio.h>
@@ -68,7 +68,8 @@ static enum status cut_all(struct layout *out, const struct layout_segment *s)
         struct layout_panel *p = &out->panels[i];
         if (!splits(p, s))
             continue;
-        const struct shape left = clip(p->ring, p->count, s, 1), right = clip(p->ring, p->count, s, -1);
+        const struct shape left = clip(p->ring, p->count, s, 1),
+                           right = clip(p->ring, p->count, s, -1);
         if (!left.at || !right.at) {
             free(left.at);
             free(right.at);
@@ -77,7 +78,8 @@ static enum status cut_all(struct layout *out, const struct layout_segment *s)
         free(p->ring);
         p->ring = left.at;
         p->count = left.count;
-        out->panels[out->panel_count++] = (struct layout_panel){.ring = right.at, .count = right.count};
+        out->panels[out->panel_count++] =
+            (struct layout_panel){.ring = right.at, .count = right.count};
     }
     return STATUS_OK;
 }
@@ -89,7 +91,8 @@ static bool add_line(struct layout *out, size_t *room, const struct layout_segme
     struct layout_point end[2];
     size_t n = 0;
     for (size_t i = 0; i < out->outline_count; i++) {
-        const struct layout_point a = out->outline[i], b = out->outline[(i + 1) % out->outline_count];
+        const struct layout_point a = out->outline[i],
+                                  b = out->outline[(i + 1) % out->outline_count];
         const double da = side_of(s, a), db = side_of(s, b);
         if (da == 0 && n < 2)
             end[n++] = a;
@@ -118,7 +121,8 @@ static double width_at(const struct layout *out, const struct chain *c, double s
 {
     double least = INFINITY, most = -INFINITY;
     for (size_t i = 0; i < out->outline_count; i++) {
-        const struct layout_point a = out->outline[i], b = out->outline[(i + 1) % out->outline_count];
+        const struct layout_point a = out->outline[i],
+                                  b = out->outline[(i + 1) % out->outline_count];
         const double sa = (a.x - c->origin.x) * c->ux + (a.y - c->origin.y) * c->uy - s;
         const double sb = (b.x - c->origin.x) * c->ux + (b.y - c->origin.y) * c->uy - s;
         const double ta = (a.y - c->origin.y) * c->ux - (a.x - c->origin.x) * c->uy;
@@ -211,7 +215,8 @@ static struct chain find_chain(const struct layout *out)
     struct chain c = {0};
     double longest_side = 0;
     for (size_t i = 0; i < out->outline_count; i++) {
-        const struct layout_point a = out->outline[i], b = out->outline[(i + 1) % out->outline_count];
+        const struct layout_point a = out->outline[i],
+                                  b = out->outline[(i + 1) % out->outline_count];
         const double length = hypot(b.x - a.x, b.y - a.y);
         if (length <= longest_side + 1e-9)
             continue;
@@ -219,7 +224,8 @@ static struct chain find_chain(const struct layout *out)
         c = (struct chain){a, (b.x - a.x) / length, (b.y - a.y) / length, 0, 0};
     }
     for (size_t i = 0; i < out->outline_count; i++) {
-        const double s = (out->outline[i].x - c.origin.x) * c.ux + (out->outline[i].y - c.origin.y) * c.uy;
+        const double s =
+            (out->outline[i].x - c.origin.x) * c.ux + (out->outline[i].y - c.origin.y) * c.uy;
         c.from = fmin(c.from, s);
         c.to = fmax(c.to, s);
     }
@@ -326,12 +332,14 @@ enum status layout_convex(struct work *w)
         return STATUS_NO_MEMORY;
     }
     for (size_t i = 0; i < out->outline_count; i++) {
-        const struct layout_point a = out->outline[i], b = out->outline[(i + 1) % out->outline_count];
+        const struct layout_point a = out->outline[i],
+                                  b = out->outline[(i + 1) % out->outline_count];
         area += a.x * b.y - b.x * a.y;
     }
     for (size_t i = 0; i < out->outline_count; i++)
         ring[i] = out->outline[area < 0 ? out->outline_count - 1 - i : i];
-    out->panels[out->panel_count++] = (struct layout_panel){.ring = ring, .count = out->outline_count};
+    out->panels[out->panel_count++] =
+        (struct layout_panel){.ring = ring, .count = out->outline_count};
     enum status status = drawn_lines(w, &room, &drawn);
     if (!status && !drawn) {
         const struct chain c = find_chain(out);

@@ -154,8 +154,8 @@ static bool emit_lines(struct emit *e)
     return true;
 }
 
-static bool emit_side(struct emit *e, const struct work_ring *r, size_t i, struct layout_joint joint,
-                      const char *stem)
+static bool emit_side(struct emit *e, const struct work_ring *r, size_t i,
+                      struct layout_joint joint, const char *stem)
 {
     const size_t k = (i + 1) % r->count, from = e->w->out->joint_count;
     const int axis = r->x[i] == r->x[k] ? 0 : 1;
@@ -184,7 +184,8 @@ static bool emit_edges(struct emit *e)
     for (size_t i = 0; i < in->edge_count; i++) {
         const struct layout_edge *edge = &in->edges[i];
         if (edge->side >= e->w->rings[0].count ||
-            !(edge->kind == LAYOUT_EDGE_FIXED || (edge->kind == LAYOUT_EDGE_EXISTING && edge->isolate)))
+            !(edge->kind == LAYOUT_EDGE_FIXED ||
+              (edge->kind == LAYOUT_EDGE_EXISTING && edge->isolate)))
             continue;
         const struct layout_joint joint = {
             .kind = LAYOUT_ISOLATION, .object = -1, .edge = (int)edge->side, .opening = -1};
@@ -228,8 +229,10 @@ static bool cut_corner(struct emit *e, size_t panel, int k, const struct work_bo
 {
     static const int from_x[4] = {0, -1, 0, 1}, from_y[4] = {1, 0, -1, 0};
     static const int to_x[4] = {1, 0, -1, 0}, to_y[4] = {0, 1, 0, -1};
-    const struct layout_point a = work_point(e->w, b->x + from_x[k] * b->half, b->y + from_y[k] * b->half);
-    const struct layout_point c = work_point(e->w, b->x + to_x[k] * b->half, b->y + to_y[k] * b->half);
+    const struct layout_point a =
+        work_point(e->w, b->x + from_x[k] * b->half, b->y + from_y[k] * b->half);
+    const struct layout_point c =
+        work_point(e->w, b->x + to_x[k] * b->half, b->y + to_y[k] * b->half);
     out->ring[out->count++] = a;
     out->ring[out->count++] = c;
     struct layout_joint joint = {.kind = LAYOUT_ISOLATION,
@@ -286,9 +289,8 @@ static bool drop_clashes(struct work *w)
         if (!clash)
             continue;
         b->dropped = true;
-        struct layout_reason reason = {.code = "BOX_CLASH",
-                                       .rule = "object.isolated",
-                                       .value = (double)b->half / LAYOUT_UNIT};
+        struct layout_reason reason = {
+            .code = "BOX_CLASH", .rule = "object.isolated", .value = (double)b->half / LAYOUT_UNIT};
         snprintf(reason.cause, sizeof reason.cause,
                  "The box round %.32s has no room: another box, joint or edge is too near.",
                  w->input->objects[b->object].id);
@@ -351,7 +353,8 @@ static bool sort_panels(struct work *w)
         list[i].panel = *r;
         list[i].low = (struct layout_point){INFINITY, INFINITY};
         for (int k = 0; k < 4; k++) {
-            const struct layout_point p = work_point(w, k & 1 ? r->x1 : r->x0, k & 2 ? r->y1 : r->y0);
+            const struct layout_point p =
+                work_point(w, k & 1 ? r->x1 : r->x0, k & 2 ? r->y1 : r->y0);
             if (p.y < list[i].low.y - 1e-7 || (p.y < list[i].low.y + 1e-7 && p.x < list[i].low.x))
                 list[i].low = p;
         }

@@ -1,11 +1,12 @@
-/* What forces joints: objects and their boxes, pour lines, neighbours, expansion, the user's own. */
+/* What forces joints: objects and their boxes, pour lines, neighbours, expansion, the user's own.
+ */
 #include "core/layout_place.h"
 #include <math.h>
 #include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
 
-#define UNITS(m) llround((m) * LAYOUT_UNIT)
+#define UNITS(m) llround((m)*LAYOUT_UNIT)
 static const double clearance_m = 0.1; /* own choice: box corner beyond the object's corner */
 static const double snap_m = 0.3;      /* design, "Snapping": a box may be moved so far */
 
@@ -31,7 +32,8 @@ static double half_of(const struct work *w, const struct layout_object *o)
     if (o->round)
         return o->w / sqrt(2) + clearance_m * sqrt(2);
     const double a = o->angle_deg * 3.14159265358979323846 / 180;
-    const double c = cos(a) * w->cosine + sin(a) * w->sine, s = sin(a) * w->cosine - cos(a) * w->sine;
+    const double c = cos(a) * w->cosine + sin(a) * w->sine,
+                 s = sin(a) * w->cosine - cos(a) * w->sine;
     double half = 0;
     for (int k = -1; k <= 1; k += 2) {
         const double x = o->w / 2 * c - k * o->d / 2 * s, y = o->w / 2 * s + k * o->d / 2 * c;
@@ -50,7 +52,8 @@ bool place_is_rectangle(const struct work *w, const struct layout_object *o)
 }
 
 /* The nearest slab edge parallel to an axis that the box would cross. */
-static bool near_edge(const struct work *w, int axis, int64_t x, int64_t y, int64_t half, int64_t *u)
+static bool near_edge(const struct work *w, int axis, int64_t x, int64_t y, int64_t half,
+                      int64_t *u)
 {
     int64_t best = half;
     bool found = false;
@@ -166,8 +169,8 @@ static bool force_box(struct work *w, struct work_box *b)
         const int64_t at = axis ? b->y : b->x, v = axis ? b->x : b->y;
         rect_force(&w->slab, axis, at, v);
         struct work_line line = {.axis = axis, .u = at, .v0 = INT64_MIN, .v1 = INT64_MAX};
-        snprintf(line.name, sizeof line.name, "the line of %.8s %.32s", o->kind ? o->kind : "object",
-                 o->id);
+        snprintf(line.name, sizeof line.name, "the line of %.8s %.32s",
+                 o->kind ? o->kind : "object", o->id);
         if (!work_line_add(w, line))
             return false;
     }
@@ -299,8 +302,10 @@ bool place_lines(struct work *w)
                                  .name = "a joint you drew"};
         if (!in->drawn[i].keep)
             continue;
-        if (to_line(w, &in->drawn[i].at, &line) ? !add_forced(w, line)
-                                                : !unplaced(w, "joint.end", "A joint you drew runs aslant to the slab and was left out."))
+        if (to_line(w, &in->drawn[i].at, &line)
+                ? !add_forced(w, line)
+                : !unplaced(w, "joint.end",
+                            "A joint you drew runs aslant to the slab and was left out."))
             return false;
     }
     return true;

@@ -37,9 +37,9 @@ static size_t arc_points(const struct layout_corner *a, const struct layout_corn
         turn -= 2 * pi;
     const size_t n = (size_t)ceil(fabs(turn) / (7.5 * pi / 180) - 1e-9);
     for (size_t i = 1; i < n && points; i++)
-        points[i - 1] = (struct layout_point){
-            b->cx + radius * cos(from + turn * (double)i / (double)n),
-            b->cy + radius * sin(from + turn * (double)i / (double)n)};
+        points[i - 1] =
+            (struct layout_point){b->cx + radius * cos(from + turn * (double)i / (double)n),
+                                  b->cy + radius * sin(from + turn * (double)i / (double)n)};
     return n ? n - 1 : 0;
 }
 
@@ -75,7 +75,8 @@ static bool copy_edge(struct layout *out, const struct layout_edge *edge, const 
     double before = 0;
     for (size_t i = first[edge->side]; i < end; i++) {
         struct layout_edge_out *e = &out->edges[out->edge_count++];
-        const struct layout_point a = out->outline[i], b = out->outline[(i + 1) % out->outline_count];
+        const struct layout_point a = out->outline[i],
+                                  b = out->outline[(i + 1) % out->outline_count];
         const double length = hypot(b.x - a.x, b.y - a.y);
         *e = (struct layout_edge_out){
             .index = i, .edge = edge->side + 1, .kind = edge->kind, .isolate = edge->isolate};

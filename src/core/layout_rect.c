@@ -156,8 +156,8 @@ static enum status find_corners(struct rect_slab *slab)
         const int64_t y = i % 2 ? g->v1 : g->v0;
         if (i % 2 ? a->v1 == b->v1 : a->v0 == b->v0)
             continue;
-        slab->corners[slab->corner_count++] =
-            (struct rect_corner){.x = g->u, .y = y, .gate = {i / 2, gate_at(&slab->family[1], y, g->u)}};
+        slab->corners[slab->corner_count++] = (struct rect_corner){
+            .x = g->u, .y = y, .gate = {i / 2, gate_at(&slab->family[1], y, g->u)}};
     }
     return STATUS_OK;
 }
@@ -229,8 +229,8 @@ enum status rect_chords(const struct rect_slab *slab, struct rect_chord **chords
                     (struct rect_chord){axis, f->gates[i].u, f->gates[i].v0, f->gates[i].v1};
         for (size_t i = 0; i < f->arc_count; i++)
             for (size_t k = 0; k < f->arcs[i].cut_count; k++)
-                list[n++] = (struct rect_chord){axis, f->arcs[i].cut[k], f->arcs[i].v0,
-                                                f->arcs[i].v1};
+                list[n++] =
+                    (struct rect_chord){axis, f->arcs[i].cut[k], f->arcs[i].v0, f->arcs[i].v1};
     }
     qsort(list, n, sizeof *list, compare_chord);
     *chords = list;
@@ -289,7 +289,8 @@ static void raster_mark(struct raster *r, const struct rect_slab *slab,
     const size_t ny = r->n[1];
     for (size_t i = 0; i < slab->family[0].arc_count; i++) {
         const struct rect_arc *a = &slab->family[0].arcs[i];
-        const size_t x0 = index_of(r->at[0], r->n[0], a->u0), x1 = index_of(r->at[0], r->n[0], a->u1);
+        const size_t x0 = index_of(r->at[0], r->n[0], a->u0),
+                     x1 = index_of(r->at[0], r->n[0], a->u1);
         const size_t y0 = index_of(r->at[1], ny, a->v0), y1 = index_of(r->at[1], ny, a->v1);
         for (size_t x = x0; x < x1; x++)
             memset(r->inside + x * ny + y0, 1, y1 - y0);

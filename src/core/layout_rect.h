@@ -1,7 +1,8 @@
 /* The rectilinear engine: networks of maximal chords in integers of 1/80 mm.
- * A chord runs from slab edge to slab edge. The cross-sections of the slab that go on unchanged form
- * an arc; where two different ones overlap there is a gate. Every re-entrant corner needs one of its
- * two gates; inside an arc the chords are placed by an exact dynamic program, the other family fixed. */
+ * A chord runs from slab edge to slab edge. The cross-sections of the slab that go on unchanged
+ * form an arc; where two different ones overlap there is a gate. Every re-entrant corner needs one
+ * of its two gates; inside an arc the chords are placed by an exact dynamic program, the other
+ * family fixed. */
 #ifndef SLABGAP_CORE_LAYOUT_RECT_H
 #define SLABGAP_CORE_LAYOUT_RECT_H
 
@@ -46,6 +47,7 @@ struct rect_slab {
     size_t corner_count;
     struct rect_rules rules;
     uint64_t evaluations, allowed;
+    bool fine; /* places at every 0.1 m too */
 };
 struct rect_chord {
     int axis; /* 0: parallel to y at u = x */

@@ -4,7 +4,8 @@
 #include <stdlib.h>
 #include <string.h>
 
-/* Own weights, in metres of joint (design, "Invented weights"); a broken rule outweighs any length. */
+/* Own weights, in metres of joint (design, "Invented weights"); a broken rule outweighs any length.
+ */
 #define BROKEN 1e5
 #define SLACK 80.0 /* 1 mm: free lines stand on whole mm */
 
@@ -41,8 +42,8 @@ static int compare_int64(const void *a, const void *b)
     return (p > q) - (p < q);
 }
 
-/* The nearest cut from the end `u` of an arc outward along v: a wall, a gate that is on, or the last
- * chord of the next arc; else on through it. */
+/* The nearest cut from the end `u` of an arc outward along v: a wall, a gate that is on, or the
+ * last chord of the next arc; else on through it. */
 static int64_t walk(const struct rect_family *f, size_t arc, int64_t v, bool right)
 {
     for (;;) {
@@ -96,7 +97,8 @@ static size_t all_cuts(const struct rect_family *f)
     return n;
 }
 
-/* Rows of the arc; blind: the other family is not placed yet, panels 0.83 of its limit are assumed. */
+/* Rows of the arc; blind: the other family is not placed yet, panels 0.83 of its limit are assumed.
+ */
 static enum status find_rows(const struct rect_slab *slab, int axis, size_t arc, bool blind,
                              struct program *p)
 {
@@ -173,7 +175,8 @@ static bool find_places(const struct rect_slab *slab, int axis, const struct rec
         for (size_t k = 0; k < p->row_count; k++) {
             const int64_t before = i ? from : p->rows[k].before;
             const int64_t after = i < last ? to : p->rows[k].after;
-            const bool new_one = !k || before != p->rows[k - 1].before || after != p->rows[k - 1].after;
+            const bool new_one =
+                !k || before != p->rows[k - 1].before || after != p->rows[k - 1].after;
             if (new_one && (before != from || after != to) &&
                 (!divide(list, slab, a, axis, before, after) ||
                  !divide(list, slab, a, axis, from, after) ||
@@ -183,7 +186,7 @@ static bool find_places(const struct rect_slab *slab, int axis, const struct rec
         if (i < last && !place(list, to))
             return false;
     }
-    if ((double)(a->u1 - a->u0) < 3 * slab->rules.side[axis])
+    if (slab->fine && (double)(a->u1 - a->u0) < 3 * slab->rules.side[axis])
         for (int64_t u = a->u0 / 8000 * 8000; u < a->u1; u += 8000)
             if (u > a->u0 && !place(list, u))
                 return false;
@@ -306,6 +309,12 @@ static void set_gates(struct rect_slab *slab)
             slab->family[axis].gates[i].on = slab->family[axis].gates[i].forced;
     for (size_t i = 0; i < slab->corner_count; i++) {
         const struct rect_corner *c = &slab->corners[i];
+        if (c->choice == 2) { /* both */
+            for (int k = 0; k < 2; k++)
+                if (c->gate[k] != SIZE_MAX)
+                    slab->family[k].gates[c->gate[k]].on = true;
+            continue;
+        }
         const int axis = c->gate[c->choice] == SIZE_MAX ? 1 - c->choice : c->choice;
         const size_t other = c->gate[1 - axis];
         if (other != SIZE_MAX && slab->family[1 - axis].gates[other].forced)
@@ -423,36 +432,44 @@ static enum status flips(struct rect_slab *slab, struct kept *best, double *leas
         for (size_t i = 0; !status && i < slab->corner_count; i++) {
             if (slab->evaluations > slab->allowed)
                 return STATUS_OK;
-            const double before = *least;
-            slab->corners[i].choice ^= 1;
-            for (int first = 0; !status && first < 2; first++)
-                status = descend(slab, first, best, least);
-            if (*least < before - 1e-7)
-                gained = true;
-            else
-                slab->corners[i].choice ^= 1;
+            const int old = slab->corners[i].choice;
+            for (int step = 1; !status && step < 3; step++) {
+                const double before = *least;
+                const int was = slab->corners[i].choice;
+                slab->corners[i].choice = (old + step) % 3;
+                for (int first = 0; !status && first < 2; first++)
+                    status = descend(slab, first, best, least);
+                if (*least < before - 1e-7)
+                    gained = true;
+                else
+                    slab->corners[i].choice = was;
+            }
         }
     }
     return status;
 }
 
-/* Starts: every corner by x, by y, and the two pinwheels (by turns). */
+static void set_start(struct rect_slab *slab, int start)
+{
+    for (size_t i = 0; i < slab->corner_count; i++)
+        slab->corners[i].choice = start < 3 ? start : (int)((i + (i / 2) + (size_t)start) % 2);
+}
+
+/* Starts: every corner by x, by y, by both, and the two pinwheels (by turns). */
 static enum status starts(struct rect_slab *slab, struct kept *best, double *least)
 {
     enum status status = STATUS_OK;
     int pick = 0;
-    const int count = slab->corner_count ? 4 : 1;
+    const int count = slab->corner_count ? 5 : 1;
     for (int start = 0; !status && start < count; start++) {
         const double before = *least;
-        for (size_t i = 0; i < slab->corner_count; i++)
-            slab->corners[i].choice = start < 2 ? start : (int)((i + (i / 2) + (size_t)start) % 2);
+        set_start(slab, start);
         for (int first = 0; !status && first < 2; first++)
             status = descend(slab, first, best, least);
         if (*least < before - 1e-7)
             pick = start;
     }
-    for (size_t i = 0; i < slab->corner_count; i++)
-        slab->corners[i].choice = pick < 2 ? pick : (int)((i + (i / 2) + (size_t)pick) % 2);
+    set_start(slab, pick);
     return status;
 }
 
@@ -465,6 +482,13 @@ enum status rect_solve(struct rect_slab *slab)
         status = starts(slab, &best, &least);
     if (!status)
         status = flips(slab, &best, &least);
+    if (!status && least > BROKEN) { /* a rule gives: look closer, at every 0.1 m */
+        slab->fine = true;
+        slab->allowed = slab->evaluations + 2 * slab->allowed;
+        status = starts(slab, &best, &least);
+        if (!status)
+            status = flips(slab, &best, &least);
+    }
     if (!status && isfinite(least))
         give_back(&best, slab);
     kept_free(&best, slab);

@@ -12,8 +12,8 @@ struct work_box {
     int object;
     int64_t x, y, half; /* diamond about (x, y) */
     int64_t moved_x, moved_y;
-    int sides;    /* quadrants of it that lie in the slab */
-    bool dropped; /* cannot be made: see the reasons */
+    int sides;       /* quadrants of it that lie in the slab */
+    bool dropped;    /* cannot be made: see the reasons */
     bool on_x, on_y; /* on a slab edge parallel to y, to x */
 };
 struct work_line { /* a line with a name: what forces it, and what kind the joint on it is */
