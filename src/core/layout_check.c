@@ -125,23 +125,72 @@ static bool add(struct work *w, size_t panel, const char *rule, double value, do
     return layout_reason_add(&p->reasons, &p->reason_count, reason);
 }
 
+static double angle_at(const struct layout_panel *p, size_t i)
+{
+    const struct layout_point a = p->ring[(i + p->count - 1) % p->count], b = p->ring[i];
+    const struct layout_point c = p->ring[(i + 1) % p->count];
+    const double turn = atan2((b.x - a.x) * (c.y - b.y) - (b.y - a.y) * (c.x - b.x),
+                              (b.x - a.x) * (c.x - b.x) + (b.y - a.y) * (c.y - b.y));
+    return 180 - turn * 180 / 3.14159265358979323846;
+}
+
+static bool is_given(const struct layout *out, struct layout_point p)
+{
+    for (size_t i = 0; i < out->outline_count; i++)
+        if (hypot(out->outline[i].x - p.x, out->outline[i].y - p.y) < 1e-3)
+            return true;
+    for (size_t k = 0; k < out->opening_count; k++)
+        for (size_t i = 0; i < out->openings[k].count; i++)
+            if (hypot(out->openings[k].points[i].x - p.x, out->openings[k].points[i].y - p.y) <
+                1e-3)
+                return true;
+    return false;
+}
+
+static double off_line(const struct layout_joint *j, struct layout_point p)
+{
+    const double dx = j->x2 - j->x1, dy = j->y2 - j->y1, length = hypot(dx, dy);
+    const double s = ((p.x - j->x1) * dx + (p.y - j->y1) * dy) / length;
+    const double t = ((p.y - j->y1) * dx - (p.x - j->x1) * dy) / length;
+    return s < -1e-3 || s > length + 1e-3 ? INFINITY : fabs(t);
+}
+
+static bool on_isolation(const struct layout *out, struct layout_point a, struct layout_point b)
+{
+    for (size_t i = 0; i < out->joint_count; i++)
+        if (out->joints[i].kind == LAYOUT_ISOLATION && off_line(&out->joints[i], a) < 1e-3 &&
+            off_line(&out->joints[i], b) < 1e-3)
+            return true;
+    return false;
+}
+
 /* Joints and edges that meet too sharply; an angle of the outline's own is no breach. */
 static double sharpest(const struct work *w, const struct layout_panel *p)
 {
     double least = 180;
-    for (size_t i = 0; i < p->count; i++) {
-        const struct layout_point a = p->ring[(i + p->count - 1) % p->count], b = p->ring[i];
-        const struct layout_point c = p->ring[(i + 1) % p->count];
-        bool given = false;
-        for (size_t k = 0; k < w->out->outline_count; k++)
-            given |= hypot(w->out->outline[k].x - b.x, w->out->outline[k].y - b.y) < 1e-3;
-        const double turn = atan2((b.x - a.x) * (c.y - b.y) - (b.y - a.y) * (c.x - b.x),
-                                  (b.x - a.x) * (c.x - b.x) + (b.y - a.y) * (c.y - b.y));
-        const double angle = 180 - turn * 180 / 3.14159265358979323846;
-        if (!given && angle < least)
-            least = angle;
-    }
+    for (size_t i = 0; i < p->count; i++)
+        if (!is_given(w->out, p->ring[i]))
+            least = fmin(least, angle_at(p, i));
     return least;
+}
+
+/* A side shorter than the least one (a tapered end, a rest beside a box) counts, unless it lies on
+ * an isolation joint, is the outline's own, or stands between two blunt corners. */
+static bool check_ends(struct work *w, size_t panel, double least)
+{
+    struct layout_panel *p = &w->out->panels[panel];
+    for (size_t i = 0; i < p->count; i++) {
+        const size_t k = (i + 1) % p->count;
+        const struct layout_point a = p->ring[i], b = p->ring[k];
+        const double length = hypot(b.x - a.x, b.y - a.y);
+        if (length >= least * (1 - 2e-3) || (angle_at(p, i) >= 134.5 && angle_at(p, k) >= 134.5))
+            continue;
+        if (on_isolation(w->out, a, b) || (is_given(w->out, a) && is_given(w->out, b)))
+            continue;
+        if (!add(w, panel, "panel.side-least", length, least, false))
+            return false;
+    }
+    return true;
 }
 
 /* The slack of 0.2 % and half a degree covers rounding to whole millimetres only. */
@@ -166,6 +215,8 @@ static bool check_one(struct work *w, size_t i)
         fine = add(w, i, "panel.aspect", p->aspect, in->max_aspect, false);
     if (fine && least < in->min_side * (2 - slack))
         fine = add(w, i, "panel.side-least", least, in->min_side, false);
+    else if (fine)
+        fine = check_ends(w, i, in->min_side);
     const double angle = sharpest(w, p);
     if (fine && angle < in->min_angle_deg - 0.5)
         fine = add(w, i, "panel.angle", angle, in->min_angle_deg, false);
