@@ -264,6 +264,36 @@ static bool crosses_itself(const struct layout *out)
     return false;
 }
 
+/* More panels than a plan can hold, or points out of reach of the exact integers: said, not tried.
+ */
+static bool is_too_large(const struct work *w)
+{
+    double x0 = INFINITY, x1 = -INFINITY, y0 = INFINITY, y1 = -INFINITY;
+    for (size_t i = 0; i < w->out->outline_count; i++) {
+        const struct layout_point p = w->out->outline[i];
+        x0 = fmin(x0, p.x);
+        x1 = fmax(x1, p.x);
+        y0 = fmin(y0, p.y);
+        y1 = fmax(y1, p.y);
+    }
+    const double columns = (x1 - x0) / w->input->max_side_x,
+                 rows = (y1 - y0) / w->input->max_side_y;
+    const double reach = fmax(fmax(fabs(x0), fabs(x1)), fmax(fabs(y0), fabs(y1)));
+    return !(reach < 1e5) || !(columns * rows < 2e5) || !(columns < 2e4) || !(rows < 2e4);
+}
+
+static enum status solve_too_large(struct work *w)
+{
+    struct layout_reason reason = {.code = "EFFORT_LIMIT", .rule = "panel.side"};
+    snprintf(reason.cause, sizeof reason.cause,
+             "The slab needs more than 200 000 panels, or lies more than 100 km from the origin.");
+    snprintf(reason.remedy, sizeof reason.remedy,
+             "Check the units of the outline and the spacing, or split the slab into jobs.");
+    w->out->violations++;
+    return layout_reason_add(&w->out->reasons, &w->out->reason_count, reason) ? STATUS_OK
+                                                                              : STATUS_NO_MEMORY;
+}
+
 static void work_free(struct work *w)
 {
     for (size_t i = 0; w->rings && i < w->ring_count; i++) {
@@ -287,11 +317,14 @@ enum status layout_solve(const struct layout_input *input, struct layout *layout
     enum status status = layout_copy_rings(&w);
     if (!status && crosses_itself(&out))
         status = STATUS_REFUSED;
-    if (!status) {
+    const bool too_large = !status && is_too_large(&w);
+    if (too_large)
+        status = solve_too_large(&w);
+    if (!status && !too_large) {
         find_frame(&w);
         status = make_rings(&w) ? STATUS_OK : STATUS_NO_MEMORY;
     }
-    if (!status)
+    if (!status && !too_large)
         status = is_rectilinear(&w) ? solve_rectilinear(&w) : solve_other(&w);
     if (!status)
         status = layout_check_panels(&w);

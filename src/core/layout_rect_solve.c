@@ -275,7 +275,7 @@ static enum status solve_arc(struct rect_slab *slab, int axis, size_t arc, bool 
     return status;
 }
 
-static enum status total(const struct rect_slab *slab, double *cost)
+static enum status total(struct rect_slab *slab, double *cost)
 {
     struct rect_panel *panels = NULL;
     struct rect_chord *chords = NULL;
@@ -288,6 +288,7 @@ static enum status total(const struct rect_slab *slab, double *cost)
         return status;
     }
     double sum = 0;
+    slab->evaluations += n + m;
     for (size_t i = 0; i < m; i++)
         sum += (double)(chords[i].v1 - chords[i].v0) / LAYOUT_UNIT;
     for (size_t i = 0; i < n; i++) {

@@ -284,14 +284,32 @@ static void impossible_slabs_are_refused(void **state)
     assert_int_equal(l.violations, 7);
 }
 
+static void huge_slabs_are_said_not_tried(void **state)
+{
+    (void)state;
+    const double plain[] = {0, 0, 1e9, 0, 1e9, 1e9, 0, 1e9};
+    struct slab s;
+    slab_make(&s, 4, plain, 4);
+    struct layout l = solved(&s);
+    assert_int_equal(l.panel_count, 0);
+    assert_int_equal(l.violations, 1);
+    assert_string_equal(l.reasons[0].code, "EFFORT_LIMIT");
+    layout_free(&l);
+}
+
 int main(void)
 {
     const struct CMUnitTest tests[] = {
-        cmocka_unit_test(yard_in_four_metre_panels),    cmocka_unit_test(yard_left_to_the_program),
-        cmocka_unit_test(floor_with_two_columns),       cmocka_unit_test(road_of_two_lanes),
-        cmocka_unit_test(footway_with_expansion),       cmocka_unit_test(taper),
-        cmocka_unit_test(turning_turns_the_layout),     cmocka_unit_test(random_slabs_are_tiled),
+        cmocka_unit_test(yard_in_four_metre_panels),
+        cmocka_unit_test(yard_left_to_the_program),
+        cmocka_unit_test(floor_with_two_columns),
+        cmocka_unit_test(road_of_two_lanes),
+        cmocka_unit_test(footway_with_expansion),
+        cmocka_unit_test(taper),
+        cmocka_unit_test(turning_turns_the_layout),
+        cmocka_unit_test(random_slabs_are_tiled),
         cmocka_unit_test(impossible_slabs_are_refused),
+        cmocka_unit_test(huge_slabs_are_said_not_tried),
     };
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
