@@ -215,6 +215,8 @@ static enum status solve_rectilinear(struct work *w)
 {
     set_rules(w);
     enum status status = build(w);
+    if (!status && !w->slab.family[0].arc_count)
+        status = STATUS_REFUSED; /* no area at all */
     if (status)
         return status;
     if (!place_boxes(w) || !place_lines(w) || !place_expansion(w) || !place_matches(w) ||
