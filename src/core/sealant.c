@@ -83,12 +83,12 @@ static double move(const struct sealant_joint *joint, double strain)
 /* The reservoir is cut to W at Tc; at slab temperature T its gap is W + move(a (Tc - T)); shrinkage
  * between cut and sealing is neglected. Sealed at T: extension = move(a (T - Tmin) + eps)/gap,
  * compression = move(a (Tmax - T))/gap: strains of the width at sealing (ASTM C920, C1472). */
-struct sealant_row sealant_row_at(const struct sealant_joint *joint, double slab_c)
+struct sealant_moment sealant_row_at(const struct sealant_joint *joint, double slab_c)
 {
     double colder = joint->cut_c - slab_c;
     double opened = colder >= 0 ? move(joint, joint->expansion * colder)
                                 : -move(joint, joint->expansion * -colder);
-    struct sealant_row row = {.slab_c = slab_c, .gap_m = joint->width_m + opened};
+    struct sealant_moment row = {.slab_c = slab_c, .gap_m = joint->width_m + opened};
     double open = move(joint, joint->expansion * (slab_c - joint->coldest_c) + joint->shrinkage);
     double close = move(joint, joint->expansion * (joint->hottest_c - slab_c));
     row.open_gap = row.gap_m > LEAST;
@@ -100,13 +100,13 @@ struct sealant_row sealant_row_at(const struct sealant_joint *joint, double slab
 
 static bool extension_holds(const struct sealant_joint *joint, double slab_c)
 {
-    struct sealant_row row = sealant_row_at(joint, slab_c);
+    struct sealant_moment row = sealant_row_at(joint, slab_c);
     return row.extension <= joint->capacity.extension * (1 + 1e-9);
 }
 
 static bool compression_holds(const struct sealant_joint *joint, double slab_c)
 {
-    struct sealant_row row = sealant_row_at(joint, slab_c);
+    struct sealant_moment row = sealant_row_at(joint, slab_c);
     return row.compression <= joint->capacity.compression * (1 + 1e-9);
 }
 

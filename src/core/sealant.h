@@ -48,11 +48,11 @@ struct sealant_joint {
     const void *context;
     struct sealant_capacity capacity;
 };
-struct sealant_row {
+struct sealant_moment {
     double slab_c, gap_m, extension, compression;
     bool open_gap; /* false: the joint is shut, both strains are 10 */
 };
-struct sealant_row sealant_row_at(const struct sealant_joint *joint, double slab_c);
+struct sealant_moment sealant_row_at(const struct sealant_joint *joint, double slab_c);
 /* Slab temperatures between coldest and hottest at which the joint may be sealed (both strains
  * within capacity, within 1e-6 K). False: none. */
 bool sealant_window(const struct sealant_joint *joint, double *coldest_c, double *hottest_c);

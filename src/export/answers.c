@@ -51,13 +51,11 @@ static void limit_sentence(const struct plan *plan, char *out, size_t size)
 {
     const char *rule = plan->spacing.governed_by;
 
-    if (rule != NULL && strcmp(rule, "typed") == 0 && plan->spacing.rule_words != NULL)
+    if (rule != NULL && strcmp(rule, "typed") == 0)
         snprintf(out, size, "Your limit; %s would be %s.", plan->spacing.rule_words,
                  LENGTH(plan->spacing.rule_limit_m));
-    else if (plan->spacing.rule_words != NULL)
-        snprintf(out, size, "Limit set by %s.", plan->spacing.rule_words);
     else
-        snprintf(out, size, "Your limit.");
+        snprintf(out, size, "Limit set by %s.", plan->spacing.rule_words);
 }
 
 static double joint_total(const struct plan *plan)
@@ -105,7 +103,7 @@ static void answer_joints(const struct plan *plan, char *sentence, size_t size, 
                           size_t more_size)
 {
     double along, across;
-    char limit[160], names[64];
+    char limit[208], names[64];
     size_t broken = broken_panels(plan, names, sizeof names);
 
     limit_sentence(plan, limit, sizeof limit);

@@ -9,7 +9,7 @@ enum { ANSWER_MOST = 6 };
 struct answers {
     struct {
         char word[16];
-        char sentence[320];
+        char sentence[400];
         char more[320];
     } rows[ANSWER_MOST]; /* more: second line at 120 columns */
     size_t count;

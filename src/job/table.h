@@ -63,6 +63,8 @@ extern const struct size_row rod_table[];
 extern const size_t rod_count;
 extern const struct size_row filler_table[];
 extern const size_t filler_count;
+extern const struct size_row seal_table[];
+extern const size_t seal_count;
 extern const struct dowel_row dowel_table[];
 extern const size_t dowel_count;
 extern const struct practice_row practice_table[];

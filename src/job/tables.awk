@@ -12,6 +12,7 @@ BEGIN {
     shape["blades"] = "snss"; type["blades"] = "size_row blade"
     shape["rods"] = "snss"; type["rods"] = "size_row rod"
     shape["fillers"] = "snss"; type["fillers"] = "size_row filler"
+    shape["seals"] = "snss"; type["seals"] = "size_row seal"
     shape["dowels"] = "snnnnns"; type["dowels"] = "dowel_row dowel"
     shape["practices"] = "ssnnnss"; type["practices"] = "practice_row practice"
     print "/* Made from share/tables by src/job/tables.awk: change the tables, not this file. */"

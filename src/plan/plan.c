@@ -104,6 +104,8 @@ static enum status run_chain(struct plan *plan, const struct plan_progress *prog
 
     plan_set_concrete(plan);
     plan_set_temperature(plan);
+    if (finding_has_error(&plan->findings))
+        return STATUS_REFUSED;
     plan_set_shrinkage(plan);
     plan_set_spacing(plan);
     if (plan->has_outline)

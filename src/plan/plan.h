@@ -28,7 +28,7 @@ struct plan_table_row {
     bool too_cold;
 };
 struct plan_isolation {
-    char where[64]; /* "edge 1", "C1", "opening pit", "expansion joint J3" */
+    char where[NAME_MOST + 32]; /* "edge 1", "C1", "opening pit", "expansion joint J3" */
     double run_m, from_c, expansion_m, filler_m, least_filler_m, extension, compression, opening_m;
     enum verdict verdict;
 };
@@ -44,8 +44,9 @@ struct plan_check {
 };
 struct plan_joint { /* one per layout joint, same order */
     bool tied;
-    double length_m, open_m, close_m, width_m, extension, compression,
-        run_m; /* NAN where it has none */
+    double length_m, open_m, close_m, width_m, extension, compression; /* NAN: none */
+    double left_m, right_m; /* bars on either side, 0 = none; run_m: their mean */
+    double run_m;
     enum verdict verdict;
 };
 struct plan_package {
@@ -72,7 +73,7 @@ struct plan {
         const char *governed_by;
         double
             rule_limit_m; /* what the rules alone would give (for "24 x thickness would be 4.8") */
-        const char *rule_words;
+        char rule_words[96];
         struct plan_limit rows[LIMIT_MOST];
         size_t count;
     } spacing;
@@ -82,7 +83,7 @@ struct plan {
     } concrete;
     struct {
         double coldest_c, hottest_c, sealing_c, zero_stress_c /* for isolation, runs */,
-            crack_zero_c /* for crack opening */;
+            crack_zero_c /* for crack opening */, cut_c /* when the wide cut was made */;
         double deck_coldest_c, deck_hottest_c; /* EN 1991-1-5, comparison only */
         const char *basis;                     /* typed | estimate */
     } temperature;
@@ -92,7 +93,8 @@ struct plan {
     } shrinkage;
     struct {
         double open_m, close_m, panel_m;
-        const char *basis; /* factor | friction */
+        double left_m, right_m; /* bars beside that joint; 0 = none there */
+        const char *basis;      /* factor | friction */
         double factor, factor_open_m, factor_close_m, friction_open_m, friction_close_m;
     } movement;
     struct plan_working working[WORKING_MOST];

@@ -21,14 +21,39 @@ enum status plan_set_checks(struct plan *plan);
 
 /* ---- shared by the steps ---- */
 /* Movement of one joint between bars of lengths l1 and l2 (0 = no bar on that side) for a free strain
- * e >= 0: friction or factor as the job says. m. */
+ * e >= 0: C (l1 + l2)/2 e with the factor; with friction the sum of both end movements, low mu; bars
+ * over 15 m move freely (methods-decisions 13, 22). m. */
 double plan_joint_movement(const struct plan *plan, bool factor, double l1, double l2, double strain);
+/* Whether the job takes the factor. */
+bool plan_by_factor(const struct plan *plan);
 /* Free strain that opens a joint from sealing to coldest with all drying still to come, and that
  * closes it from sealing to hottest; never below 0. */
 double plan_open_strain(const struct plan *plan);
 double plan_close_strain(const struct plan *plan);
 /* Whether a joint is held by ties (pours.along / pours.across). */
 bool plan_joint_tied(const struct plan *plan, const struct layout_joint *joint);
+/* Free shortening of the concrete from set to coldest, all drying in (interlock): no credit for
+ * drying before sealing when it is not known. */
+double plan_crack_strain(const struct plan *plan);
+/* Stress the drag of the base may cause, Pa. */
+double plan_drag_stress_allowed(const struct plan *plan);
+/* Movement of the joint that works when one in n does, m; `one_m`: at n = 1. */
+double plan_working_movement(const struct plan *plan, int n, double strain, double one_m);
+/* Stock widths in the job's units, narrow to wide; returns how many. */
+enum { PLAN_BLADES_MOST = 32 };
+size_t plan_blades(const struct plan *plan, double widths[PLAN_BLADES_MOST]);
+/* Filler boards in stock in the job's units, thin to thick. */
+size_t plan_boards(const struct plan *plan, double thicknesses[PLAN_BLADES_MOST]);
+/* Strains of a joint this wide at sealing on the job's basis (width, mean width). */
+struct plan_strains {
+    double extension, compression;
+};
+struct plan_strains plan_strains(const struct plan *plan, double open_m, double close_m,
+                                 double width_m);
+/* Width at sealing of a joint cut this wide at the cutting temperature. */
+double plan_width_at_sealing(const struct plan *plan, double width_m);
+/* Verdict of a joint cut this wide, at the width less the tolerance; NONE without a capacity. */
+enum verdict plan_seal_verdict(const struct plan *plan, double open_m, double close_m, double cut_m);
 /* Capacities of the sealant; false when the kind has none (none, floor filler, compression seal). */
 bool plan_capacity(const struct plan *plan, double *extension, double *compression);
 

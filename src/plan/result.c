@@ -27,6 +27,7 @@ const struct result result_table[] = {
     NUM("temperature.coldest_c", "Slab coldest", DEGC, temperature.coldest_c),
     NUM("temperature.hottest_c", "Slab hottest", DEGC, temperature.hottest_c),
     NUM("temperature.sealing_c", "Slab at sealing", DEGC, temperature.sealing_c),
+    NUM("temperature.cut_c", "Slab at the wide cut", DEGC, temperature.cut_c),
     NUM("temperature.zero_stress_c", "Slab at set, for isolation", DEGC, temperature.zero_stress_c),
     NUM("temperature.crack_zero_c", "Slab at set, for cracks", DEGC, temperature.crack_zero_c),
     NUM("temperature.deck_coldest_c", "Deck rule coldest, to compare", DEGC,

@@ -9,7 +9,7 @@ struct why_line {
     char step[8];
     char words[128];
     char sum[96];
-    char value[40];
+    char value[48];
     char from[64];
     char field[48]; /* input path behind it, "" */
 };
@@ -20,7 +20,7 @@ struct why {
     char formula[256], source[256], valid[256];
     struct {
         char words[96];
-        char value[40];
+        char value[48];
         char verdict[16];
     } tries[8];
     size_t try_count;

@@ -404,7 +404,7 @@ static struct sealant_joint read_joint(struct published_case *c)
 static void run_sealing(struct published_case *c)
 {
     struct sealant_joint joint = read_joint(c);
-    struct sealant_row row = sealant_row_at(&joint, case_number(c, "slab"));
+    struct sealant_moment row = sealant_row_at(&joint, case_number(c, "slab"));
     double coldest = NAN, hottest = NAN;
     sealant_window(&joint, &coldest, &hottest);
     case_answer(c, "gap", row.gap_m);

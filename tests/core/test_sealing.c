@@ -110,7 +110,7 @@ static struct sealant_joint random_joint(uint64_t *seed, const double *length, i
 
 static bool holds(const struct sealant_joint *joint, double slab_c, double slack)
 {
-    struct sealant_row row = sealant_row_at(joint, slab_c);
+    struct sealant_moment row = sealant_row_at(joint, slab_c);
     return row.extension <= joint->capacity.extension * slack &&
            row.compression <= joint->capacity.compression * slack;
 }

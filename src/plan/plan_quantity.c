@@ -1,0 +1,87 @@
+/* The basic take-off: metres by kind, sealant, packages, rod, board. */
+#include "core/quantity.h"
+#include "plan/plan_steps.h"
+#include <math.h>
+
+static void add_lengths(struct plan *plan)
+{
+    for (size_t j = 0; j < plan->layout.joint_count; j++) {
+        const struct layout_joint *joint = &plan->layout.joints[j];
+        double length = plan->joints[j].length_m;
+        switch (joint->kind) {
+        case LAYOUT_CONTRACTION:
+            plan->quantities.contraction_m += length;
+            break;
+        case LAYOUT_CONSTRUCTION:
+            plan->quantities.construction_m += length;
+            break;
+        case LAYOUT_ISOLATION:
+            if (joint->expansion)
+                plan->quantities.expansion_m += length;
+            else
+                plan->quantities.isolation_m += length;
+            break;
+        }
+    }
+    plan->quantities.saw_m = plan->quantities.contraction_m;
+    plan->quantities.filler_m2 = (plan->quantities.isolation_m + plan->quantities.expansion_m) *
+                                 plan->job.slab_thickness;
+}
+
+static void set_packages(struct plan *plan)
+{
+    const struct packages *sizes = &plan->job.takeoff_packages;
+    int counts[PACKAGE_MOST];
+    double left;
+
+    if (quantity_packages(sizes->size, sizes->count, plan->quantities.sealant_order_m3, counts,
+                          &left) != STATUS_OK) {
+        finding_add(&plan->findings, SEVERITY_WARNING, "takeoff.packages", "", "", 0, 0,
+                    "takeoff.packages: more than a million of these packs would be needed; type a "
+                    "larger size.");
+        return;
+    }
+    for (size_t i = 0; i < sizes->count; i++)
+        plan->quantities.packages[plan->quantities.package_count++] =
+            (struct plan_package){.size_m3 = sizes->size[i], .count = counts[i]};
+    if (plan->job.takeoff_box > 1)
+        plan->quantities.boxes = quantity_boxes(counts[0], (int)lround(plan->job.takeoff_box));
+}
+
+static void set_sealant(struct plan *plan)
+{
+    const double rod_spare = 1.05; /* common practice */
+    double sealed = plan->quantities.sealed_m, width = plan->seal.width_m;
+    bool rod = plan->job.sealant_kind <= SEALANT_HOT_POUR;
+
+    if (isnan(width) || isnan(plan->seal.depth_m) || !(sealed > 0))
+        return;
+    plan->quantities.sealant_net_m3 = quantity_bead(sealed, width, plan->seal.depth_m);
+    plan->quantities.sealant_cusps_m3 = rod ? quantity_cusps(sealed, width) : 0;
+    plan->quantities.sealant_order_m3 = quantity_order(
+        plan->quantities.sealant_net_m3 +
+            (plan->job.takeoff_rod_cusps ? plan->quantities.sealant_cusps_m3 : 0),
+        plan->job.takeoff_waste);
+    set_packages(plan);
+    if (rod && plan->seal.rod_m > 0) {
+        plan->quantities.rods[0] =
+            (struct plan_rod){.diameter_m = plan->seal.rod_m, .length_m = sealed * rod_spare};
+        plan->quantities.rod_count = 1;
+    }
+}
+
+void plan_set_quantities(struct plan *plan)
+{
+    add_lengths(plan);
+    plan->quantities.sealed_m = plan->quantities.contraction_m + plan->quantities.construction_m;
+    plan->quantities.length_typed = isfinite(plan->job.takeoff_length);
+    if (plan->quantities.length_typed)
+        plan->quantities.sealed_m = plan->job.takeoff_length;
+    if (plan->has_outline) {
+        plan->quantities.area_m2 = plan->layout.area;
+        plan->quantities.volume_m3 = plan->layout.area * plan->job.slab_thickness;
+    }
+    if (plan->job.sealant_kind == SEALANT_NONE)
+        plan->quantities.sealed_m = 0;
+    set_sealant(plan);
+}
