@@ -77,7 +77,82 @@ $(B)/terminfo/stamp: tests/term/slabgap-term.ti
 	@mkdir -p $(@D)
 	tic -x -o $(@D) $< && touch $@
 
-.PHONY: all clean
+$(B)/tests/export/%: TEST_LIBS = -ljansson
+$(B)/tests/cmd/%: CFLAGS += -DSLABGAP_BINARY='"$(abspath $(B))/slabgap"'
+$(B)/tests/cmd/%: $(B)/slabgap
+
+# ---- set-up: packages of a fresh Debian by name; a stamp, so a second run asks nothing
+PACKAGES_DEMO = libncurses-dev pkgconf
+PACKAGES_TEST = $(PACKAGES_DEMO) libcmocka-dev libvterm-dev libjansson-dev libgeos-dev ncurses-bin ncurses-base units
+PACKAGES_CHECK = $(PACKAGES_TEST) clang libclang-rt-14-dev
+build/packages-%:
+	@.ci/packages $(PACKAGES_$(shell echo $* | tr a-z A-Z))
+	@mkdir -p build && touch $@
+
+JOBS = $(shell nproc 2>/dev/null || echo 2)
+EXAMPLE = share/examples/e1-service-yard.slab
+
+demo: build/packages-demo
+	@$(MAKE) --no-print-directory -j$(JOBS) all
+	@$(B)/slabgap report $(EXAMPLE) --only answers
+	@echo && $(B)/slabgap draw $(EXAMPLE) --size 78x32
+	@echo && echo "Start the form with: $(B)/slabgap $(EXAMPLE)"
+
+test: build/packages-test
+	@$(MAKE) --no-print-directory -j$(JOBS) $(B)/slabgap $(TESTS)
+	@tests/run $(TESTS)
+
+LONG_TESTS = $(patsubst tests/%.c,$(B)/tests/%,$(sort $(wildcard tests/*/long_*.c)))
+test-long: build/packages-test
+	@$(MAKE) --no-print-directory -j$(JOBS) $(B)/slabgap $(LONG_TESTS)
+	@tests/run $(LONG_TESTS)
+
+# ---- checks: warnings as errors with both compilers, sanitizers, layers, purity, format, fuzz
+check: build/packages-check
+	$(MAKE) --no-print-directory -j$(JOBS) B=build/gcc CC=gcc WERROR=-Werror everything
+	$(MAKE) --no-print-directory -j$(JOBS) B=build/clang CC=clang WERROR=-Werror everything
+	.ci/layers build/gcc
+	.ci/format
+everything: $(B)/slabgap $(TESTS) $(LONG_TESTS) $(B)/tests/bench/bench
+sanitize: build/packages-test
+	$(MAKE) --no-print-directory -j$(JOBS) B=build/sanitize OPT='-O1 -g' HARDEN=-fno-omit-frame-pointer \
+	    SAN='-fsanitize=address,undefined -fno-sanitize-recover=undefined' test
+
+FUZZERS = $(patsubst tests/fuzz/%.c,build/fuzz/%,$(sort $(wildcard tests/fuzz/fuzz_*.c)))
+FUZZ_SECONDS = 20
+fuzz: build/packages-check
+	$(MAKE) --no-print-directory -j$(JOBS) B=build/fuzz CC=clang OPT='-O1 -g' HARDEN= \
+	    SAN='-fsanitize=address,undefined,fuzzer-no-link' $(FUZZERS)
+	for f in $(FUZZERS); do mkdir -p $$f.corpus && \
+	    $$f -max_total_time=$(FUZZ_SECONDS) -timeout=10 -print_final_stats=1 $$f.corpus || exit 1; done
+build/fuzz/fuzz_%: tests/fuzz/fuzz_%.c $(call archives,$(libs_ui))
+	$(CC) $(CFLAGS) -fsanitize=fuzzer $(LDFLAGS) -Itests -o $@ $< $(filter %.a,$^) $(CURSES) $(LIBS)
+
+bench: build/packages-test
+	@$(MAKE) --no-print-directory -j$(JOBS) $(B)/slabgap $(B)/tests/bench/bench
+	@$(B)/tests/bench/bench
+$(B)/tests/bench/%: TEST_LIBS = -lgeos_c -lutil
+$(B)/tests/bench/%: CFLAGS += -DSLABGAP_BINARY='"$(abspath $(B))/slabgap"'
+libs_bench = export plan job core base
+
+install: all
+	install -d $(DESTDIR)$(PREFIX)/bin $(DESTDIR)$(PREFIX)/share/slabgap/examples $(DESTDIR)$(PREFIX)/share/doc/slabgap
+	install -m 755 $(B)/slabgap $(DESTDIR)$(PREFIX)/bin/slabgap
+	install -m 644 share/examples/*.slab $(DESTDIR)$(PREFIX)/share/slabgap/examples
+	install -m 644 README.md LICENSE docs/*.md $(DESTDIR)$(PREFIX)/share/doc/slabgap
+uninstall:
+	rm -rf $(DESTDIR)$(PREFIX)/bin/slabgap $(DESTDIR)$(PREFIX)/share/slabgap $(DESTDIR)$(PREFIX)/share/doc/slabgap
+
+help:
+	@echo "make demo       set up, build, show the plan of an example"
+	@echo "make test       set up, build, run the tests"
+	@echo "make            build $(B)/slabgap"
+	@echo "make check      gcc and clang with warnings as errors, layers, purity, format"
+	@echo "make sanitize   the tests with address and undefined-behaviour sanitizers"
+	@echo "make test-long  tests that take minutes;  make fuzz FUZZ_SECONDS=20;  make bench"
+	@echo "make install PREFIX=/usr/local DESTDIR=;  make uninstall;  make clean"
+
 clean:
-	rm -rf $(B)
+	rm -rf build
+.PHONY: all demo test test-long check everything sanitize fuzz bench install uninstall help clean
 -include $(shell find $(B) -name '*.d' 2>/dev/null)

@@ -165,8 +165,12 @@ static void show_plain(struct text *out, double si, enum quantity quantity, enum
     const char *sign = us ? plain[quantity].sign_us : plain[quantity].sign;
     double number = si;
 
+    int decimals = us ? plain[quantity].decimals_us : plain[quantity].decimals;
+
     unit_from_si(si, us ? plain[quantity].us : plain[quantity].metric, quantity, &number);
-    add_fixed(out, number, us ? plain[quantity].decimals_us : plain[quantity].decimals, 0);
+    if (quantity == QUANTITY_STRESS && fabs(number) >= 100)
+        decimals = 0; /* a modulus */
+    add_fixed(out, number, decimals, 0);
     if (sign[0] != '\0')
         text_format(out, " %s", sign);
 }

@@ -220,38 +220,66 @@ static void answer_holds(const struct plan *plan, char *word, size_t word_size, 
              PERCENT(plan->seal.bead_strain));
 }
 
-/* The what-if that breaks it first: fewer joints working. */
+/* What breaks it: stretched too far it tears, squeezed too far it is pushed out. */
+struct breaking {
+    double share, ratio; /* of what it is good for; of the width */
+    double good_for;
+    const char *words;
+};
+
+static struct breaking breaking_of(const struct plan *plan, const struct plan_working *row)
+{
+    double stretch = row->extension / plan->seal.extension_capacity;
+    double squeeze = row->compression / plan->seal.compression_capacity;
+
+    if (stretch >= squeeze)
+        return (struct breaking){stretch, row->extension, plan->seal.extension_capacity,
+                                 "it tears"};
+    return (struct breaking){squeeze, row->compression, plan->seal.compression_capacity,
+                             "it is squeezed out"};
+}
+
+/* One cut in three is the usual warning; else the first row that breaks it. */
+static const struct plan_working *first_to_break(const struct plan *plan)
+{
+    const struct plan_working *first = NULL;
+
+    for (size_t i = 0; i < plan->working_count; i++) {
+        const struct plan_working *row = &plan->working[i];
+        if (row->n == 3 && row->verdict == VERDICT_FAILS)
+            return row;
+        if (first == NULL && row->n > 1 && row->verdict == VERDICT_FAILS)
+            first = row;
+    }
+    return first;
+}
+
 static void answer_but(const struct plan *plan, char *sentence, size_t size, char *more,
                        size_t more_size)
 {
-    const struct plan_working *breaks = NULL, *last = NULL;
+    const struct plan_working *breaks = first_to_break(plan), *last;
+    struct breaking breaking;
 
-    for (size_t i = 0; i < plan->working_count; i++) {
-        last = &plan->working[i];
-        if (last->n > 1 && last->verdict == VERDICT_FAILS && breaks == NULL)
-            breaks = last;
-    }
-    for (size_t i = 0; i < plan->working_count; i++) /* one cut in three is the usual warning */
-        if (plan->working[i].n == 3 && plan->working[i].verdict == VERDICT_FAILS)
-            breaks = &plan->working[i];
-    if (last == NULL || !plan->seal.sealed) {
+    if (plan->working_count == 0 || !plan->seal.sealed) {
         snprintf(sentence, size, "look after the first cold spell: how many cuts have cracked?");
         return;
     }
+    last = &plan->working[plan->working_count - 1];
+    breaking = breaking_of(plan, breaks != NULL ? breaks : last);
     if (breaks == NULL) {
-        snprintf(sentence, size, "nothing within reason breaks it; worst: 1 cut in %d, %s of %s.",
-                 last->n, PERCENT(last->extension),
-                 whole_percent(plan->seal.extension_capacity).words);
+        snprintf(sentence, size, "even with 1 cut in %d working it holds: %s of %s.", last->n,
+                 PERCENT(breaking.ratio), whole_percent(breaking.good_for).words);
         return;
     }
     if (breaks->n == 3 && isfinite(plan->seal.holds_when_n3_m))
-        snprintf(sentence, size, "if only 1 cut in %d cracks through: %s, it tears. %s holds then.",
-                 breaks->n, whole_percent(round(100 * breaks->extension) / 100).words,
+        snprintf(sentence, size, "if only 1 cut in %d cracks through: %s, %s. %s holds.",
+                 breaks->n, whole_percent(round(100 * breaking.ratio) / 100).words, breaking.words,
                  SMALL(plan->seal.holds_when_n3_m));
     else
-        snprintf(sentence, size, "if only 1 cut in %d cracks through: %s, it tears. Measure each.",
-                 breaks->n, whole_percent(round(100 * breaks->extension) / 100).words);
-    snprintf(more, more_size, "That joint opens by %s.", SMALL(breaks->open_m));
+        snprintf(sentence, size, "if only 1 cut in %d cracks through: %s, %s. Measure each.",
+                 breaks->n, whole_percent(round(100 * breaking.ratio) / 100).words, breaking.words);
+    snprintf(more, more_size, "That joint opens by %s and closes by %s.", SMALL(breaks->open_m),
+             SMALL(breaks->close_m));
 }
 
 /* The inputs whose likely error changes the answer most, skipping those the user typed. */

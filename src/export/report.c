@@ -9,7 +9,9 @@
 #include <stdio.h>
 #include <string.h>
 
-enum { LABEL_COLUMNS = 38, JOINTS_MOST = 60 };
+enum { LABEL_COLUMNS = 42, JOINTS_MOST = 60 };
+/* Below this rise left a run has no margin: common practice. */
+static const double RESTRAINT_LITTLE_K = 10;
 
 static enum unit_system units_of(const struct plan *plan)
 {
@@ -216,22 +218,62 @@ static void add_isolation(struct text *out, const struct plan *plan)
     add_list(out, plan, "isolation", keys, JOINTS_MOST);
 }
 
+/* "stretch of the sealant: 13.8 %, limit 25 %. ASTM C920 ..." and, where it fails, what to do. */
+static void check_words(struct text *out, const struct plan *plan, const struct plan_check *check)
+{
+    text_format(out, "%s: ", check->label);
+    check_show(out, check->demand, check->unit, units_of(plan));
+    if (isfinite(check->capacity)) {
+        text_add(out, check->at_most ? ", at most " : ", at least ");
+        check_show(out, check->capacity, check->unit, units_of(plan));
+    }
+    text_format(out, " (%s).", check->source);
+    if (check->verdict == VERDICT_FAILS)
+        text_format(out, " %s", check->remedy);
+}
+
+/* Rules of the layout that no panel breaks share one line. */
+static bool is_unbroken_rule(const struct plan_check *check)
+{
+    return check->unit[0] == '\0' && check->demand <= 0;
+}
+
 static void add_checks(struct text *out, const struct plan *plan)
 {
+    size_t unbroken = 0;
+    struct text words = {0};
+
     heading(out, "CHECKS (* = decides)");
     for (size_t i = 0; i < plan->check_count; i++) {
         const struct plan_check *check = &plan->checks[i];
-        char words[512];
         char first[32];
-
+        if (is_unbroken_rule(check)) {
+            unbroken++;
+            continue;
+        }
         snprintf(first, sizeof first, "%c %s", check->binding ? '*' : ' ',
-                 verdict_screen_word(check->verdict));
-        snprintf(words, sizeof words, "%s: %.4g, limit %.4g%s%s. %s%s%s", check->label,
-                 check->demand, check->capacity, check->unit[0] != '\0' ? " " : "", check->unit,
-                 check->source, check->verdict == VERDICT_FAILS ? " " : "",
-                 check->verdict == VERDICT_FAILS ? check->remedy : "");
-        wrap_add(out, first, 14, words, REPORT_COLUMNS);
+                 check->verdict == VERDICT_NONE ? "NOTE" : verdict_screen_word(check->verdict));
+        text_clear(&words);
+        check_words(&words, plan, check);
+        wrap_add(out, first, 14, text_string(&words), REPORT_COLUMNS);
     }
+    text_clear(&words);
+    text_format(&words, "%zu rules of panels, joint ends, boxes, edges and pours: none is broken.",
+                unbroken);
+    if (unbroken > 0)
+        wrap_add(out, "* HOLDS", 14, text_string(&words), REPORT_COLUMNS);
+    text_free(&words);
+}
+
+/* The lift-off figure is no safety: say what it is (never "safe"). */
+static void add_restraint(struct text *out, const struct plan *plan)
+{
+    heading(out, "IF THE SLAB MAY NOT MOVE");
+    add_results(out, plan, "restraint");
+    if (plan->restraint.rise_left_k < RESTRAINT_LITTLE_K)
+        text_add(out, "  A long run whose joints have closed has no blow-up margin.\n");
+    text_add(out, "  Lift-off limit of a clean, straight, sound slab; worn joint faces, a wet base,\n"
+                  "  swelling and grit lower it.\n");
 }
 
 static void add_quantities(struct text *out, const struct plan *plan)
@@ -252,7 +294,7 @@ static void add_quantities(struct text *out, const struct plan *plan)
         text_add(out, "  Sealant counts cut joints and pour ends; what goes over the soft board is\n"
                       "  not in it.\n");
     add_results(out, plan, "steel");
-    add_results(out, plan, "restraint");
+    add_restraint(out, plan);
 }
 
 static void add_joints(struct text *out, const struct plan *plan)

@@ -1,6 +1,4 @@
 #include "plan/plan.h"
-#include "base/array.h"
-#include "job/field.h"
 #include "plan/plan_steps.h"
 #include <math.h>
 #include <stdlib.h>
@@ -59,45 +57,6 @@ static void clear_results(struct plan *plan)
     plan->governing_joint = SIZE_MAX;
 }
 
-/* A default is worth naming when an answer leans on it: texts, empty optional things and fields of
- * parts the job does not use are left out. */
-static bool default_counts(const struct plan *plan, enum field_id id)
-{
-    const struct field *field = &field_table[id];
-    double number;
-
-    switch (field->type) {
-    case FIELD_TEXT:
-    case FIELD_DATE:
-    case FIELD_TIME:
-    case FIELD_COUNTS:
-        return false;
-    case FIELD_NUMBER:
-        memcpy(&number, (const char *)&plan->job + field->offset, sizeof number);
-        return isfinite(number);
-    default:
-        return true;
-    }
-}
-
-static void list_assumed(struct plan *plan)
-{
-    static const enum field_id overriding[] = {
-        FIELD_rules_spacing,         FIELD_rules_spacing_across,  FIELD_climate_slab_coldest,
-        FIELD_climate_slab_hottest,  FIELD_sealing_factor,        FIELD_base_friction,
-        FIELD_concrete_modulus,      FIELD_sealant_extension,     FIELD_sealant_compression,
-        FIELD_takeoff_length,        FIELD_sealant_rod,           FIELD_isolation_filler,
-        FIELD_concrete_shrinkage_ultimate, FIELD_pour_zero_stress_temperature,
-    };
-
-    for (int id = 0; id < FIELD_COUNT; id++)
-        if (!plan->job.given[id] && default_counts(plan, (enum field_id)id))
-            plan->assumed[plan->assumed_count++] = (enum field_id)id;
-    for (size_t i = 0; i < sizeof overriding / sizeof *overriding; i++)
-        if (plan->job.given[overriding[i]])
-            plan->overrides[plan->override_count++] = overriding[i];
-}
-
 static enum status run_chain(struct plan *plan, const struct plan_progress *progress)
 {
     enum status status = STATUS_OK;
@@ -141,7 +100,7 @@ enum status plan_make(const struct job *job, struct plan_cache *cache,
     plan->has_outline = plan->job.outline.count >= 3;
     if (finding_has_error(&plan->findings))
         return STATUS_REFUSED;
-    list_assumed(plan);
+    plan_list_assumed(plan);
     status = run_chain(plan, progress);
     if (status == STATUS_OK && plan->findings.failed)
         status = STATUS_NO_MEMORY;

@@ -28,8 +28,8 @@ add_row(struct plan *plan, const char *rule, double limit_m, bool counts, const 
     struct plan_limit *row;
     va_list arguments;
 
-    if (plan->spacing.count >= LIMIT_MOST || !isfinite(limit_m))
-        return;
+    if (plan->spacing.count >= LIMIT_MOST || !(limit_m < SPACING_UNLIMITED))
+        return; /* no limit: no row */
     row = &plan->spacing.rows[plan->spacing.count++];
     *row = (struct plan_limit){
         .rule = rule, .limit_m = limit_m, .source = source, .counts = counts};

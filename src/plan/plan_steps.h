@@ -5,6 +5,7 @@
 
 #include "plan/plan.h"
 
+void plan_list_assumed(struct plan *plan); /* defaults an answer leans on; overrides */
 void plan_set_concrete(struct plan *plan);
 void plan_set_temperature(struct plan *plan);
 void plan_set_shrinkage(struct plan *plan);

@@ -257,6 +257,24 @@ double result_number(const struct result *result, const struct plan *plan)
     return value;
 }
 
+void check_show(struct text *out, double value, const char *unit, enum unit_system system)
+{
+    enum quantity quantity = QUANTITY_NONE;
+
+    if (strcmp(unit, "ratio") == 0)
+        quantity = QUANTITY_RATIO;
+    else if (strcmp(unit, "m") == 0)
+        quantity = fabs(value) < 0.3 ? QUANTITY_SMALL_LENGTH : QUANTITY_LENGTH;
+    else if (strcmp(unit, "Pa") == 0)
+        quantity = QUANTITY_STRESS;
+    else if (strcmp(unit, "degC") == 0)
+        quantity = QUANTITY_TEMPERATURE;
+    if (isfinite(value))
+        unit_show(out, value, quantity, system);
+    else
+        text_add(out, "-");
+}
+
 const char *applies_word(enum applies applies)
 {
     static const char *const words[] = {"governs", "advice", "no"};

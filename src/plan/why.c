@@ -358,11 +358,19 @@ static enum status why_joint(const struct plan *plan, const char *path, struct w
     return STATUS_REFUSED;
 }
 
+static void set_check_side(struct why *why, const struct plan *plan, double value, const char *unit)
+{
+    struct text text = {0};
+
+    check_show(&text, value, unit, units_of(plan));
+    set_sum(why, "", text_string(&text));
+    text_free(&text);
+}
+
 static enum status why_check(const struct plan *plan, const char *id, struct why *why)
 {
     for (size_t i = 0; i < plan->check_count; i++) {
         const struct plan_check *check = &plan->checks[i];
-        char value[VALUE_MOST];
         if (strcmp(check->id, id) != 0)
             continue;
         *why = (struct why){0};
@@ -375,12 +383,10 @@ static enum status why_check(const struct plan *plan, const char *id, struct why
         snprintf(why->valid, sizeof why->valid, "%s",
                  check->binding ? "This check decides the exit status."
                                 : "Advice: it never decides.");
-        snprintf(value, sizeof value, "%.5g %s", check->demand, check->unit);
-        step(why, "demand", "", "worked out", "what there is");
-        set_sum(why, "", value);
-        snprintf(value, sizeof value, "%.5g %s", check->capacity, check->unit);
-        step(why, "limit", "", "rule", "what it may be");
-        set_sum(why, "", value);
+        step(why, "is", "", "worked out", "what there is");
+        set_check_side(why, plan, check->demand, check->unit);
+        step(why, "limit", "", "rule", check->at_most ? "at most" : "at least");
+        set_check_side(why, plan, check->capacity, check->unit);
         if (check->remedy[0] != '\0')
             snprintf(why->answer, sizeof why->answer, "%s", check->remedy);
         return STATUS_OK;

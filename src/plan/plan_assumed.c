@@ -1,0 +1,212 @@
+/* Which defaults an answer leans on, and which typed values rule over a rule. */
+#include "job/field.h"
+#include "plan/plan_steps.h"
+#include <math.h>
+#include <string.h>
+
+/* ---- when a field has any say ---- */
+
+static bool estimated(const struct job *job)
+{
+    return isnan(job->climate_slab_coldest) || isnan(job->climate_slab_hottest);
+}
+
+static bool estimated_in_sun(const struct job *job)
+{
+    return isnan(job->climate_slab_hottest) && job->climate_exposure != EXPOSURE_INDOOR;
+}
+
+static bool dries_by_model(const struct job *job)
+{
+    return job->concrete_shrinkage_model != SHRINKAGE_TYPED;
+}
+
+static bool dries_by_aci(const struct job *job)
+{
+    return job->concrete_shrinkage_model == SHRINKAGE_ACI209;
+}
+
+static bool has_class(const struct job *job)
+{
+    return job->sealant_kind <= SEALANT_HOT_POUR;
+}
+
+static bool has_sealant(const struct job *job)
+{
+    return job->sealant_kind != SEALANT_NONE;
+}
+
+static bool has_pours(const struct job *job)
+{
+    return job->has_pours;
+}
+
+static bool is_hot_pour(const struct job *job)
+{
+    return job->sealant_kind == SEALANT_HOT_POUR;
+}
+
+static bool is_compression_seal(const struct job *job)
+{
+    return job->sealant_kind == SEALANT_COMPRESSION_SEAL;
+}
+
+static bool by_factor(const struct job *job)
+{
+    return job->sealing_movement == MOVEMENT_FACTOR;
+}
+
+static bool has_gradient(const struct job *job)
+{
+    return fabs(job->slab_gradient + job->slab_built_in_gradient) > 0;
+}
+
+static bool without_zero_stress(const struct job *job)
+{
+    return isnan(job->pour_zero_stress_temperature);
+}
+
+static bool has_outline(const struct job *job)
+{
+    return job->outline.count >= 3;
+}
+
+static bool without_expansion(const struct job *job)
+{
+    return !job->given[FIELD_concrete_expansion];
+}
+
+static bool has_isolation(const struct job *job)
+{
+    return job->object_count + job->edge_count + job->opening_count > 0 ||
+           isfinite(job->rules_expansion_every);
+}
+
+static bool never(const struct job *job)
+{
+    (void)job;
+    return false;
+}
+
+/* Fields that have a say only at times; the others always have. `never`: no answer of this version
+ * leans on them. */
+static const struct {
+    enum field_id id;
+    bool (*used)(const struct job *job);
+} conditions[] = {
+    {FIELD_place_utc_offset, never},
+    {FIELD_slab_reinforced, never},
+    {FIELD_slab_ties, never},
+    {FIELD_slab_wheels, never},
+    {FIELD_concrete_creep, never},
+    {FIELD_climate_swing_cold, never},
+    {FIELD_climate_cloud, never},
+    {FIELD_sawing_saws, never},
+    {FIELD_sawing_pace, never},
+    {FIELD_sealing_dew_margin, never},
+    {FIELD_takeoff_loss_per_day, never},
+    {FIELD_rules_column_box, never},
+    {FIELD_rules_table, never},
+    {FIELD_rules_effort, never},
+    {FIELD_rules_round_to, never},
+    {FIELD_slab_built_in_gradient, has_gradient},
+    {FIELD_rules_curling_share, has_gradient},
+    {FIELD_concrete_aggregate, without_expansion},
+    {FIELD_concrete_cement, dries_by_model},
+    {FIELD_concrete_curing, dries_by_model},
+    {FIELD_concrete_horizon, dries_by_model},
+    {FIELD_climate_humidity, dries_by_model},
+    {FIELD_concrete_cement_content, dries_by_aci},
+    {FIELD_concrete_fines, dries_by_aci},
+    {FIELD_concrete_air, dries_by_aci},
+    {FIELD_climate_air_coldest, estimated},
+    {FIELD_climate_air_hottest, estimated},
+    {FIELD_climate_exposure, estimated},
+    {FIELD_climate_swing_hot, estimated_in_sun},
+    {FIELD_climate_wind, estimated_in_sun},
+    {FIELD_climate_absorptivity, estimated_in_sun},
+    {FIELD_pour_placing_temperature, without_zero_stress},
+    {FIELD_sealing_cut_temperature, never},
+    {FIELD_sealing_factor, by_factor},
+    {FIELD_sealing_working, has_class},
+    {FIELD_sealing_tolerance, has_class},
+    {FIELD_sealing_basis, has_class},
+    {FIELD_sealing_least_temperature, has_sealant},
+    {FIELD_sealant_extension, never}, /* by the class, which is named */
+    {FIELD_sealant_compression, never},
+    {FIELD_sealant_class, has_class},
+    {FIELD_sealant_recess, has_sealant},
+    {FIELD_sealant_type, is_hot_pour},
+    {FIELD_sealant_seal_least, is_compression_seal},
+    {FIELD_sealant_seal_most, is_compression_seal},
+    {FIELD_isolation_share, has_isolation},
+    {FIELD_rules_axis, has_outline},
+    {FIELD_rules_aspect, has_outline},
+    {FIELD_rules_least_side, has_outline},
+    {FIELD_rules_least_angle, has_outline},
+    {FIELD_takeoff_packages, has_sealant},
+    {FIELD_takeoff_box, never},
+    {FIELD_takeoff_waste, has_sealant},
+    {FIELD_takeoff_rod_cusps, has_class},
+    {FIELD_pours_direction, has_pours},
+    {FIELD_pours_along, has_pours},
+    {FIELD_pours_across, has_pours},
+};
+
+static bool has_a_say(const struct job *job, enum field_id id)
+{
+    for (size_t i = 0; i < sizeof conditions / sizeof *conditions; i++)
+        if (conditions[i].id == id)
+            return conditions[i].used(job);
+    return true;
+}
+
+/* Texts, dates and numbers without a value are no defaults. */
+static bool has_default(const struct job *job, enum field_id id)
+{
+    const struct field *field = &field_table[id];
+    double number;
+
+    switch (field->type) {
+    case FIELD_TEXT:
+    case FIELD_DATE:
+    case FIELD_TIME:
+    case FIELD_COUNTS:
+        return false;
+    case FIELD_NUMBER:
+        memcpy(&number, (const char *)job + field->offset, sizeof number);
+        return isfinite(number);
+    default:
+        return true;
+    }
+}
+
+void plan_list_assumed(struct plan *plan)
+{
+    static const enum field_id overriding[] = {
+        FIELD_rules_spacing,
+        FIELD_rules_spacing_across,
+        FIELD_climate_slab_coldest,
+        FIELD_climate_slab_hottest,
+        FIELD_sealing_factor,
+        FIELD_base_friction,
+        FIELD_concrete_modulus,
+        FIELD_sealant_extension,
+        FIELD_sealant_compression,
+        FIELD_takeoff_length,
+        FIELD_sealant_rod,
+        FIELD_isolation_filler,
+        FIELD_concrete_shrinkage_ultimate,
+        FIELD_pour_zero_stress_temperature,
+        FIELD_sawing_depth,
+    };
+    const struct job *job = &plan->job;
+
+    for (int id = 0; id < FIELD_COUNT; id++)
+        if (!job->given[id] && has_default(job, (enum field_id)id) &&
+            has_a_say(job, (enum field_id)id))
+            plan->assumed[plan->assumed_count++] = (enum field_id)id;
+    for (size_t i = 0; i < sizeof overriding / sizeof *overriding; i++)
+        if (job->given[overriding[i]])
+            plan->overrides[plan->override_count++] = overriding[i];
+}
