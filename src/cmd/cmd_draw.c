@@ -42,6 +42,9 @@ static bool read_options(int count, char **words, struct options *options)
             options->ascii = true;
         } else if (strcmp(words[i], "--force") == 0) {
             options->force = true;
+        } else if (strcmp(words[i], "-o") == 0 || strcmp(words[i], "--size") == 0) {
+            return command_refuse("draw: %s needs a word after it; see slabgap --help.",
+                                  words[i]) == EXIT_HOLDS;
         } else if (words[i][0] == '-' && words[i][1] != '\0') {
             return command_refuse("draw: '%s' is no option here; see slabgap --help.", words[i]) ==
                    EXIT_HOLDS;

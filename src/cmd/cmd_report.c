@@ -18,6 +18,9 @@ static bool read_options(int count, char **words, struct options *options)
             options->only = words[++i];
         else if (strcmp(words[i], "--csv") == 0 && i + 1 < count)
             options->csv = words[++i];
+        else if (strcmp(words[i], "--only") == 0 || strcmp(words[i], "--csv") == 0)
+            return command_refuse("report: %s needs a word after it; see slabgap --help.",
+                                  words[i]) == EXIT_HOLDS;
         else if (words[i][0] == '-' && words[i][1] != '\0')
             return command_refuse("report: '%s' is no option here; see slabgap --help.",
                                   words[i]) == EXIT_HOLDS;
