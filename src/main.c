@@ -20,8 +20,13 @@ static int print_help(void)
 
 static int print_version(void)
 {
-    printf("slabgap %s\n", SLABGAP_VERSION);
-    return fflush(stdout) == 0 ? EXIT_HOLDS : EXIT_WRONG;
+    struct text out = {0};
+    int code;
+
+    text_format(&out, "slabgap %s\n", SLABGAP_VERSION);
+    code = command_print(&out, EXIT_HOLDS);
+    text_free(&out);
+    return code;
 }
 
 /* A bare word that is no file is a mistyped command, not a new job. */
