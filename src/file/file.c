@@ -171,6 +171,17 @@ enum status file_replace(const char *path, const char *bytes, size_t count)
     return STATUS_OK;
 }
 
+/* Drawings carry the mark in their last line, other papers in their first. */
+static bool has_mark(const struct text *content)
+{
+    enum { NEAR = 512 };
+    static const char mark[] = "slabgap";
+    size_t near = content->length < NEAR ? content->length : NEAR;
+
+    return memmem(content->bytes, near, mark, sizeof mark - 1) != NULL ||
+           memmem(content->bytes + content->length - near, near, mark, sizeof mark - 1) != NULL;
+}
+
 bool file_is_ours(const char *path)
 {
     struct stat about;
@@ -185,8 +196,7 @@ bool file_is_ours(const char *path)
         return true;
     if (file_read(path, &content) != STATUS_OK)
         return false;
-    ours = memmem(content.bytes, content.length < 512 ? content.length : 512, "slabgap", 7) !=
-           NULL;
+    ours = content.length == 0 || has_mark(&content);
     text_free(&content);
     return ours;
 }
