@@ -175,7 +175,7 @@ enum status file_replace(const char *path, const char *bytes, size_t count)
 static bool has_mark(const struct text *content)
 {
     enum { NEAR = 512 };
-    static const char mark[] = "slabgap";
+    static const char mark[] = "by slabgap ";
     size_t near = content->length < NEAR ? content->length : NEAR;
 
     return memmem(content->bytes, near, mark, sizeof mark - 1) != NULL ||
