@@ -44,7 +44,7 @@ struct unit_reading {
     size_t at;
 };
 
-/* Reads `number [unit]`, feet and inches (13'-4", 3/8 in) from the start of `text` (formats.md,
+/* Reads `number [unit]`, feet and inches (13'-4", 3/8 in) from the start of `text` (docs/format.md,
  * grammar). `default_scale_unit` names the unit used when none is written (NULL: the quantity's
  * metric file unit). Never reads nan, inf, hex, thousands signs. */
 struct unit_reading unit_read(const char *text, size_t count, enum quantity quantity,

@@ -1,5 +1,5 @@
 /* A slab that cannot move: locked stress and blow-up by lift-off. Not a safety: the lift-off limit
- * of a clean, straight, sound slab. SI; short-term modulus (methods-decisions 19). */
+ * of a clean, straight, sound slab. SI; short-term modulus. */
 #ifndef SLABGAP_CORE_RESTRAINT_H
 #define SLABGAP_CORE_RESTRAINT_H
 

@@ -81,10 +81,16 @@ static size_t broken_panels(const struct plan *plan, char *names, size_t size)
     return count;
 }
 
-/* Widest gap between neighbouring lines in one direction, as drawn. */
-static void panel_sizes(const struct plan *plan, double *along, double *across)
+/* Sizes of the panels along x and y: the largest, and whether all are alike. */
+struct sizes {
+    double along, across;
+    bool alike;
+};
+
+static struct sizes panel_sizes(const struct plan *plan)
 {
-    *along = *across = 0;
+    struct sizes sizes = {.alike = true};
+
     for (size_t i = 0; i < plan->layout.panel_count; i++) {
         const struct layout_panel *panel = &plan->layout.panels[i];
         double x0 = panel->ring[0].x, x1 = x0, y0 = panel->ring[0].y, y1 = y0;
@@ -94,15 +100,33 @@ static void panel_sizes(const struct plan *plan, double *along, double *across)
             y0 = fmin(y0, panel->ring[j].y);
             y1 = fmax(y1, panel->ring[j].y);
         }
-        *along = fmax(*along, x1 - x0);
-        *across = fmax(*across, y1 - y0);
+        if (i > 0 && (fabs(x1 - x0 - sizes.along) > 0.0015 || fabs(y1 - y0 - sizes.across) > 0.0015))
+            sizes.alike = false;
+        sizes.along = fmax(sizes.along, x1 - x0);
+        sizes.across = fmax(sizes.across, y1 - y0);
     }
+    return sizes;
+}
+
+static void joints_sentence(const struct plan *plan, const struct sizes *sizes, const char *limit,
+                            char *out, size_t size)
+{
+    const char *every = sizes->alike ? "every" : "up to";
+
+    if (plan->layout.panel_count <= 1)
+        snprintf(out, size, "none: one panel. %s", limit);
+    else if (fabs(sizes->along - sizes->across) < 0.0005)
+        snprintf(out, size, "%s %s both ways, %s. %s", every, LENGTH(sizes->along),
+                 LENGTH(joint_total(plan)), limit);
+    else
+        snprintf(out, size, "%s %s along, %s across, %s. %s", every, LENGTH(sizes->along),
+                 LENGTH(sizes->across), LENGTH(joint_total(plan)), limit);
 }
 
 static void answer_joints(const struct plan *plan, char *sentence, size_t size, char *more,
                           size_t more_size)
 {
-    double along, across;
+    struct sizes sizes = panel_sizes(plan);
     char limit[208], names[64];
     size_t broken = broken_panels(plan, names, sizeof names);
 
@@ -111,21 +135,17 @@ static void answer_joints(const struct plan *plan, char *sentence, size_t size, 
         snprintf(sentence, size, "at most %s apart. %s", LENGTH(plan->spacing.limit_m), limit);
         return;
     }
-    panel_sizes(plan, &along, &across);
-    if (plan->layout.panel_count == 1)
-        snprintf(sentence, size, "none: one panel. %s", limit);
-    else if (fabs(along - across) < 0.0005)
-        snprintf(sentence, size, "every %s both ways, %s. %s", LENGTH(along),
-                 LENGTH(joint_total(plan)), limit);
-    else
-        snprintf(sentence, size, "up to %s along, %s across, %s. %s", LENGTH(along), LENGTH(across),
-                 LENGTH(joint_total(plan)), limit);
+    joints_sentence(plan, &sizes, limit, sentence, size);
     if (broken > 0)
         snprintf(sentence, size, "%zu panel%s break%s a rule: %s%s (plan). %s of joint.", broken,
                  broken == 1 ? "" : "s", broken == 1 ? "s" : "", names, broken > 4 ? " ..." : "",
                  LENGTH(joint_total(plan)));
     snprintf(more, more_size, "%zu panels, largest %s x %s; at least %d panels are needed.",
-             plan->layout.panel_count, LENGTH(along), LENGTH(across), plan->layout.bound_panels);
+             plan->layout.panel_count, LENGTH(sizes.along), LENGTH(sizes.across),
+             plan->layout.bound_panels);
+    if (plan->layout.bound_panels < 1)
+        snprintf(more, more_size, "%zu panels, largest %s x %s.", plan->layout.panel_count,
+                 LENGTH(sizes.along), LENGTH(sizes.across));
 }
 
 static void answer_cut(const struct plan *plan, char *sentence, size_t size, char *more,
@@ -204,10 +224,11 @@ static void answer_holds(const struct plan *plan, char *word, size_t word_size, 
     }
     if (!plan->seal.sealed || plan->seal.verdict == VERDICT_NONE) {
         snprintf(word, word_size, "NOTE");
-        snprintf(sentence, size, "%s", plan->job.sealant_kind == SEALANT_FLOOR_FILLER
-                                           ? "a floor filler parts from one side as the floor "
-                                             "dries; that is no failure."
-                                           : "no sealant to judge.");
+        snprintf(sentence, size, "%s",
+                 plan->job.sealant_kind == SEALANT_FLOOR_FILLER
+                     ? "a floor filler parts from one side as the floor "
+                       "dries; that is no failure."
+                     : "no sealant to judge.");
         return;
     }
     snprintf(word, word_size, "%s", verdict_screen_word(plan->seal.verdict));
@@ -272,8 +293,8 @@ static void answer_but(const struct plan *plan, char *sentence, size_t size, cha
         return;
     }
     if (breaks->n == 3 && isfinite(plan->seal.holds_when_n3_m))
-        snprintf(sentence, size, "if only 1 cut in %d cracks through: %s, %s. %s holds.",
-                 breaks->n, whole_percent(round(100 * breaking.ratio) / 100).words, breaking.words,
+        snprintf(sentence, size, "if only 1 cut in %d cracks through: %s, %s. %s holds.", breaks->n,
+                 whole_percent(round(100 * breaking.ratio) / 100).words, breaking.words,
                  SMALL(plan->seal.holds_when_n3_m));
     else
         snprintf(sentence, size, "if only 1 cut in %d cracks through: %s, %s. Measure each.",
@@ -282,55 +303,69 @@ static void answer_but(const struct plan *plan, char *sentence, size_t size, cha
              SMALL(breaks->close_m));
 }
 
-/* The inputs whose likely error changes the answer most, skipping those the user typed. */
-static void check_first(const struct plan *plan, char *out, size_t size)
+/* The inputs whose likely error changes the answer most, skipping those the user typed: as many as
+ * fit into `columns`. */
+static void check_first(const struct plan *plan, size_t columns, char *out, size_t size)
 {
     const struct job *job = &plan->job;
-    const char *words[6];
-    size_t count = 0, used = 0;
+    const struct {
+        bool open;
+        const char *words;
+    } doubts[] = {
+        {true, "cracks"},
+        {!job->given[FIELD_climate_slab_coldest], "slab year"},
+        {!job->given[FIELD_concrete_shrinkage], "drying"},
+        {plan->has_outline && job->edge_count == 0, "walls"},
+        {!job->given[FIELD_concrete_expansion] && job->concrete_aggregate.row < 0, "stone"},
+    };
+    size_t used = 0, most = columns < size ? columns : size - 1;
 
-    words[count++] = "cracks";
-    if (!job->given[FIELD_climate_slab_coldest])
-        words[count++] = "slab temperature";
-    if (!job->given[FIELD_concrete_shrinkage])
-        words[count++] = "drying";
-    if (plan->has_outline && job->edge_count == 0)
-        words[count++] = "walls";
-    if (!job->given[FIELD_concrete_expansion] && job->concrete_aggregate.row < 0)
-        words[count++] = "stone";
     out[0] = '\0';
-    for (size_t i = 0; i < count && i < 3 && used < size; i++)
-        used += (size_t)snprintf(out + used, size - used, "%s%s", i > 0 ? ", " : "", words[i]);
+    for (size_t i = 0; i < sizeof doubts / sizeof *doubts; i++)
+        if (doubts[i].open && used + strlen(doubts[i].words) + 2 < most)
+            used += (size_t)snprintf(out + used, size - used, "%s%s", used > 0 ? ", " : "",
+                                     doubts[i].words);
+}
+
+/* What to buy, in a few words. */
+static void purchase(const struct plan *plan, char *out, size_t size)
+{
+    size_t used = 0;
+
+    out[0] = '\0';
+    for (size_t i = 0; i < plan->quantities.package_count && used < size; i++) {
+        const struct plan_package *package = &plan->quantities.packages[i];
+        if (package->count > 0)
+            used += (size_t)snprintf(out + used, size - used, "%s%d x %s", used > 0 ? " + " : "",
+                                     package->count,
+                                     show(plan, package->size_m3, QUANTITY_VOLUME).words);
+    }
+    if (used == 0)
+        snprintf(out, size, "no sealant; sawing %s.", LENGTH(plan->quantities.saw_m));
+    else if (plan->quantities.rod_count > 0 && used < size)
+        snprintf(out + used, size - used, ", %s of rod.",
+                 LENGTH(plan->quantities.rods[0].length_m));
+    else if (used < size)
+        snprintf(out + used, size - used, ".");
 }
 
 static void answer_buy(const struct plan *plan, char *sentence, size_t size, char *more,
                        size_t more_size)
 {
-    char packs[160] = "", check[96];
-    size_t used = 0;
+    enum { LINE = 71 }; /* what fits behind the word on 80 columns */
+    static const char lead[] = "  Check first: ";
+    char buy[200], check[96];
+    size_t taken;
 
-    check_first(plan, check, sizeof check);
-    for (size_t i = 0; i < plan->quantities.package_count && used < sizeof packs; i++) {
-        const struct plan_package *package = &plan->quantities.packages[i];
-        if (package->count > 0)
-            used += (size_t)snprintf(packs + used, sizeof packs - used, "%s%d x %s",
-                                     used > 0 ? " + " : "", package->count,
-                                     show(plan, package->size_m3, QUANTITY_VOLUME).words);
-    }
-    if (used == 0) {
-        snprintf(sentence, size, "no sealant. Sawing %s.  Check first: %s.",
-                 LENGTH(plan->quantities.saw_m), check);
-        return;
-    }
-    if (plan->quantities.rod_count > 0)
-        snprintf(sentence, size, "%s, %s of rod.  Check first: %s.", packs,
-                 LENGTH(plan->quantities.rods[0].length_m), check);
-    else
-        snprintf(sentence, size, "%s.  Check first: %s.", packs, check);
-    snprintf(more, more_size, "%s with %s waste%s.",
-             show(plan, plan->quantities.sealant_order_m3, QUANTITY_VOLUME).words,
-             whole_percent(plan->job.takeoff_waste).words,
-             plan->quantities.length_typed ? ", for the metres you typed" : "");
+    purchase(plan, buy, sizeof buy);
+    taken = strlen(buy) + sizeof lead;
+    check_first(plan, taken < LINE ? LINE - taken : 8, check, sizeof check);
+    snprintf(sentence, size, "%s%s%s.", buy, lead, check);
+    if (plan->quantities.package_count > 0)
+        snprintf(more, more_size, "%s with %s waste%s.",
+                 show(plan, plan->quantities.sealant_order_m3, QUANTITY_VOLUME).words,
+                 whole_percent(plan->job.takeoff_waste).words,
+                 plan->quantities.length_typed ? ", for the metres you typed" : "");
 }
 
 void answers_make(const struct plan *plan, struct answers *answers)
@@ -340,8 +375,9 @@ void answers_make(const struct plan *plan, struct answers *answers)
     *answers = (struct answers){.count = ANSWER_MOST};
     for (size_t i = 0; i < ANSWER_MOST; i++)
         snprintf(answers->rows[i].word, sizeof answers->rows[i].word, "%s", words[i]);
-#define ROW(i) answers->rows[i].sentence, sizeof answers->rows[i].sentence, answers->rows[i].more,  \
-               sizeof answers->rows[i].more
+#define ROW(i)                                                                                     \
+    answers->rows[i].sentence, sizeof answers->rows[i].sentence, answers->rows[i].more,            \
+        sizeof answers->rows[i].more
     answer_joints(plan, ROW(0));
     answer_cut(plan, ROW(1));
     answer_seal(plan, ROW(2));

@@ -119,7 +119,7 @@ static void add_findings(struct json *json, const struct finding_list *findings)
     json_close(json, ']');
 }
 
-/* The top-level keys, in the order of formats.md. */
+/* The top-level keys, in the order of docs/format.md. */
 static const char *const keys[] = {
     "program",   "job",    "spacing",    "temperature", "shrinkage",  "movement", "working",
     "seal",      "sealing_table", "isolation", "cut",   "checks",     "quantities", "joints",

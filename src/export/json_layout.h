@@ -1,4 +1,4 @@
-/* `layout` of the JSON result: exactly what formats.md says, nothing null inside. */
+/* `layout` of the JSON result: exactly what docs/format.md says, nothing null inside. */
 #ifndef SLABGAP_EXPORT_JSON_LAYOUT_H
 #define SLABGAP_EXPORT_JSON_LAYOUT_H
 

@@ -1,6 +1,6 @@
 /* A job file as text: its lines, what they say, and changes to single values that leave everything
  * else as it was (comments, blanks, line ends, unknown keys). The document is the one truth; the
- * job is read from it. Reading and writing are formats.md's grammar. */
+ * job is read from it. Reading and writing are docs/format.md's grammar. */
 #ifndef SLABGAP_JOB_DOCUMENT_H
 #define SLABGAP_JOB_DOCUMENT_H
 
@@ -24,7 +24,7 @@ void document_write(const struct document *document, struct text *out);
  * an error; the job then holds what was good. */
 enum status document_job(const struct document *document, struct job *job,
                          struct finding_list *findings);
-/* PATH = VALUE by formats.md ("What set can address"). VALUE follows the file's grammar; "" removes
+/* PATH = VALUE by docs/format.md ("What set can address"). VALUE follows the file's grammar; "" removes
  * the key, row or section. All or nothing: on STATUS_REFUSED the document is as it was and the
  * findings say why (field, value, limit, what to do). */
 enum status document_set(struct document *document, const char *path, const char *value,

@@ -1,4 +1,4 @@
-/* Defaults that depend on other fields, and fields that contradict each other (formats.md "When a
+/* Defaults that depend on other fields, and fields that contradict each other (docs/format.md "When a
  * key is missing"; the tables in share/tables hold the values with their sources). */
 #include "job/field.h"
 #include "job/table.h"

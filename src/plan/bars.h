@@ -1,5 +1,5 @@
 /* The slab beside every joint as bars: a panel, or panels tied together, from the joint to the next
- * joint that moves (methods-decisions 24). Private to src/plan. */
+ * joint that moves. Private to src/plan. */
 #ifndef SLABGAP_PLAN_BARS_H
 #define SLABGAP_PLAN_BARS_H
 

@@ -7,14 +7,14 @@
 
 struct contact {
     size_t joint, panel;
-    int side;          /* +1: left of the joint's direction, -1: right */
-    double from, to;   /* along the joint, m from its first point */
-    double extent;     /* of the panel square to the joint, m */
+    int side;        /* +1: left of the joint's direction, -1: right */
+    double from, to; /* along the joint, m from its first point */
+    double extent;   /* of the panel square to the joint, m */
 };
 struct contact_list {
     struct contact *items; /* ordered by joint */
     size_t count, capacity;
-    size_t *first;         /* first[j] .. first[j + 1]: those of joint j */
+    size_t *first; /* first[j] .. first[j + 1]: those of joint j */
 };
 
 enum status contact_list_make(const struct layout *layout, struct contact_list *list);

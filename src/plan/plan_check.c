@@ -56,8 +56,8 @@ static const struct layout_rule {
      "Let the joint meet the edge squarely; see the panel's own line."},
     {"panel.corner", "inside corners without a joint", "common practice: avoid L-shaped panels",
      "Run a joint from the corner, or reinforce across it."},
-    {"joint.end", "joints that end in the middle of a panel",
-     "ACI 360R-06 5.1.3: joints run on", "Carry the joint on to an edge, or reinforce ahead of it."},
+    {"joint.end", "joints that end in the middle of a panel", "ACI 360R-06 5.1.3: joints run on",
+     "Carry the joint on to an edge, or reinforce ahead of it."},
     {"object.isolated", "fixed things that are not cut free", "NRMCA CIP 6; common practice",
      "Put a box or soft board round it, with joints to its corners."},
     {"edge.isolated", "held edges that are not cut free", "common practice",
@@ -115,7 +115,8 @@ static bool add_share(struct plan *plan, const char *id, const char *label, doub
 
 static bool add_width_check(struct plan *plan)
 {
-    struct plan_check *check = add(plan, "seal.width", "least width, tolerance in, against the width");
+    struct plan_check *check =
+        add(plan, "seal.width", "least width, tolerance in, against the width");
 
     if (check == NULL)
         return false;
@@ -322,7 +323,7 @@ static bool add_stress_advice(struct plan *plan)
     return true;
 }
 
-/* One joint in n: a warning line at n = 3; a typed n above 1 decides (methods-decisions 7). */
+/* One joint in n: a warning line at n = 3; a typed n above 1 decides. */
 static bool add_working_check(struct plan *plan)
 {
     int typed = (int)lround(plan->job.sealing_working), shown = typed > 1 ? typed : 3;

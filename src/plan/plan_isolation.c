@@ -1,5 +1,5 @@
 /* Soft board at walls, objects and expansion joints: what pushes, how thick, whether the seal on it
- * holds (methods-decisions 3c, 39, 50). */
+ * holds. */
 #include "core/isolation.h"
 #include "plan/plan_steps.h"
 #include "plan/run.h"
@@ -91,7 +91,8 @@ static double pushing_on_object(const struct plan *plan, const struct stop_list 
 {
     const struct object *object = &plan->job.objects[joint->object];
     double turn = plan->job.rules_axis * 3.14159265358979323846 / 180, longest = 0;
-    double ax = (joint->x1 + joint->x2) / 2 - object->x, ay = (joint->y1 + joint->y2) / 2 - object->y;
+    double ax = (joint->x1 + joint->x2) / 2 - object->x,
+           ay = (joint->y1 + joint->y2) / 2 - object->y;
 
     for (int quarter = 0; quarter < 4; quarter++) {
         static const int c[] = {1, 0, -1, 0}, s[] = {0, 1, 0, -1};
@@ -166,8 +167,8 @@ static void finish_row(struct plan *plan, struct plan_isolation *row)
     row->expansion_m = isolation_demand(plan->concrete.expansion_k, row->from_c,
                                         plan->temperature.hottest_c, row->run_m);
     row->least_filler_m = isolation_filler(row->expansion_m, plan->job.isolation_share);
-    row->filler_m = isfinite(plan->job.isolation_filler) ? plan->job.isolation_filler
-                                                         : choose_board(plan, row);
+    row->filler_m =
+        isfinite(plan->job.isolation_filler) ? plan->job.isolation_filler : choose_board(plan, row);
     row->verdict = verdict_of(demand(plan, row, row->filler_m), 1);
     if (!plan_capacity(plan, &extension, &compression))
         return;

@@ -48,8 +48,8 @@ static bool allocate(struct geometry *geometry, const struct job *job)
     geometry->lines = calloc(job->pour_line_count + 1, sizeof *geometry->lines);
     geometry->drawn = calloc(job->joint_count + 1, sizeof *geometry->drawn);
     return geometry->corners != NULL && geometry->openings != NULL &&
-           geometry->opening_wall != NULL && geometry->objects != NULL &&
-           geometry->edges != NULL && geometry->lines != NULL && geometry->drawn != NULL;
+           geometry->opening_wall != NULL && geometry->objects != NULL && geometry->edges != NULL &&
+           geometry->lines != NULL && geometry->drawn != NULL;
 }
 
 /* Copies rows to `at`. An arc that closes the outline on its first point adds no point: its shape
@@ -63,7 +63,8 @@ static struct layout_ring copy_ring(const struct rows *rows, struct layout_corne
         const struct row *row = &rows->items[i];
         at[i] = (struct layout_corner){row->x, row->y, row->arc, row->left, row->cx, row->cy};
     }
-    if (count > 1 && last->arc && fabs(last->x - at[0].x) < 1e-6 && fabs(last->y - at[0].y) < 1e-6) {
+    if (count > 1 && last->arc && fabs(last->x - at[0].x) < 1e-6 &&
+        fabs(last->y - at[0].y) < 1e-6) {
         at[0].arc = true;
         at[0].left = last->left;
         at[0].cx = last->cx;
@@ -73,8 +74,7 @@ static struct layout_ring copy_ring(const struct rows *rows, struct layout_corne
     return (struct layout_ring){at, count};
 }
 
-static void copy_rings(struct geometry *geometry, const struct job *job,
-                       struct layout_input *input)
+static void copy_rings(struct geometry *geometry, const struct job *job, struct layout_input *input)
 {
     struct layout_corner *at = geometry->corners;
 
@@ -206,8 +206,9 @@ enum status plan_set_layout(struct plan *plan, const struct plan_progress *progr
         copy_lines(&geometry, job, &input);
         status = layout_solve(&input, &plan->layout);
         if (status == STATUS_REFUSED)
-            finding_add(&plan->findings, SEVERITY_ERROR, "outline", "", "", job->outline.items[0].line,
-                        1, "The outline is no slab: its sides cross or it has no area. Give the "
+            finding_add(&plan->findings, SEVERITY_ERROR, "outline", "", "",
+                        job->outline.items[0].line, 1,
+                        "The outline is no slab: its sides cross or it has no area. Give the "
                         "corners in order round the slab.");
     }
     free_geometry(&geometry);

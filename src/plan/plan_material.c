@@ -24,14 +24,13 @@ void plan_set_concrete(struct plan *plan)
     plan->concrete.rupture_pa =
         us ? mix_rupture_aci(fck) : mix_rupture_en(fck, job->slab_thickness);
     plan->concrete.expansion_k = job->concrete_expansion;
-    plan->concrete.stiffness_radius_m =
-        spacing_stiffness_radius(plan->concrete.modulus_pa, job->slab_thickness, MIX_POISSON,
-                                 job->base_subgrade_modulus);
+    plan->concrete.stiffness_radius_m = spacing_stiffness_radius(
+        plan->concrete.modulus_pa, job->slab_thickness, MIX_POISSON, job->base_subgrade_modulus);
 }
 
 /* ---- temperature ---- */
 
-/* methods-decisions 25: coldest mean = coldest air; hottest = Barber at mid-depth; indoor = air. */
+/* coldest mean = coldest air; hottest = Barber at mid-depth; indoor = air. */
 static struct slab_extremes estimate(const struct job *job)
 {
     struct slab_extremes extremes = {job->climate_air_coldest, job->climate_air_hottest};
@@ -104,13 +103,14 @@ void plan_set_temperature(struct plan *plan)
     }
     plan->temperature.sealing_c = job->sealing_temperature;
     if (isnan(job->sealing_temperature))
-        plan->temperature.sealing_c = (plan->temperature.coldest_c + plan->temperature.hottest_c) / 2;
+        plan->temperature.sealing_c =
+            (plan->temperature.coldest_c + plan->temperature.hottest_c) / 2;
     plan->temperature.cut_c = job->sealing_cut_temperature;
     if (!job->given[FIELD_sealing_cut_temperature])
         plan->temperature.cut_c = plan->temperature.sealing_c;
     plan->temperature.zero_stress_c = job->pour_zero_stress_temperature;
     plan->temperature.crack_zero_c = job->pour_zero_stress_temperature;
-    if (isnan(job->pour_zero_stress_temperature)) { /* methods-decisions 3 */
+    if (isnan(job->pour_zero_stress_temperature)) { /* docs/theory.md, three moments */
         const double hydration_k = 10;              /* from memory */
         plan->temperature.zero_stress_c = job->pour_placing_temperature;
         plan->temperature.crack_zero_c = job->pour_placing_temperature + hydration_k;
@@ -130,7 +130,8 @@ static struct shrinkage_slab shrinkage_slab_of(const struct job *job)
     slab.humidity = job->climate_humidity;
     slab.cement = (enum mix_cement)job->concrete_cement;
     slab.curing_days = job->concrete_curing / second_per_day;
-    slab.ultimate = isfinite(job->concrete_shrinkage_ultimate) ? job->concrete_shrinkage_ultimate : 0;
+    slab.ultimate =
+        isfinite(job->concrete_shrinkage_ultimate) ? job->concrete_shrinkage_ultimate : 0;
     if (isfinite(job->concrete_slump))
         slab.slump_m = job->concrete_slump;
     slab.fines = job->concrete_fines;
@@ -149,15 +150,14 @@ void plan_set_shrinkage(struct plan *plan)
 
     plan->shrinkage.basis = basis[model];
     plan->shrinkage.end_years = job->concrete_horizon / second_per_year;
-    if (model == SHRINKAGE_TYPED) { /* methods-decisions 2: used as it is */
+    if (model == SHRINKAGE_TYPED) { /* used as it is */
         plan->shrinkage.after_sealing = job->concrete_shrinkage;
         plan->shrinkage.before_sealing = NAN;
         return;
     }
-    plan->shrinkage.before_sealing =
-        shrinkage_at((enum shrinkage_by)model, &slab, sealing_d).total;
+    plan->shrinkage.before_sealing = shrinkage_at((enum shrinkage_by)model, &slab, sealing_d).total;
     plan->shrinkage.after_sealing =
         shrinkage_between((enum shrinkage_by)model, &slab, sealing_d, fmax(end_d, sealing_d));
-    if (job->sealing_kind == SEALING_RESEAL) /* methods-decisions 41 */
+    if (job->sealing_kind == SEALING_RESEAL) /* nothing left to dry */
         plan->shrinkage.after_sealing = 0;
 }

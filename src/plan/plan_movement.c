@@ -1,4 +1,4 @@
-/* How much every joint moves (methods-decisions 3, 7, 8, 13, 22 to 24). */
+/* How much every joint moves. */
 #include "core/friction_bar.h"
 #include "core/movement.h"
 #include "plan/bars.h"
@@ -7,7 +7,7 @@
 #include <stdlib.h>
 #include <string.h>
 
-/* Longer bars are taken as free: history matters for them (methods-decisions 13). */
+/* Longer bars are taken as free: history matters for them. */
 static const double free_bar_m = 15;
 
 bool plan_by_factor(const struct plan *plan)
@@ -31,7 +31,8 @@ static double end_movement(const struct plan *plan, double length, double strain
     return length > free_bar_m ? length / 2 * strain : friction_bar_load(&bar, strain).end_m;
 }
 
-double plan_joint_movement(const struct plan *plan, bool factor, double l1, double l2, double strain)
+double plan_joint_movement(const struct plan *plan, bool factor, double l1, double l2,
+                           double strain)
 {
     if (factor)
         return plan->job.sealing_factor * (l1 + l2) / 2 * strain;
@@ -79,12 +80,12 @@ static void set_joint(struct plan *plan, const struct bars *bars, size_t j)
     };
     if (joint->tied)
         return;
-    /* an isolation joint opens by its one neighbour; its closing is that of the run behind it and is
-     * set with the isolation rows */
-    joint->open_m = plan_joint_movement(plan, plan_by_factor(plan), left, right,
-                                        plan_open_strain(plan));
-    joint->close_m = plan_joint_movement(plan, plan_by_factor(plan), left, right,
-                                         plan_close_strain(plan));
+    /* an isolation joint opens by its one neighbour; its closing is that of the run behind it and
+     * is set with the isolation rows */
+    joint->open_m =
+        plan_joint_movement(plan, plan_by_factor(plan), left, right, plan_open_strain(plan));
+    joint->close_m =
+        plan_joint_movement(plan, plan_by_factor(plan), left, right, plan_close_strain(plan));
 }
 
 /* The contraction joint that moves most, else (no contraction joint) the construction joint. */
@@ -97,9 +98,9 @@ static size_t find_governing(const struct plan *plan)
             const struct plan_joint *joint = &plan->joints[j];
             if ((int)plan->layout.joints[j].kind != kind || joint->tied)
                 continue;
-            if (best == SIZE_MAX || joint->open_m + joint->close_m >
-                                        (plan->joints[best].open_m + plan->joints[best].close_m) *
-                                            (1 + 1e-9))
+            if (best == SIZE_MAX ||
+                joint->open_m + joint->close_m >
+                    (plan->joints[best].open_m + plan->joints[best].close_m) * (1 + 1e-9))
                 best = j;
         }
     return best;
@@ -158,7 +159,7 @@ enum status plan_set_movement(struct plan *plan)
     return STATUS_OK;
 }
 
-/* ---- one joint in n works (methods-decisions 7) ---- */
+/* ---- one joint in n works ---- */
 
 /* The bar is n panels long and moves freely; the factor's value is n times the uniform one. */
 double plan_working_movement(const struct plan *plan, int n, double strain, double one_m)

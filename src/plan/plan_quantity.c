@@ -24,8 +24,8 @@ static void add_lengths(struct plan *plan)
         }
     }
     plan->quantities.saw_m = plan->quantities.contraction_m;
-    plan->quantities.filler_m2 = (plan->quantities.isolation_m + plan->quantities.expansion_m) *
-                                 plan->job.slab_thickness;
+    plan->quantities.filler_m2 =
+        (plan->quantities.isolation_m + plan->quantities.expansion_m) * plan->job.slab_thickness;
 }
 
 static void set_packages(struct plan *plan)
@@ -58,10 +58,10 @@ static void set_sealant(struct plan *plan)
         return;
     plan->quantities.sealant_net_m3 = quantity_bead(sealed, width, plan->seal.depth_m);
     plan->quantities.sealant_cusps_m3 = rod ? quantity_cusps(sealed, width) : 0;
-    plan->quantities.sealant_order_m3 = quantity_order(
-        plan->quantities.sealant_net_m3 +
-            (plan->job.takeoff_rod_cusps ? plan->quantities.sealant_cusps_m3 : 0),
-        plan->job.takeoff_waste);
+    plan->quantities.sealant_order_m3 =
+        quantity_order(plan->quantities.sealant_net_m3 +
+                           (plan->job.takeoff_rod_cusps ? plan->quantities.sealant_cusps_m3 : 0),
+                       plan->job.takeoff_waste);
     set_packages(plan);
     if (rod && plan->seal.rod_m > 0) {
         plan->quantities.rods[0] =

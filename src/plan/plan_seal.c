@@ -1,5 +1,4 @@
-/* The seal: width chosen or checked, both ends of the year, bead, rod, sealing table and window
- * (methods-decisions 4 to 7, 31 to 41). */
+/* The seal: width chosen or checked, both ends of the year, bead, rod, sealing table and window. */
 #include "core/quantity.h"
 #include "core/sealant.h"
 #include "job/table.h"
@@ -82,8 +81,8 @@ static struct worst worst_movement(const struct plan *plan)
     return worst;
 }
 
-/* Width at sealing of a joint cut this wide: cut at another slab temperature it has opened or closed
- * since (methods-decisions 4). */
+/* Width at sealing of a joint cut this wide: cut at another slab temperature it has opened or
+ * closed since. */
 double plan_width_at_sealing(const struct plan *plan, double width_m)
 {
     double warmer = plan->temperature.cut_c - plan->temperature.sealing_c;
@@ -97,7 +96,7 @@ double plan_width_at_sealing(const struct plan *plan, double width_m)
 }
 
 /* Per cent of the width at sealing, or, with the mean width as basis, the whole movement on the
- * width less the movement (methods-decisions 33). A joint of no width: 10 (no sealant takes that). */
+ * width less the movement. A joint of no width: 10 (no sealant takes that). */
 struct plan_strains plan_strains(const struct plan *plan, double open_m, double close_m,
                                  double width_m)
 {
@@ -119,9 +118,8 @@ struct plan_strains plan_strains(const struct plan *plan, double open_m, double 
 static double demand_of(const struct plan *plan, double open_m, double close_m, double cut_m)
 {
     double extension, compression;
-    struct plan_strains strains =
-        plan_strains(plan, open_m, close_m,
-                     plan_width_at_sealing(plan, cut_m) - plan->job.sealing_tolerance);
+    struct plan_strains strains = plan_strains(
+        plan, open_m, close_m, plan_width_at_sealing(plan, cut_m) - plan->job.sealing_tolerance);
 
     if (!plan_capacity(plan, &extension, &compression))
         return NAN;
@@ -145,7 +143,8 @@ static double narrowest(const struct plan *plan, double open_m, double close_m)
     for (size_t i = 0; i < count; i++) {
         if (widths[i] < kind->width_least - 1e-9 || widths[i] > kind->width_most + 1e-9)
             continue;
-        if (!plan->seal.sealed || plan_seal_verdict(plan, open_m, close_m, widths[i]) == VERDICT_HOLDS)
+        if (!plan->seal.sealed ||
+            plan_seal_verdict(plan, open_m, close_m, widths[i]) == VERDICT_HOLDS)
             return widths[i];
     }
     return NAN;
@@ -377,18 +376,16 @@ static void add_working(struct plan *plan, int n)
     struct plan_strains strains;
 
     row->n = n;
-    row->open_m =
-        plan_working_movement(plan, n, plan_open_strain(plan), plan->movement.open_m);
-    row->close_m =
-        plan_working_movement(plan, n, plan_close_strain(plan), plan->movement.close_m);
+    row->open_m = plan_working_movement(plan, n, plan_open_strain(plan), plan->movement.open_m);
+    row->close_m = plan_working_movement(plan, n, plan_close_strain(plan), plan->movement.close_m);
     strains = plan_strains(plan, row->open_m, row->close_m,
                            plan_width_at_sealing(plan, plan->seal.width_m));
     row->extension = strains.extension;
     row->compression = strains.compression;
     row->capacity = plan->seal.extension_capacity;
-    row->verdict = plan->seal.sealed ? plan_seal_verdict(plan, row->open_m, row->close_m,
-                                                         plan->seal.width_m)
-                                     : VERDICT_NONE;
+    row->verdict = plan->seal.sealed
+                       ? plan_seal_verdict(plan, row->open_m, row->close_m, plan->seal.width_m)
+                       : VERDICT_NONE;
 }
 
 static void set_working(struct plan *plan)
@@ -408,25 +405,23 @@ static void set_working(struct plan *plan)
 
 /* ---- kinds without a class ---- */
 
-/* A semi-rigid filler has no movement capacity: it fills the whole first cut, flush
- * (methods-decisions 42). */
+/* A semi-rigid filler has no movement capacity: it fills the whole first cut, flush. */
 static void set_floor_filler(struct plan *plan)
 {
     struct plan_strains strains;
 
     plan->seal.recess_m = 0;
-    plan->seal.depth_m = isfinite(plan->job.sealant_depth) ? plan->job.sealant_depth
-                                                          : plan->cut.set_m;
+    plan->seal.depth_m =
+        isfinite(plan->job.sealant_depth) ? plan->job.sealant_depth : plan->cut.set_m;
     if (isnan(plan->movement.open_m))
         return;
-    strains = plan_strains(plan, plan->movement.open_m, plan->movement.close_m,
-                           plan->seal.width_m);
+    strains = plan_strains(plan, plan->movement.open_m, plan->movement.close_m, plan->seal.width_m);
     plan->seal.extension = strains.extension;
     plan->seal.compression = strains.compression;
 }
 
-/* Size by the movement, slot by the published formula held within what both ends of the year allow
- * (methods-decisions 35). rod_m is the seal's own width. */
+/* Size by the movement, slot by the published formula held within what both ends of the year allow.
+ * rod_m is the seal's own width. */
 static void set_compression_seal(struct plan *plan, struct worst worst)
 {
     double sizes[PLAN_BLADES_MOST], least, most;
@@ -436,11 +431,11 @@ static void set_compression_seal(struct plan *plan, struct worst worst)
     struct sealant_seal_ends ends;
     double raster = plan->job.job_units == UNITS_US ? 0.0254 / 32 : 0.0005;
 
-    seal.seal_m = isfinite(plan->job.sealant_rod)
-                      ? plan->job.sealant_rod
-                      : next_size(sizes, count,
-                                  sealant_seal_least(worst.open + worst.close, seal.least,
-                                                     seal.most));
+    seal.seal_m =
+        isfinite(plan->job.sealant_rod)
+            ? plan->job.sealant_rod
+            : next_size(sizes, count,
+                        sealant_seal_least(worst.open + worst.close, seal.least, seal.most));
     plan->seal.rod_m = seal.seal_m;
     plan->seal.recess_m = plan->job.sealant_recess;
     plan->seal.chosen = isnan(plan->job.sealant_width);
@@ -476,8 +471,7 @@ static void set_cut(struct plan *plan)
     plan->cut.set_m = isfinite(plan->job.sawing_depth) ? plan->job.sawing_depth : cut.set_m;
 }
 
-/* The factor is an average, not a bound: say so when friction gives a worse verdict
- * (methods-decisions 23). */
+/* The factor is an average, not a bound: say so when friction gives a worse verdict. */
 static void warn_factor(struct plan *plan)
 {
     enum verdict friction = plan_seal_verdict(plan, plan->movement.friction_open_m,
@@ -531,9 +525,10 @@ void plan_set_seal(struct plan *plan)
     set_cut(plan);
     if (kind == SEALANT_NONE || !anything_to_seal(plan))
         return;
-    plan->seal.basis = plan->job.sealing_basis == SEALING_MEAN_WIDTH ? "width-and-movement" : "width";
-    plan->seal.sealed = plan_capacity(plan, &plan->seal.extension_capacity,
-                                      &plan->seal.compression_capacity);
+    plan->seal.basis =
+        plan->job.sealing_basis == SEALING_MEAN_WIDTH ? "width-and-movement" : "width";
+    plan->seal.sealed =
+        plan_capacity(plan, &plan->seal.extension_capacity, &plan->seal.compression_capacity);
     if (kind == SEALANT_COMPRESSION_SEAL) {
         set_compression_seal(plan, worst);
         return;
@@ -560,7 +555,6 @@ void plan_set_joint_seals(struct plan *plan)
         joint->extension = strains.extension;
         joint->compression = strains.compression;
         if (plan->seal.sealed)
-            joint->verdict =
-                plan_seal_verdict(plan, joint->open_m, joint->close_m, joint->width_m);
+            joint->verdict = plan_seal_verdict(plan, joint->open_m, joint->close_m, joint->width_m);
     }
 }

@@ -1,5 +1,4 @@
-/* How far apart joints may be: a row per rule, which rows count, which one governs
- * (methods-decisions 1, 43 to 46). */
+/* How far apart joints may be: a row per rule, which rows count, which one governs. */
 #include "core/curling.h"
 #include "core/mix.h"
 #include "core/spacing.h"
@@ -21,9 +20,10 @@ static struct spacing_slab spacing_slab_of(const struct job *job)
     };
 }
 
-__attribute__((format(printf, 6, 7))) static void
-add_row(struct plan *plan, const char *rule, double limit_m, bool counts, const char *source,
-        const char *words, ...)
+__attribute__((format(printf, 6, 7))) static void add_row(struct plan *plan, const char *rule,
+                                                          double limit_m, bool counts,
+                                                          const char *source, const char *words,
+                                                          ...)
 {
     struct plan_limit *row;
     va_list arguments;
@@ -31,8 +31,8 @@ add_row(struct plan *plan, const char *rule, double limit_m, bool counts, const 
     if (plan->spacing.count >= LIMIT_MOST || !(limit_m < SPACING_UNLIMITED))
         return; /* no limit: no row */
     row = &plan->spacing.rows[plan->spacing.count++];
-    *row = (struct plan_limit){
-        .rule = rule, .limit_m = limit_m, .source = source, .counts = counts};
+    *row =
+        (struct plan_limit){.rule = rule, .limit_m = limit_m, .source = source, .counts = counts};
     va_start(arguments, words);
     vsnprintf(row->words, sizeof row->words, words, arguments);
     va_end(arguments);
@@ -73,7 +73,7 @@ double plan_drag_stress_allowed(const struct plan *plan)
 {
     if (isfinite(plan->job.rules_drag_stress))
         return plan->job.rules_drag_stress;
-    return plan->concrete.tensile_pa / 2; /* methods-decisions 43 */
+    return plan->concrete.tensile_pa / 2; /* common practice */
 }
 
 double plan_crack_strain(const struct plan *plan)
@@ -102,8 +102,7 @@ static void add_curling_row(struct plan *plan)
         return; /* no gradient typed: nothing to say */
     add_row(plan, "curling", spacing_by_curling(&curling), counts(plan, COUNT_CURLING),
             "Westergaard 1927, Bradbury 1938; sum with the drag: derived",
-            "curling and drag at %.0f %% of the bending strength",
-            100 * job->rules_curling_share);
+            "curling and drag at %.0f %% of the bending strength", 100 * job->rules_curling_share);
 }
 
 /* The widest blade of the kind. */
@@ -124,9 +123,8 @@ static double widest_blade(const struct plan *plan)
 
 static void add_sealant_row(struct plan *plan)
 {
-    double extension, compression, share = plan->job.sealing_movement == MOVEMENT_FACTOR
-                                               ? plan->job.sealing_factor
-                                               : 1;
+    double extension, compression,
+        share = plan->job.sealing_movement == MOVEMENT_FACTOR ? plan->job.sealing_factor : 1;
 
     if (!plan_capacity(plan, &extension, &compression))
         return;
@@ -154,7 +152,8 @@ static void add_advice_rows(struct plan *plan)
             "drag of the base");
     add_curling_row(plan);
     if (!(job->slab_dowels.diameter > 0))
-        add_row(plan, "interlock", spacing_by_interlock(job->rules_interlock, plan_crack_strain(plan)),
+        add_row(plan, "interlock",
+                spacing_by_interlock(job->rules_interlock, plan_crack_strain(plan)),
                 counts(plan, COUNT_INTERLOCK),
                 "Colley and Humphrey (1967): 0.9 mm, for slabs of about 9 in",
                 isfinite(plan->shrinkage.before_sealing)

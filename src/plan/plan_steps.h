@@ -1,5 +1,5 @@
-/* The steps of the chain, in the order plan_make() takes them. Each reads what earlier steps left in
- * the plan and writes its own part. Private to src/plan. */
+/* The steps of the chain, in the order plan_make() takes them. Each reads what earlier steps left
+ * in the plan and writes its own part. Private to src/plan. */
 #ifndef SLABGAP_PLAN_PLAN_STEPS_H
 #define SLABGAP_PLAN_PLAN_STEPS_H
 
@@ -21,10 +21,11 @@ void plan_set_quantities(struct plan *plan);
 enum status plan_set_checks(struct plan *plan);
 
 /* ---- shared by the steps ---- */
-/* Movement of one joint between bars of lengths l1 and l2 (0 = no bar on that side) for a free strain
- * e >= 0: C (l1 + l2)/2 e with the factor; with friction the sum of both end movements, low mu; bars
- * over 15 m move freely (methods-decisions 13, 22). m. */
-double plan_joint_movement(const struct plan *plan, bool factor, double l1, double l2, double strain);
+/* Movement of one joint between bars of lengths l1 and l2 (0 = no bar on that side) for a free
+ * strain e >= 0: C (l1 + l2)/2 e with the factor; with friction the sum of both end movements, low
+ * mu; bars over 15 m move freely. m. */
+double plan_joint_movement(const struct plan *plan, bool factor, double l1, double l2,
+                           double strain);
 /* Whether the job takes the factor. */
 bool plan_by_factor(const struct plan *plan);
 /* Free strain that opens a joint from sealing to coldest with all drying still to come, and that
@@ -54,8 +55,10 @@ struct plan_strains plan_strains(const struct plan *plan, double open_m, double 
 /* Width at sealing of a joint cut this wide at the cutting temperature. */
 double plan_width_at_sealing(const struct plan *plan, double width_m);
 /* Verdict of a joint cut this wide, at the width less the tolerance; NONE without a capacity. */
-enum verdict plan_seal_verdict(const struct plan *plan, double open_m, double close_m, double cut_m);
-/* Capacities of the sealant; false when the kind has none (none, floor filler, compression seal). */
+enum verdict plan_seal_verdict(const struct plan *plan, double open_m, double close_m,
+                               double cut_m);
+/* Capacities of the sealant; false when the kind has none (none, floor filler, compression seal).
+ */
 bool plan_capacity(const struct plan *plan, double *extension, double *compression);
 
 #endif

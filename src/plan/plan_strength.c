@@ -67,15 +67,14 @@ void plan_set_restraint(struct plan *plan)
     double stiffer;
 
     set_curling(plan);
-    plan->restraint.locked_pa =
-        restraint_locked_stress(slab.modulus_pa, slab.expansion, rise);
+    plan->restraint.locked_pa = restraint_locked_stress(slab.modulus_pa, slab.expansion, rise);
     plan->restraint.locked_both_pa =
         restraint_locked_stress_both(slab.modulus_pa, slab.expansion, rise, MIX_POISSON);
     plan->restraint.lift_off_hinge_k = restraint_lift_off(&slab, RESTRAINT_HINGE).rise_k;
     plan->restraint.lift_off_continuous_k = restraint_lift_off(&slab, RESTRAINT_CONTINUOUS).rise_k;
-    slab.modulus_pa *= RESTRAINT_STIFFER; /* methods-decisions 19, 20: a stiffer slab lifts earlier */
+    slab.modulus_pa *= RESTRAINT_STIFFER; /* a stiffer slab lifts earlier */
     stiffer = restraint_lift_off(&slab, RESTRAINT_HINGE).rise_k;
-    /* joints full of grit: no closure counts (methods-decisions 21) */
+    /* joints full of grit: no closure counts */
     plan->restraint.rise_left_k =
         restraint_rise_left(stiffer, 0, swelling, slab.expansion, plan->temperature.zero_stress_c,
                             plan->temperature.hottest_c);
@@ -181,12 +180,14 @@ static void set_ties(struct plan *plan)
     plan->steel.tie_diameter_m = ties.bar_m;
     plan->steel.tie_spacing_m =
         job->slab_ties.diameter > 0 ? job->slab_ties.spacing : result.spacing_m;
-    plan->steel.tie_length_m = job->slab_ties.diameter > 0 ? job->slab_ties.length : result.length_m;
+    plan->steel.tie_length_m =
+        job->slab_ties.diameter > 0 ? job->slab_ties.length : result.length_m;
     if (job->slab_ties.diameter > 0 && job->slab_ties.spacing > result.exact_spacing_m * (1 + 1e-6))
-        finding_add(&plan->findings, SEVERITY_WARNING, "slab.ties", "", "", 0, 0,
-                    "slab.ties: these bars carry the drag of the slab only to a spacing of %.0f mm; "
-                    "set them closer or take thicker ones.",
-                    result.exact_spacing_m * 1000);
+        finding_add(
+            &plan->findings, SEVERITY_WARNING, "slab.ties", "", "", 0, 0,
+            "slab.ties: these bars carry the drag of the slab only to a spacing of %.0f mm; "
+            "set them closer or take thicker ones.",
+            result.exact_spacing_m * 1000);
 }
 
 void plan_set_steel(struct plan *plan)

@@ -3,9 +3,18 @@
 #include <string.h>
 
 #define AT(member) offsetof(struct plan, member)
-#define NUM(path, label, quantity, member) {path, label, RESULT_NUMBER, quantity, 1.0, AT(member)}
-#define LITRES(path, label, member) {path, label, RESULT_NUMBER, QUANTITY_VOLUME, 1000.0, AT(member)}
-#define WORD(path, label, member) {path, label, RESULT_WORD, QUANTITY_NONE, 1.0, AT(member)}
+#define NUM(path, label, quantity, member)                                                         \
+    {                                                                                              \
+        path, label, RESULT_NUMBER, quantity, 1.0, AT(member)                                      \
+    }
+#define LITRES(path, label, member)                                                                \
+    {                                                                                              \
+        path, label, RESULT_NUMBER, QUANTITY_VOLUME, 1000.0, AT(member)                            \
+    }
+#define WORD(path, label, member)                                                                  \
+    {                                                                                              \
+        path, label, RESULT_WORD, QUANTITY_NONE, 1.0, AT(member)                                   \
+    }
 #define MM QUANTITY_SMALL_LENGTH
 #define METRES QUANTITY_LENGTH
 #define DEGC QUANTITY_TEMPERATURE
@@ -109,7 +118,9 @@ const struct result result_table[] = {
 const size_t result_count = sizeof result_table / sizeof *result_table;
 
 #define COLUMN(key, label, type, quantity, scale, struct_name, member)                             \
-    {key, label, type, quantity, scale, offsetof(struct struct_name, member), 0}
+    {                                                                                              \
+        key, label, type, quantity, scale, offsetof(struct struct_name, member), 0                 \
+    }
 #define CNUM(s, key, label, quantity, member)                                                      \
     COLUMN(key, label, RESULT_NUMBER, quantity, 1.0, s, member)
 #define CWORD(s, key, label, member) COLUMN(key, label, RESULT_WORD, QUANTITY_NONE, 1.0, s, member)
@@ -173,7 +184,9 @@ static const struct column rod_columns[] = {
     CNUM(plan_rod, "length_m", "length", METRES, length_m),
 };
 #define JNUM(key, label, quantity, member)                                                         \
-    {key, label, RESULT_NUMBER, quantity, 1.0, offsetof(struct plan_joint, member), 1}
+    {                                                                                              \
+        key, label, RESULT_NUMBER, quantity, 1.0, offsetof(struct plan_joint, member), 1           \
+    }
 static const struct column joint_columns[] = {
     CTEXT(layout_joint, "id", "joint", id),
     {"kind", "kind", RESULT_KIND, QUANTITY_NONE, 1.0, 0, 0},
@@ -214,7 +227,10 @@ static size_t joint_rows(const struct plan *plan, const void *arrays[2])
     return plan->joints != NULL ? plan->layout.joint_count : 0;
 }
 
-#define LIST(name, columns, type, rows) {name, columns, COUNT(columns), {sizeof(struct type), 0}, rows}
+#define LIST(name, columns, type, rows)                                                            \
+    {                                                                                              \
+        name, columns, COUNT(columns), {sizeof(struct type), 0}, rows                              \
+    }
 const struct list list_table[] = {
     LIST("spacing.limits", limit_columns, plan_limit, limit_rows),
     LIST("working", working_columns, plan_working, working_rows),

@@ -6,10 +6,22 @@
 #include "core/layout.h"
 #include <stdbool.h>
 
-enum stop { STOP_NONE, STOP_FREE, STOP_MOVES /* expansion, inner isolation */, STOP_FIXED /* wall, box */, STOP_TIED /* matched slab */ };
+enum stop {
+    STOP_NONE,
+    STOP_FREE,
+    STOP_MOVES /* expansion, inner isolation */,
+    STOP_FIXED /* wall, box */,
+    STOP_TIED /* matched slab */
+};
 
-struct stop_segment { double x1, y1, x2, y2; enum stop stop; };
-struct stop_list { struct stop_segment *items; size_t count, capacity; };
+struct stop_segment {
+    double x1, y1, x2, y2;
+    enum stop stop;
+};
+struct stop_list {
+    struct stop_segment *items;
+    size_t count, capacity;
+};
 
 /* All that stops a run: slab sides, holes, isolation joints. */
 enum status stop_list_make(const struct layout *layout, struct stop_list *list);
@@ -18,9 +30,9 @@ void stop_list_free(struct stop_list *list);
  * when there is none. */
 double stop_list_run(const struct stop_list *list, double x, double y, double dx, double dy,
                      enum stop *stop);
-/* The part of that run that pushes on a joint. `fixed`: the joint is at a wall or box, else it is an
- * expansion joint: the whole run when the far end is held, half when both ends can move alike
- * (methods-decisions 50, [D] by symmetry of the sliding bar). */
+/* The part of that run that pushes on a joint. `fixed`: the joint is at a wall or box, else it is
+ * an expansion joint: the whole run when the far end is held, half when both ends can move alike
+ * (derived: symmetry of the sliding bar). */
 double stop_pushing(double run, enum stop far_end, bool fixed);
 
 #endif

@@ -70,9 +70,9 @@ static struct why_line *add_line(struct why *why)
 }
 
 /* A line of the ladder: "2  Slab cools from 15 to -8   15 - -8   23 K   you". */
-__attribute__((format(printf, 5, 6))) static void
-step(struct why *why, const char *number, const char *field, const char *from, const char *words,
-     ...)
+__attribute__((format(printf, 5, 6))) static void step(struct why *why, const char *number,
+                                                       const char *field, const char *from,
+                                                       const char *words, ...)
 {
     struct why_line *line = add_line(why);
     va_list arguments;
@@ -156,9 +156,8 @@ static struct ladder ladder_of(const struct plan *plan)
     };
 }
 
-__attribute__((format(printf, 4, 5))) static void set_sum_format(struct why *why, double si,
-                                                                  const struct plan *plan,
-                                                                  const char *sum, ...)
+__attribute__((format(printf, 4, 5))) static void
+set_sum_format(struct why *why, double si, const struct plan *plan, const char *sum, ...)
 {
     struct why_line *line = &why->lines[why->line_count - 1];
     va_list arguments;
@@ -236,8 +235,7 @@ static void ladder_width(const struct plan *plan, const struct ladder *l, struct
          plan->seal.chosen ? "The narrowest blade that holds: it stretches"
                            : "You cut this wide: it stretches");
     line = &why->lines[why->line_count - 1];
-    snprintf(line->sum, sizeof line->sum, "%.3f / %.4g", l->open * 1000,
-             plan->seal.width_m * 1000);
+    snprintf(line->sum, sizeof line->sum, "%.3f / %.4g", l->open * 1000, plan->seal.width_m * 1000);
     snprintf(line->value, sizeof line->value, "%.1f %%", 100 * plan->seal.extension);
     step(why, "", "", verdict_screen_word(plan->seal.verdict), "and is squeezed");
     line = &why->lines[why->line_count - 1];
@@ -247,7 +245,7 @@ static void ladder_width(const struct plan *plan, const struct ladder *l, struct
 }
 
 __attribute__((format(printf, 3, 4))) static void try_it(struct why *why, double ratio,
-                                                          const char *words, ...)
+                                                         const char *words, ...)
 {
     va_list arguments;
     size_t n = why->try_count;
@@ -277,17 +275,16 @@ static void add_tries(const struct plan *plan, const struct ladder *l, struct wh
     double share = free_open > 0 ? l->open / free_open : 1, w = plan->seal.width_m;
     double cap = plan->seal.extension_capacity;
 
-    try_it(why, share * l->length * (l->a * (l->ts - l->tmin + 5) + l->e) / w,
-           "coldest slab 5 K colder");
+    try_it(why, share * l->length * (l->a * (l->ts - l->tmin + 5) + l->e) / w, "winter 5 K colder");
     try_it(why, share * l->length * (l->a * (l->ts - l->tmin) + l->e * 1.5) / w,
-           "half as much drying again");
-    try_it(why, l->open * 1.2 / w, "panels a fifth longer");
-    try_it(why, free_open / w, "nothing held back by the base");
+           "drying half more");
+    try_it(why, l->open * 1.2 / w, "panels 1/5 longer");
+    try_it(why, free_open / w, "base holds nothing");
     try_width(plan, l, plan->seal.next_down_m, why);
     try_width(plan, l, plan->seal.next_up_m, why);
     for (size_t i = 0; i < plan->working_count; i++)
         if (plan->working[i].n == 3)
-            try_it(why, plan->working[i].extension, "only 1 cut in 3 cracks through");
+            try_it(why, plan->working[i].extension, "1 cut in 3 works");
     for (size_t i = 0; i < why->try_count; i++)
         snprintf(why->tries[i].verdict, sizeof why->tries[i].verdict, "%s",
                  verdict_screen_word(verdict_of(atof(why->tries[i].value) / 100, cap)));
@@ -310,8 +307,8 @@ static enum status why_width(const struct plan *plan, const char *path, struct w
                  "Because it is the narrowest blade that holds with room. It must be at least %s.",
                  least);
     else
-        snprintf(why->answer, sizeof why->answer,
-                 "Because you typed %s. It must be at least %s.", width, least);
+        snprintf(why->answer, sizeof why->answer, "Because you typed %s. It must be at least %s.",
+                 width, least);
     ladder_open(plan, &l, why);
     ladder_held_back(plan, &l, why);
     ladder_width(plan, &l, why);
@@ -351,7 +348,7 @@ static enum status why_joint(const struct plan *plan, const char *path, struct w
         one.seal.verdict = joint->verdict;
         snprintf(known, sizeof known, "%s%s",
                  strstr(dot, "open") || strstr(dot, "close") || strstr(dot, "panel") ? "movement"
-                                                                                      : "seal",
+                                                                                     : "seal",
                  dot);
         return result_find(known) != NULL ? why_result(&one, known, why) : STATUS_REFUSED;
     }

@@ -6,7 +6,7 @@
 #include "plan/plan.h"
 
 struct why_line {
-    char step[8];
+    char step[16];
     char words[128];
     char sum[96];
     char value[48];

@@ -7,11 +7,11 @@
 struct why_symbol {
     const char *symbol; /* as in the formula */
     const char *words;
-    const char *path;   /* a result ("movement.panel_m") or a field ("sealant.width") */
+    const char *path; /* a result ("movement.panel_m") or a field ("sealant.width") */
 };
 enum { WHY_SYMBOLS = 8 };
 struct why_row {
-    const char *paths;   /* the results it explains, separated by blanks */
+    const char *paths;                        /* the results it explains, separated by blanks */
     bool (*applies)(const struct plan *plan); /* NULL = always; the first that applies is taken */
     const char *formula, *source, *valid;
     struct why_symbol symbols[WHY_SYMBOLS]; /* ended by symbol NULL */

@@ -68,7 +68,13 @@ bool own_question(const struct own *own, int step, enum own_question *question)
 }
 
 /* A size as people type it: "36", "36,5 m", "118'-1\"". */
-static bool read_size(const char *string, double *metres, struct text *trouble, const char *what)
+static const char *length_unit(const struct own *own)
+{
+    return own->practice == PRACTICE_US ? "ft" : "m";
+}
+
+static bool read_size(const char *string, const char *unit, double *metres, struct text *trouble,
+                      const char *what)
 {
     char plain[OWN_SIZE_MOST];
     struct unit_reading reading;
@@ -77,7 +83,7 @@ static bool read_size(const char *string, double *metres, struct text *trouble, 
     for (char *c = plain; *c != '\0'; c++)
         if (*c == ',')
             *c = '.';
-    reading = unit_read(plain, strlen(plain), QUANTITY_LENGTH, "m");
+    reading = unit_read(plain, strlen(plain), QUANTITY_LENGTH, unit);
     if (plain[0] == '\0' || reading.problem != NULL || reading.length != strlen(plain)) {
         text_format(trouble, "%s: type a length, such as 36, 36.5 m or 118 ft.", what);
         return false;
@@ -176,10 +182,11 @@ bool own_make_outline(const struct own *own, struct own_outline *outline, struct
 
     *outline = (struct own_outline){0};
     if (own->shape == OWN_CORNERS)
-        return own_read_sides(own->sides, outline, trouble);
+        return own_read_sides(own->sides, length_unit(own), outline, trouble);
     for (int i = 0; i < 4; i++)
         if (size_labels[own->shape][i] != NULL &&
-            !read_size(own->size[i], &size[i], trouble, size_labels[own->shape][i]))
+            !read_size(own->size[i], length_unit(own), &size[i], trouble,
+                       size_labels[own->shape][i]))
             return false;
     if (!inner_fits(own, size, trouble))
         return false;
@@ -207,7 +214,7 @@ bool own_make_outline(const struct own *own, struct own_outline *outline, struct
 }
 
 /* One side: "12.5 north". Returns false at anything else. */
-static bool read_side(const char *piece, size_t length, double *x, double *y)
+static bool read_side(const char *piece, size_t length, const char *unit, double *x, double *y)
 {
     static const struct {
         const char *word;
@@ -217,7 +224,7 @@ static bool read_side(const char *piece, size_t length, double *x, double *y)
     const char *rest;
 
     if (reading.problem == NULL) {
-        struct unit_reading with = unit_read(piece, length, QUANTITY_LENGTH, "m");
+        struct unit_reading with = unit_read(piece, length, QUANTITY_LENGTH, unit);
         if (with.problem == NULL && with.length >= reading.length)
             reading = with;
     }
@@ -252,7 +259,8 @@ static bool check_closed(struct own_outline *outline, double x, double y, struct
     return true;
 }
 
-bool own_read_sides(const char *string, struct own_outline *outline, struct text *trouble)
+bool own_read_sides(const char *string, const char *unit, struct own_outline *outline,
+                    struct text *trouble)
 {
     double x = 0, y = 0;
 
@@ -267,7 +275,7 @@ bool own_read_sides(const char *string, struct own_outline *outline, struct text
             end--;
         if (end == 0 || (end >= 1 && strncmp(piece, "close", end < 5 ? end : 5) == 0))
             continue;
-        if (!read_side(piece, end, &x, &y) || outline->count >= OWN_CORNERS_MOST - 1) {
+        if (!read_side(piece, end, unit, &x, &y) || outline->count >= OWN_CORNERS_MOST - 1) {
             text_format(trouble, "'%.*s': write sides like 36 east, 12 north, 12 west, close.",
                         (int)(end < 40 ? end : 40), piece);
             return false;
@@ -289,11 +297,15 @@ static void add_point(struct text *out, double x, double y)
 bool own_write(const struct own *own, struct text *out, struct text *trouble)
 {
     struct own_outline outline;
+    struct unit_reading thickness;
     char word[CHOICE_MOST];
 
     if (!own_make_outline(own, &outline, trouble))
         return false;
-    if (own->thickness[0] == '\0') {
+    thickness = unit_read(own->thickness, strlen(own->thickness), QUANTITY_SMALL_LENGTH,
+                          own->practice == PRACTICE_US ? "in" : "mm");
+    if (own->thickness[0] == '\0' || thickness.problem != NULL ||
+        thickness.length != strlen(own->thickness)) {
         text_add(trouble, "Thickness: read it from the drawing, such as 150 mm or 6 in.");
         return false;
     }
@@ -304,7 +316,10 @@ bool own_write(const struct own *own, struct text *out, struct text *trouble)
         text_add(out, "units = us\n");
     field_choice_word(&field_table[FIELD_slab_use], own->use, word, sizeof word);
     text_format(out, "[slab]\nuse = %s\n", word);
-    text_format(out, "thickness = %s\n", own->thickness);
+    text_add(out, "thickness = ");
+    unit_write(out, thickness.si, QUANTITY_SMALL_LENGTH,
+               own->practice == PRACTICE_US ? UNITS_US : UNITS_METRIC);
+    text_add(out, "\n");
     text_add(out, "[outline]\n");
     for (int i = 0; i < outline.count; i++)
         add_point(out, outline.x[i], outline.y[i]);

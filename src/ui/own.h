@@ -53,8 +53,10 @@ struct own_outline {
 };
 /* The corners in metres from the sizes; false with one sentence when they make no slab. */
 bool own_make_outline(const struct own *own, struct own_outline *outline, struct text *trouble);
-/* "36 east, 12 north, ..., close" to corners; false with one sentence. */
-bool own_read_sides(const char *string, struct own_outline *outline, struct text *trouble);
+/* "36 east, 12 north, ..., close" to corners, bare numbers in `unit` (m, ft); false with one
+ * sentence. */
+bool own_read_sides(const char *string, const char *unit, struct own_outline *outline,
+                    struct text *trouble);
 /* A whole job file with only what was asked typed in it; false as above. */
 bool own_write(const struct own *own, struct text *out, struct text *trouble);
 

@@ -206,7 +206,7 @@ static void add_object(struct app *app)
 }
 
 /* Both sizes of "1.2 x 1.2 m"; false when they are none. */
-static bool read_sizes(const char *string, double *w, double *d)
+static bool read_sizes(const char *string, const char *bare, double *w, double *d)
 {
     const char *x = strchr(string, 'x');
     const char *unit = string + strcspn(string, "fimc");
@@ -217,8 +217,8 @@ static bool read_sizes(const char *string, double *w, double *d)
         return false;
     snprintf(first, sizeof first, "%.*s%s", (int)(x - string), string, unit < x ? "" : unit);
     x += 1 + strspn(x + 1, " ");
-    a = unit_read(first, strlen(first), QUANTITY_LENGTH, "m");
-    b = unit_read(x, strlen(x), QUANTITY_LENGTH, "m");
+    a = unit_read(first, strlen(first), QUANTITY_LENGTH, bare);
+    b = unit_read(x, strlen(x), QUANTITY_LENGTH, bare);
     *w = a.si;
     *d = b.si;
     return a.problem == NULL && b.problem == NULL && a.si > 0 && b.si > 0;
@@ -230,7 +230,8 @@ static void add_hole(struct app *app)
     char name[16], path[64], at[64], words[WORDS_MOST];
     double w, d;
 
-    if (!read_sizes(app->editor.bytes, &w, &d)) {
+    if (!read_sizes(app->editor.bytes, unit_name(QUANTITY_LENGTH, app_units(app)),
+                    &w, &d)) {
         app_tell(app, "Type two sizes, such as 1.2 x 1.2 m.");
         return;
     }
@@ -294,25 +295,33 @@ void plan_add(struct app *app)
         add_object(app);
 }
 
+/* One number of "10.4 4.9", "10.4 m, 4.9 m", "34 ft 16 ft"; moves behind it. */
+static bool read_coordinate(const char **string, const char *bare, double *out)
+{
+    size_t length = strcspn(*string, " ,;");
+    struct unit_reading reading;
+
+    length += strspn(*string + length, " ");
+    if (strncmp(*string + length, "m", 1) == 0 || strncmp(*string + length, "ft", 2) == 0)
+        length += strcspn(*string + length, " ,;");
+    reading = unit_read(*string, length, QUANTITY_LENGTH, bare);
+    *string += reading.length;
+    *string += strspn(*string, " ,;");
+    *out = reading.si;
+    return reading.problem == NULL && fabs(reading.si) < 1e5;
+}
+
 void plan_cross_to(struct app *app)
 {
     double x, y;
-    const char *string = app->editor.bytes;
-    struct unit_reading east = unit_read_number(string, strlen(string)), north;
+    const char *string = app->editor.bytes, *bare = unit_name(QUANTITY_LENGTH, app_units(app));
 
-    if (east.problem == NULL) {
-        string += east.length;
-        string += strspn(string, " ,;m");
-        north = unit_read_number(string, strlen(string));
-        x = east.si;
-        y = north.si;
-        if (north.problem == NULL && fabs(x) < 1e5 && fabs(y) < 1e5) {
-            app->cross_x = x;
-            app->cross_y = y;
-            return;
-        }
+    if (read_coordinate(&string, bare, &x) && read_coordinate(&string, bare, &y)) {
+        app->cross_x = x;
+        app->cross_y = y;
+        return;
     }
-    app_tell(app, "Type metres east and north of the corner, such as 10.4 4.9.");
+    app_tell(app, "Type how far east and north of the corner, such as 10.4 4.9.");
 }
 
 /* ---- taking away ---- */

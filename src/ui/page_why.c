@@ -1,4 +1,5 @@
 /* Why: the ladder behind an answer; Enter goes to the field of a line. */
+#include "base/utf8.h"
 #include "plan/why.h"
 #include "ui/app_ask.h"
 #include <stdlib.h>
@@ -47,14 +48,26 @@ static bool row(const struct app *app, int index, struct entry *out)
     return false;
 }
 
-static void draw_line(const struct app *app, struct canvas *canvas, const struct why_line *line,
-                      int at, bool in_hand)
+/* Column where the words begin: behind the longest step number or symbol. */
+static int words_column(const struct why *why)
 {
-    bool wide = app->columns >= 110;
-    int words = wide ? 58 : 50, value = wide ? 92 : 61;
+    int longest = 1;
 
-    canvas_format(canvas, at, 0, 4, STYLE_PLAIN, "%c%s", in_hand ? '>' : ' ', line->step);
-    canvas_words(canvas, at, 4, words - 4, STYLE_PLAIN, line->words);
+    for (size_t i = 0; i < why->line_count; i++)
+        longest =
+            longest > utf8_columns(why->lines[i].step) ? longest : utf8_columns(why->lines[i].step);
+    return longest + 3;
+}
+
+static void draw_line(const struct app *app, struct canvas *canvas, const struct why *why,
+                      int index, int at)
+{
+    bool wide = app->columns >= 110, in_hand = index == app->at[PAGE_WHY];
+    const struct why_line *line = &why->lines[index];
+    int begin = words_column(why), words = wide ? 58 : 50, value = wide ? 92 : 61;
+
+    canvas_format(canvas, at, 0, begin, STYLE_PLAIN, "%c%s", in_hand ? '>' : ' ', line->step);
+    canvas_words(canvas, at, begin, words - begin, STYLE_PLAIN, line->words);
     if (wide)
         canvas_words(canvas, at, words + 2, 30, STYLE_PLAIN, line->sum);
     canvas_right(canvas, at, words + (wide ? 32 : 1), value - words - (wide ? 32 : 1), STYLE_PLAIN,
@@ -76,6 +89,14 @@ static int draw_words(const struct app *app, struct canvas *canvas, int row_at, 
     return used;
 }
 
+/* One short word: the columns are narrow. */
+static const char *try_word(const char *verdict)
+{
+    if (strcmp(verdict, "FAILS") == 0)
+        return "fails";
+    return strcmp(verdict, "JUST HOLDS") == 0 ? "just" : "";
+}
+
 static int draw_tries(const struct app *app, struct canvas *canvas, const struct why *why, int at)
 {
     int half = app->columns >= 110 ? 56 : 36, used = 0;
@@ -86,9 +107,8 @@ static int draw_tries(const struct app *app, struct canvas *canvas, const struct
     for (size_t i = 0; i < why->try_count && i < 8; i++) {
         int column = 8 + (i % 2 ? half : 0);
         used = (int)i / 2;
-        canvas_format(canvas, at + used, column, half - 1, STYLE_PLAIN, "%.*s %s %s", half - 11,
-                      why->tries[i].words, why->tries[i].value,
-                      strcmp(why->tries[i].verdict, "HOLDS") != 0 ? why->tries[i].verdict : "");
+        canvas_format(canvas, at + used, column, half - 1, STYLE_PLAIN, "%-18s%8s  %s",
+                      why->tries[i].words, why->tries[i].value, try_word(why->tries[i].verdict));
     }
     return used + 1;
 }
@@ -106,7 +126,7 @@ static void draw_why(const struct app *app, struct canvas *canvas, const struct 
     ladder = (int)why->line_count < ladder ? (int)why->line_count : ladder;
     first = draw_scroll((int)why->line_count, ladder, app->at[PAGE_WHY]);
     for (int i = 0; i < ladder; i++)
-        draw_line(app, canvas, &why->lines[first + i], at++, first + i == app->at[PAGE_WHY]);
+        draw_line(app, canvas, why, first + i, at++);
     canvas_rule(canvas, at++);
     at += draw_tries(app, canvas, why, at);
     at += draw_words(app, canvas, at, "FORMULA", why->formula, end - at < 2 ? end - at : 2);

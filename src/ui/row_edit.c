@@ -52,6 +52,19 @@ static void decimal_comma(char *string)
             *c = '.';
 }
 
+static const struct field *field_at_path(const char *path)
+{
+    char section[64];
+    const char *dot = strchr(path, '.');
+    enum field_id id;
+
+    if (dot == NULL || (size_t)(dot - path) >= sizeof section)
+        return NULL;
+    snprintf(section, sizeof section, "%.*s", (int)(dot - path), path);
+    id = field_id_of(section, dot + 1);
+    return id < FIELD_COUNT ? &field_table[id] : NULL;
+}
+
 static void item(struct change_item *out, enum field_id id, const char *value)
 {
     *out = (struct change_item){0};
@@ -145,6 +158,27 @@ static size_t read_row(const struct entry *row, const char *string, struct chang
     return 1;
 }
 
+/* A bare number counts in the unit the form shows; the file gets it written out. A bare share of 1
+ * and more is per cent. */
+static void add_unit(const struct app *app, struct change_item *changed)
+{
+    const struct field *field = field_at_path(changed->path);
+    size_t length = strlen(changed->value);
+    struct unit_reading reading;
+    const char *unit;
+
+    if (field == NULL || field->type != FIELD_NUMBER || length == 0)
+        return;
+    reading = unit_read_number(changed->value, length);
+    if (reading.problem != NULL || reading.length != length)
+        return;
+    unit = field->quantity == QUANTITY_TIME ? field_time_unit(field)
+                                            : unit_name(field->quantity, app_units(app));
+    if (unit[0] == '\0' || (field->quantity == QUANTITY_RATIO && reading.si < 1))
+        return;
+    snprintf(changed->value + length, sizeof changed->value - length, " %s", unit);
+}
+
 bool row_apply(struct app *app, const struct entry *row, const char *string)
 {
     struct change_item items[2];
@@ -160,6 +194,8 @@ bool row_apply(struct app *app, const struct entry *row, const char *string)
     if (row->field != NULL && row->field->type == FIELD_NUMBER)
         decimal_comma(typed);
     count = read_row(row, typed, items);
+    for (size_t i = 0; i < count; i++)
+        add_unit(app, &items[i]);
     row_show(app, row, &old);
     done = edit_change(app, items, count, row->label);
     if (done) {

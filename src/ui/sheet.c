@@ -207,9 +207,10 @@ void row_show_year(const struct app *app, const struct entry *row, struct text *
     }
     if (app_units(app) == UNITS_US)
         cold = cold * 1.8 + 32, hot = hot * 1.8 + 32;
-    unit_add_number(out, cold, 1);
+    /* an estimate is good to a degree at best */
+    unit_add_number(out, cold, row_given(app, row) ? 1 : 0);
     text_add(out, " to ");
-    unit_add_number(out, hot, 1);
+    unit_add_number(out, hot, row_given(app, row) ? 1 : 0);
     text_add(out, app_units(app) == UNITS_US ? " °F" : " °C");
 }
 

@@ -1,5 +1,5 @@
 /* Units. Oracle: the program GNU units (its own definitions of every unit), through popen; the
- * grammar cases are formats.md's own ("quantity", "feet", "inches"). */
+ * grammar cases are docs/format.md's own ("quantity", "feet", "inches"). */
 #include "base/unit.h"
 #include <math.h>
 #include <setjmp.h>

@@ -97,7 +97,8 @@ static json_t *member_with(json_t *list, const char *key, const char *value)
     size_t i;
     json_t *item;
 
-    json_array_foreach (list, i, item) {
+    json_array_foreach(list, i, item)
+    {
         json_t *member = json_object_get(item, key);
         if (json_is_string(member) && strcmp(json_string_value(member), value) == 0)
             return item;
@@ -150,10 +151,11 @@ static void expect_finding(struct scenario *s, const char *field, const char *se
     json_t *findings = json_object_get(s->result, "findings"), *item;
     size_t i;
 
-    json_array_foreach (findings, i, item)
-        if (strcmp(json_string_value(json_object_get(item, "field")), field) == 0 &&
-            strcmp(json_string_value(json_object_get(item, "severity")), severity) == 0)
-            return;
+    json_array_foreach(
+        findings, i,
+        item) if (strcmp(json_string_value(json_object_get(item, "field")), field) == 0 &&
+                  strcmp(json_string_value(json_object_get(item, "severity")), severity) ==
+                      0) return;
     fail_msg("%s:%d: no %s for %s", s->file, s->line, severity, field);
 }
 

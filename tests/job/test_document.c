@@ -1,4 +1,4 @@
-/* The grammar of the job file. Every case is a rule of formats.md "Grammar" (the contract of the
+/* The grammar of the job file. Every case is a rule of docs/format.md "Grammar" (the contract of the
  * file format); the sample is the complete job that the page prints. */
 #include "job_help.h"
 #include <math.h>
@@ -199,7 +199,7 @@ static void test_rows_members_and_arcs(void **state)
     unload(&l);
 }
 
-/* screens.md F21: what tickets and tins print */
+/* what tickets and tins print */
 static void test_tickets_and_tins(void **state)
 {
     static const struct {
@@ -289,7 +289,7 @@ static void test_caps(void **state)
     text_free(&text);
 }
 
-/* ---- the sample of formats.md ---- */
+/* ---- the sample of docs/format.md ---- */
 
 static char *read_whole(const char *path, size_t *count)
 {

@@ -1,4 +1,4 @@
-/* Defaults, contradictions and the checks of the drawing. Defaults: formats.md "When a key is
+/* Defaults, contradictions and the checks of the drawing. Defaults: docs/format.md "When a key is
  * missing". Friction, slip and factor by base: the same table. */
 #include "job_help.h"
 #include <math.h>

@@ -1,4 +1,4 @@
-/* PATH = VALUE. Every case is a sentence of formats.md "What set can address" or of its rule on
+/* PATH = VALUE. Every case is a sentence of docs/format.md "What set can address" or of its rule on
  * saving: only the value of a changed line changes. */
 #include "job_help.h"
 

@@ -161,13 +161,13 @@ static void test_sides(void **state)
 
     (void)state;
     assert_true(
-        own_read_sides("36 east, 12 north, 12 west, 12 north, 24 west, close", &outline, &trouble));
+        own_read_sides("36 east, 12 north, 12 west, 12 north, 24 west, close", "m", &outline, &trouble));
     assert_int_equal(outline.count, 6);
     assert_true(fabs(ring_area(&outline) - (36 * 12 + 24 * 12)) < 1e-9);
-    assert_false(own_read_sides("36 east, 12 north, 12.4 west", &outline, &trouble));
+    assert_false(own_read_sides("36 east, 12 north, 12.4 west", "m", &outline, &trouble));
     assert_non_null(strstr(text_string(&trouble), "23.60 m east"));
-    assert_false(own_read_sides("36 up", &outline, &trouble));
-    assert_false(own_read_sides("", &outline, &trouble));
+    assert_false(own_read_sides("36 up", "m", &outline, &trouble));
+    assert_false(own_read_sides("", "m", &outline, &trouble));
     text_free(&trouble);
 }
 
@@ -281,14 +281,37 @@ static void test_example_never_leaks(void **state)
     press(app, "~");
     app_write(app, &bytes);
     assert_string_equal(text_string(&bytes), "format = 1\n[job]\npractice = plain\n[slab]\nuse = "
-                                             "yard\nthickness = 150\n[outline]\npoint = 0, 0 m\n"
+                                             "yard\nthickness = 150 mm\n[outline]\npoint = 0, 0 m\n"
                                              "point = 20, 0 m\npoint = 20, 10 m\npoint = 0, 10 "
                                              "m\n");
     text_free(&bytes);
     app_free(app);
 }
 
-/* The issue's own path: L-shaped slab, thickness, column on the plan, why, save. */
+/* In US units a bare number is inches, feet, degF: never silently metric. */
+static void test_bare_numbers_us(void **state)
+{
+    struct app *app = app_make(test_day);
+    struct text bytes = {0};
+    static const char job[] = "format = 1\n[job]\npractice = us\nunits = us\n[slab]\nthickness = "
+                              "6 in\n[outline]\npoint = 0, 0 ft\npoint = 60, 0 ft\npoint = 60, 30 "
+                              "ft\npoint = 0, 30 ft\n";
+
+    (void)state;
+    app_load(app, job, sizeof job - 1, "floor.slab", false);
+    press(app, "8~");
+    assert_true(shows(app, "8 in"));
+    app_write(app, &bytes);
+    assert_non_null(strstr(text_string(&bytes), "thickness = 8 in"));
+    press(app, "p30 15~a~~"); /* a column 30 ft east, 15 ft north */
+    text_clear(&bytes);
+    app_write(app, &bytes);
+    assert_non_null(strstr(text_string(&bytes), "at = 9.144, 4.572 m"));
+    text_free(&bytes);
+    app_free(app);
+}
+
+/* A user's whole path: L-shaped slab, thickness, column on the plan, why, save. */
 static void test_new_user(void **state)
 {
     struct app *app = open_example(true);
@@ -490,6 +513,7 @@ int main(void)
         cmocka_unit_test(test_arrows_change_nothing),
         cmocka_unit_test(test_choice),
         cmocka_unit_test(test_example_never_leaks),
+        cmocka_unit_test(test_bare_numbers_us),
         cmocka_unit_test(test_new_user),
         cmocka_unit_test(test_leave_asks),
         cmocka_unit_test(test_every_field_reachable),
