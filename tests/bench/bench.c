@@ -1,0 +1,189 @@
+/* How fast: medians of several runs, beside a general-purpose reference in the same run. Prints,
+ * never judges: these machines are noisy. Run from the root of the project.
+ *   first screen   program start to the last byte of the first full screen, in a pty, against
+ *                  starting /bin/true
+ *   keystroke      the whole chain (plan_make) on an example, against GEOS polygonising the same
+ *                  joints and edges (only to name the panels, no rule, no movement) */
+#include "job/document.h"
+#include "plan/plan.h"
+#include <geos_c.h>
+#include <pty.h>
+#include <signal.h>
+#include <stdio.h>
+#include <stdlib.h>
+#include <string.h>
+#include <sys/wait.h>
+#include <time.h>
+#include <unistd.h>
+
+enum { RUNS = 9 };
+
+static double now_ms(void)
+{
+    struct timespec t;
+
+    clock_gettime(CLOCK_MONOTONIC, &t);
+    return 1000.0 * (double)t.tv_sec + (double)t.tv_nsec / 1e6;
+}
+
+static int less(const void *a, const void *b)
+{
+    double x = *(const double *)a, y = *(const double *)b;
+
+    return (x > y) - (x < y);
+}
+
+static double median(double *values, size_t count)
+{
+    qsort(values, count, sizeof *values, less);
+    return values[count / 2];
+}
+
+static void row(const char *what, double ms, const char *reference, double reference_ms)
+{
+    printf("%-34s %9.3f ms   %-22s %9.3f ms   ratio %.3f\n", what, ms, reference, reference_ms,
+           reference_ms > 0 ? ms / reference_ms : 0.0);
+}
+
+/* ---- start to first screen ---- */
+
+/* Starts a program in a pty of 80x24 and reads until `last` has come (NULL: until it ends). */
+static double start_ms(const char *path, const char *argument, const char *last)
+{
+    struct winsize size = {.ws_row = 24, .ws_col = 80};
+    char bytes[65536];
+    size_t count = 0;
+    double begin = now_ms(), end;
+    int master;
+    pid_t pid = forkpty(&master, NULL, NULL, &size);
+
+    if (pid == 0) {
+        setenv("TERM", "xterm", 1);
+        setenv("LC_ALL", "C.UTF-8", 1);
+        execl(path, path, argument, (char *)NULL);
+        _exit(127);
+    }
+    for (;;) {
+        ssize_t got = read(master, bytes + count, sizeof bytes - count - 1);
+        if (got <= 0)
+            break;
+        count += (size_t)got;
+        bytes[count] = '\0';
+        if (last != NULL && strstr(bytes, last) != NULL)
+            break;
+    }
+    end = now_ms();
+    kill(pid, SIGHUP);
+    close(master);
+    waitpid(pid, NULL, 0);
+    return end - begin;
+}
+
+static void bench_start(void)
+{
+    double ours[RUNS], reference[RUNS];
+
+    for (int i = 0; i < RUNS; i++) {
+        ours[i] = start_ms(SLABGAP_BINARY, "share/examples/e1-service-yard.slab", "Esc");
+        reference[i] = start_ms("/bin/true", NULL, NULL);
+    }
+    row("start to first screen, E1", median(ours, RUNS), "start of /bin/true",
+        median(reference, RUNS));
+}
+
+/* ---- one keystroke ---- */
+
+static bool load(const char *path, struct job *job)
+{
+    struct finding_list findings = {0};
+    struct document *document = NULL;
+    static char bytes[1 << 20];
+    FILE *file = fopen(path, "rb");
+    size_t count;
+
+    if (file == NULL)
+        return false;
+    count = fread(bytes, 1, sizeof bytes, file);
+    fclose(file);
+    job_init(job);
+    document_parse(bytes, count, &document, &findings);
+    document_job(document, job, &findings);
+    document_free(document);
+    finding_free(&findings);
+    return true;
+}
+
+static GEOSGeometry *line(GEOSContextHandle_t geos, double x1, double y1, double x2, double y2)
+{
+    GEOSCoordSequence *points = GEOSCoordSeq_create_r(geos, 2, 2);
+
+    GEOSCoordSeq_setXY_r(geos, points, 0, x1, y1);
+    GEOSCoordSeq_setXY_r(geos, points, 1, x2, y2);
+    return GEOSGeom_createLineString_r(geos, points);
+}
+
+/* Union (nodes the lines) and polygonise. */
+static double polygonise_ms(GEOSContextHandle_t geos, const struct layout *layout, int *panels)
+{
+    size_t count = 0, n = layout->outline_count;
+    GEOSGeometry **lines = calloc(layout->joint_count + n, sizeof *lines);
+    GEOSGeometry *all, *noded, *made;
+    double begin, end;
+
+    for (size_t i = 0; i < n; i++)
+        lines[count++] = line(geos, layout->outline[i].x, layout->outline[i].y,
+                              layout->outline[(i + 1) % n].x, layout->outline[(i + 1) % n].y);
+    for (size_t i = 0; i < layout->joint_count; i++)
+        if (layout->joints[i].edge < 0 && layout->joints[i].opening < 0)
+            lines[count++] = line(geos, layout->joints[i].x1, layout->joints[i].y1,
+                                  layout->joints[i].x2, layout->joints[i].y2);
+    begin = now_ms();
+    all = GEOSGeom_createCollection_r(geos, GEOS_MULTILINESTRING, lines, (unsigned)count);
+    noded = GEOSUnaryUnion_r(geos, all);
+    made = GEOSPolygonize_r(geos, (const GEOSGeometry *const *)&noded, 1);
+    *panels = GEOSGetNumGeometries_r(geos, made);
+    end = now_ms();
+    GEOSGeom_destroy_r(geos, made);
+    GEOSGeom_destroy_r(geos, noded);
+    GEOSGeom_destroy_r(geos, all);
+    free(lines);
+    return end - begin;
+}
+
+static void bench_keystroke(const char *name, const char *path)
+{
+    GEOSContextHandle_t geos = GEOS_init_r();
+    double chain[RUNS], reference[RUNS];
+    struct job job;
+    int panels = 0;
+    char what[64];
+
+    if (!load(path, &job))
+        return;
+    for (int i = 0; i < RUNS; i++) {
+        enum { REPEATS = 10 };
+        double begin = now_ms();
+        struct plan plan;
+        for (int k = 0; k < REPEATS; k++) {
+            plan_make(&job, NULL, NULL, &plan);
+            if (k + 1 < REPEATS)
+                plan_free(&plan);
+        }
+        chain[i] = (now_ms() - begin) / REPEATS;
+        reference[i] = polygonise_ms(geos, &plan.layout, &panels);
+        plan_free(&plan);
+    }
+    snprintf(what, sizeof what, "one keystroke, %s (whole chain)", name);
+    row(what, median(chain, RUNS), "GEOS polygonise", median(reference, RUNS));
+    job_free(&job);
+    GEOS_finish_r(geos);
+}
+
+int main(void)
+{
+    bench_start();
+    bench_keystroke("E1", "share/examples/e1-service-yard.slab");
+    bench_keystroke("E2", "share/examples/e2-store-floor.slab");
+    bench_keystroke("E3", "share/examples/e3-two-lane-road.slab");
+    return 0;
+}
