@@ -297,7 +297,7 @@ static int legend_rows(const struct plan *plan, bool ascii, char rows[8][40])
     snprintf(rows[n++], 40, "N up");
     snprintf(rows[n++], 40, "%zu panels", plan->layout.panel_count);
     if (broken > 0)
-        snprintf(rows[n++], 40, "! breaks a rule");
+        snprintf(rows[n++], 40, "! breaks rule");
     return n;
 }
 

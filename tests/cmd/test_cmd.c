@@ -1,5 +1,5 @@
 /* The command line as a user meets it: exit status, what goes where, wrong arguments, files that
- * are none. What is expected is formats.md: "Commands", "Exit status, checks, findings". */
+ * are none. What is expected is docs/format.md: "Commands", "Exit status, checks, findings". */
 #include "cmd_help.h"
 
 #define E1 "share/examples/e1-service-yard.slab"
