@@ -124,7 +124,7 @@ fuzz: build/packages-check
 	$(MAKE) --no-print-directory -j$(JOBS) B=build/fuzz CC=clang OPT='-O1 -g' HARDEN= \
 	    SAN='-fsanitize=address,undefined,fuzzer-no-link' $(FUZZERS)
 	for f in $(FUZZERS); do mkdir -p $$f.corpus && \
-	    $$f -max_total_time=$(FUZZ_SECONDS) -timeout=10 -print_final_stats=1 $$f.corpus || exit 1; done
+	    $$f -max_total_time=$(FUZZ_SECONDS) -timeout=10 -artifact_prefix=$$f- -print_final_stats=1 $$f.corpus || exit 1; done
 build/fuzz/fuzz_%: tests/fuzz/fuzz_%.c $(call archives,$(libs_ui))
 	$(CC) $(CFLAGS) -fsanitize=fuzzer $(LDFLAGS) -Itests -o $@ $< $(filter %.a,$^) $(CURSES) $(LIBS)
 

@@ -431,7 +431,8 @@ static bool contains(const char *paths, const char *path)
 {
     size_t length = strlen(path);
 
-    for (const char *at = strstr(paths, path); at != NULL; at = strstr(at + 1, path)) {
+    for (const char *at = length > 0 ? strstr(paths, path) : NULL; at != NULL;
+         at = strstr(at + 1, path)) {
         bool begins = at == paths || at[-1] == ' ';
         if (begins && (at[length] == ' ' || at[length] == '\0'))
             return true;
