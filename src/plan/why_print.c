@@ -21,18 +21,18 @@ static void paragraph(struct text *out, const char *label, const char *words)
         return;
     text_add(out, label);
     pad_to(out, start, 10);
-    while (*words != '\0') {
+    for (bool blank = false; *words != '\0'; blank = true) {
         size_t length = strcspn(words, " ");
-        if (utf8_columns(text_string(out) + start) + (int)length > WHY_COLUMNS) {
+        if (utf8_columns(text_string(out) + start) + blank + (int)length > WHY_COLUMNS) {
             text_add_char(out, '\n', 1);
             start = out->length;
             text_add_char(out, ' ', 10);
+        } else if (blank) {
+            text_add_char(out, ' ', 1);
         }
         text_add_bytes(out, words, length);
         words += length;
         words += strspn(words, " ");
-        if (*words != '\0')
-            text_add_char(out, ' ', 1);
     }
     text_add_char(out, '\n', 1);
 }
