@@ -41,7 +41,7 @@ static void add_results(struct text *out, const struct plan *plan, const char *g
         size_t start = out->length;
         if (strncmp(result->path, group, length) != 0 || result->path[length] != '.')
             continue;
-        if (result->type == RESULT_NUMBER && !isfinite(result_number(result, plan)))
+        if (!result_there(result, plan))
             continue;
         text_format(out, "  %s", result->label);
         pad(out, start, LABEL_COLUMNS);
@@ -54,8 +54,10 @@ static void add_answers(struct text *out, const struct plan *plan)
 {
     struct answers answers;
 
-    text_format(out, "%s\n\n", plan->job.given[FIELD_job_title] ? plan->job.job_title
-                                                                 : "A job without a title");
+    wrap_add(out, "", 0,
+             plan->job.given[FIELD_job_title] ? plan->job.job_title : "A job without a title",
+             REPORT_COLUMNS);
+    text_add_char(out, '\n', 1);
     answers_make(plan, &answers);
     for (size_t i = 0; i < answers.count; i++) {
         wrap_add(out, answers.rows[i].word, 12, answers.rows[i].sentence, REPORT_COLUMNS);
@@ -108,17 +110,36 @@ static const char *column_label(const struct list *list, const char *key)
     return "";
 }
 
-/* Widest cell of a column, its label included. */
-static int column_width(const struct list *list, const char *key, const void *const arrays[2],
-                        size_t rows, enum unit_system units)
+/* A list as it is printed: the columns named in `keys`. */
+struct table {
+    const struct list *list;
+    const char *const *keys;
+    size_t columns, rows;
+    const void *arrays[2];
+    enum unit_system units;
+    int widths[COLUMNS_MOST];
+    bool first_alone; /* too wide for one line: the first cell has its own */
+};
+
+/* Row 0 is the labels. */
+static void table_cell(struct text *out, const struct table *table, size_t column, size_t row)
 {
-    int width = utf8_columns(column_label(list, key));
+    if (row == 0)
+        text_add(out, column_label(table->list, table->keys[column]));
+    else
+        cell(out, table->list, table->keys[column], table->arrays, row - 1, table->units);
+}
+
+/* Widest cell of a column, its label included. */
+static int column_width(const struct table *table, size_t column)
+{
+    int width = 0;
     struct text text = {0};
 
-    for (size_t r = 0; r < rows; r++) {
+    for (size_t r = 0; r <= table->rows; r++) {
         int columns;
         text_clear(&text);
-        cell(&text, list, key, arrays, r, units);
+        table_cell(&text, table, column, r);
         columns = utf8_columns(text_string(&text));
         width = columns > width ? columns : width;
     }
@@ -126,34 +147,57 @@ static int column_width(const struct list *list, const char *key, const void *co
     return width;
 }
 
+static void set_widths(struct table *table)
+{
+    enum { WORDS = 24 }; /* a last column wider than this holds words and is wrapped */
+    int total = 0;
+
+    for (size_t k = 0; k < table->columns; k++) {
+        table->widths[k] = column_width(table, k);
+        total += table->widths[k] + 2;
+    }
+    table->first_alone = total > REPORT_COLUMNS && table->widths[table->columns - 1] <= WORDS;
+}
+
+static void add_row(struct text *out, const struct table *table, size_t row)
+{
+    size_t last = table->columns - 1;
+    struct text line = {0}, words = {0};
+    int column = 2;
+
+    text_add(&line, "  ");
+    for (size_t k = 0; k < last; k++) {
+        table_cell(&line, table, k, row);
+        column += table->widths[k] + 2;
+        if (k == 0 && table->first_alone) {
+            text_format(out, "%s\n", text_string(&line));
+            text_clear(&line);
+            column = 4;
+        }
+        pad(&line, 0, column);
+    }
+    table_cell(&words, table, last, row);
+    wrap_add(out, text_string(&line), column, text_string(&words), REPORT_COLUMNS);
+    out->failed = out->failed || line.failed || words.failed;
+    text_free(&line);
+    text_free(&words);
+}
+
 /* A list as a table: the columns named in `keys` (ended by NULL), at most `most` rows. */
 static void add_list(struct text *out, const struct plan *plan, const char *name,
                      const char *const *keys, size_t most)
 {
-    const struct list *list = list_find(name);
-    const void *arrays[2];
-    size_t rows = list->rows(plan, arrays), shown = rows < most ? rows : most;
-    int widths[COLUMNS_MOST];
+    struct table table = {.list = list_find(name), .keys = keys, .units = units_of(plan)};
+    size_t rows = table.list->rows(plan, table.arrays);
 
-    for (size_t k = 0; keys[k] != NULL; k++)
-        widths[k] = column_width(list, keys[k], arrays, shown, units_of(plan));
-    for (size_t r = 0; r <= shown; r++) { /* row 0: the labels */
-        size_t start = out->length;
-        int column = 2;
-        text_add(out, "  ");
-        for (size_t k = 0; keys[k] != NULL; k++) {
-            if (r == 0)
-                text_add(out, column_label(list, keys[k]));
-            else
-                cell(out, list, keys[k], arrays, r - 1, units_of(plan));
-            column += widths[k] + 2;
-            if (keys[k + 1] != NULL)
-                pad(out, start, column);
-        }
-        text_add_char(out, '\n', 1);
-    }
-    if (shown < rows)
-        text_format(out, "  + %zu more (--csv %s or --json)\n", rows - shown, name);
+    while (keys[table.columns] != NULL)
+        table.columns++;
+    table.rows = rows < most ? rows : most;
+    set_widths(&table);
+    for (size_t r = 0; r <= table.rows; r++)
+        add_row(out, &table, r);
+    if (table.rows < rows)
+        text_format(out, "  + %zu more (--csv %s or --json)\n", rows - table.rows, name);
 }
 
 static void add_spacing(struct text *out, const struct plan *plan)
@@ -272,8 +316,8 @@ static void add_restraint(struct text *out, const struct plan *plan)
     add_results(out, plan, "restraint");
     if (plan->restraint.rise_left_k < RESTRAINT_LITTLE_K)
         text_add(out, "  A long run whose joints have closed has no blow-up margin.\n");
-    text_add(out, "  Lift-off limit of a clean, straight, sound slab; worn joint faces, a wet base,\n"
-                  "  swelling and grit lower it.\n");
+    text_add(out, "  Lift-off limit of a clean, straight, sound slab; worn joint faces, a wet\n"
+                  "  base, swelling and grit lower it.\n");
 }
 
 static void add_quantities(struct text *out, const struct plan *plan)

@@ -37,6 +37,22 @@ static void paragraph(struct text *out, const char *label, const char *words)
     text_add_char(out, '\n', 1);
 }
 
+/* A value at its column; a long one begins further left, if need be on a line of its own. */
+static void add_value(struct text *out, size_t *line_start, const char *value)
+{
+    enum { VALUE_COLUMN = 54, FROM_COLUMN = 66 };
+    int width = utf8_columns(value);
+    int column = width < FROM_COLUMN - VALUE_COLUMN ? VALUE_COLUMN : FROM_COLUMN - 1 - width;
+
+    if (utf8_columns(text_string(out) + *line_start) >= column) {
+        text_add_char(out, '\n', 1);
+        *line_start = out->length;
+    }
+    pad_to(out, *line_start, column);
+    text_add(out, value);
+    pad_to(out, *line_start, FROM_COLUMN);
+}
+
 static void add_line(struct text *out, const struct why_line *line)
 {
     size_t start = out->length;
@@ -50,9 +66,7 @@ static void add_line(struct text *out, const struct why_line *line)
         pad_to(out, start, 15);
         text_add(out, line->sum);
     }
-    pad_to(out, start, 54);
-    text_add(out, line->value);
-    pad_to(out, start, 66);
+    add_value(out, &start, line->value);
     text_add(out, line->from);
     while (out->length > 0 && out->bytes[out->length - 1] == ' ')
         out->bytes[--out->length] = '\0';
@@ -73,9 +87,7 @@ void why_print(struct text *out, const struct why *why)
         text_add(out, i == 0 ? "TRY" : "");
         pad_to(out, start, 10);
         text_add(out, why->tries[i].words);
-        pad_to(out, start, 54);
-        text_add(out, why->tries[i].value);
-        pad_to(out, start, 66);
+        add_value(out, &start, why->tries[i].value);
         text_format(out, "%s\n", why->tries[i].verdict);
     }
     paragraph(out, "VALID", why->valid);
