@@ -54,6 +54,8 @@ static void limit_sentence(const struct plan *plan, char *out, size_t size)
     if (rule != NULL && strcmp(rule, "typed") == 0)
         snprintf(out, size, "Your limit; %s would be %s.", plan->spacing.rule_words,
                  LENGTH(plan->spacing.rule_limit_m));
+    else if (strncmp(plan->spacing.rule_words, "at most", 7) == 0)
+        snprintf(out, size, "Limit: %s.", plan->spacing.rule_words);
     else
         snprintf(out, size, "Limit set by %s.", plan->spacing.rule_words);
 }
@@ -222,6 +224,14 @@ static void answer_holds(const struct plan *plan, char *word, size_t word_size, 
                  worst->where, SMALL(worst->expansion_m), TEMP(plan->temperature.hottest_c));
         return;
     }
+    if (isfinite(plan->seal.cold_squeeze)) {
+        snprintf(word, word_size, "%s", verdict_screen_word(plan->seal.verdict));
+        snprintf(sentence, size, "squeezed %s in winter, %s in summer; it works from %s to %s.",
+                 PERCENT(plan->seal.cold_squeeze), PERCENT(plan->seal.compression),
+                 whole_percent(plan->job.sealant_seal_least).words,
+                 whole_percent(plan->job.sealant_seal_most).words);
+        return;
+    }
     if (!plan->seal.sealed || plan->seal.verdict == VERDICT_NONE) {
         snprintf(word, word_size, "NOTE");
         snprintf(sentence, size, "%s",
@@ -340,7 +350,9 @@ static void purchase(const struct plan *plan, char *out, size_t size)
                                      package->count,
                                      show(plan, package->size_m3, QUANTITY_VOLUME).words);
     }
-    if (used == 0)
+    if (used == 0 && !plan->has_outline)
+        snprintf(out, size, "draw the slab or type the metres.");
+    else if (used == 0)
         snprintf(out, size, "no sealant; sawing %s.", LENGTH(plan->quantities.saw_m));
     else if (plan->quantities.rod_count > 0 && used < size)
         snprintf(out + used, size - used, ", %s of rod.",

@@ -39,6 +39,7 @@ static void clear_results(struct plan *plan)
     plan->seal.recess_m = plan->seal.tolerance_m = NAN;
     plan->seal.extension = plan->seal.compression = plan->seal.bead_strain = NAN;
     plan->seal.extension_capacity = plan->seal.compression_capacity = NAN;
+    plan->seal.cold_squeeze = NAN;
     plan->seal.rod_m = plan->seal.bulge_m = plan->seal.cut_depth_m = NAN;
     plan->seal.next_down_m = plan->seal.next_down_extension = NAN;
     plan->seal.next_down_compression = plan->seal.next_up_compression = NAN;

@@ -102,6 +102,7 @@ struct plan {
     struct {
         double width_m, least_width_m, tolerance_m, depth_m, recess_m, extension, compression;
         double extension_capacity, compression_capacity, bead_strain, rod_m, bulge_m;
+        double cold_squeeze; /* compression seal: squeeze left at the coldest */
         double cut_depth_m; /* depth of the wide cut: recess + depth + rod */
         double next_down_m, next_down_extension, next_down_compression, next_up_m,
             next_up_extension, next_up_compression;

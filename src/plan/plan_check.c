@@ -202,8 +202,8 @@ static bool add_seal_checks(struct plan *plan)
             return false;
         check->binding = true;
         check->at_most = false;
-        check->demand = plan->seal.extension;
-        check->capacity = plan->seal.extension_capacity;
+        check->demand = plan->seal.cold_squeeze;
+        check->capacity = plan->job.sealant_seal_least;
         check->unit = "ratio";
         check->verdict = check->demand >= check->capacity - 1e-9 ? VERDICT_HOLDS : VERDICT_FAILS;
         set_words(check, "ASTM D2628; working range from memory", "Take a wider seal or slot.");

@@ -451,9 +451,9 @@ static void set_compression_seal(struct plan *plan, struct worst worst)
     }
     ends = sealant_seal_check(&seal, plan->seal.width_m, worst.open, worst.close);
     plan->seal.least_width_m = (1 - seal.most) * seal.seal_m + worst.close;
-    plan->seal.extension = fmax(ends.cold, 0); /* squeeze left at the coldest */
+    plan->seal.cold_squeeze = fmax(ends.cold, 0);
     plan->seal.compression = fmax(ends.hot, 0);
-    plan->seal.extension_capacity = seal.least;
+    plan->seal.extension_capacity = NAN;
     plan->seal.compression_capacity = seal.most;
     plan->seal.verdict = ends.holds ? VERDICT_HOLDS : VERDICT_FAILS;
 }

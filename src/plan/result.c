@@ -66,6 +66,7 @@ const struct result result_table[] = {
     NUM("seal.recess_m", "Left low", MM, seal.recess_m),
     NUM("seal.extension", "Stretches", SHARE, seal.extension),
     NUM("seal.compression", "Is squeezed", SHARE, seal.compression),
+    NUM("seal.cold_squeeze", "Squeeze left at the coldest", SHARE, seal.cold_squeeze),
     NUM("seal.extension_capacity", "Good for, stretch", SHARE, seal.extension_capacity),
     NUM("seal.compression_capacity", "Good for, squeeze", SHARE, seal.compression_capacity),
     NUM("seal.bead_strain", "Stretch at the curved edge of the bead", SHARE, seal.bead_strain),
@@ -271,6 +272,22 @@ double result_number(const struct result *result, const struct plan *plan)
         return NAN;
     memcpy(&value, (const char *)plan + result->offset, sizeof value);
     return value;
+}
+
+bool result_there(const struct result *result, const struct plan *plan)
+{
+    const char *place = (const char *)plan + result->offset;
+
+    switch (result->type) {
+    case RESULT_NUMBER:
+        return isfinite(result_number(result, plan));
+    case RESULT_WORD:
+        return *(const char *const *)(const void *)place != NULL;
+    case RESULT_VERDICT:
+        return *(const enum verdict *)(const void *)place != VERDICT_NONE;
+    default:
+        return true;
+    }
 }
 
 void check_show(struct text *out, double value, const char *unit, enum unit_system system)

@@ -63,6 +63,8 @@ void column_show(struct text *out, const struct column *column, const void *plac
 const void *column_place(const struct list *list, const struct column *column,
                          const void *const arrays[2], size_t row);
 /* "governs", "advice", "no" */
+/* Whether there is such a result: a finite number, a word, a verdict. */
+bool result_there(const struct result *result, const struct plan *plan);
 /* One side of a check for people: per cent, mm or in, MPa or psi, a plain count; "-" for none. */
 void check_show(struct text *out, double value, const char *unit, enum unit_system system);
 const char *applies_word(enum applies applies);

@@ -38,6 +38,17 @@ static enum field_id field_of(const char *path)
     return field_id_of(section, dot + 1);
 }
 
+/* A number left out that has no default of its own says nothing. */
+static bool has_value(const struct plan *plan, enum field_id id)
+{
+    double number;
+
+    if (field_table[id].type != FIELD_NUMBER)
+        return true;
+    memcpy(&number, (const char *)&plan->job + field_table[id].offset, sizeof number);
+    return isfinite(number);
+}
+
 /* The value behind a path (result or field) and whose it is. False when there is none. */
 static bool value_of(const struct plan *plan, const char *path, char *value, size_t value_size,
                      char *from, size_t from_size)
@@ -51,7 +62,7 @@ static bool value_of(const struct plan *plan, const char *path, char *value, siz
             return false;
         result_show(&text, result, plan, units_of(plan));
         snprintf(from, from_size, "worked out");
-    } else if (id < FIELD_COUNT) {
+    } else if (id < FIELD_COUNT && has_value(plan, id)) {
         field_show(&text, &plan->job, id, units_of(plan));
         snprintf(from, from_size, "%s", plan->job.given[id] ? "you" : "usual");
     } else {
@@ -364,8 +375,27 @@ static void set_check_side(struct why *why, const struct plan *plan, double valu
     text_free(&text);
 }
 
+/* Formula and symbols of a row of checks or limits; `valid` stands in front of the formula's range.
+ */
+static void explain(const struct plan *plan, const char *path, const char *valid,
+                    const char *source, struct why *why)
+{
+    const struct why_row *row = why_check_find(path);
+
+    snprintf(why->source, sizeof why->source, "%s", source);
+    snprintf(why->valid, sizeof why->valid, "%s%s%s", valid,
+             row != NULL && row->valid[0] != '\0' ? " " : "", row != NULL ? row->valid : "");
+    snprintf(why->formula, sizeof why->formula, "%s",
+             row != NULL ? row->formula : "how many panels or joints break the rule: none may");
+    if (row != NULL)
+        add_symbols(plan, row, why);
+}
+
 static enum status why_check(const struct plan *plan, const char *id, struct why *why)
 {
+    char path[96];
+
+    snprintf(path, sizeof path, "checks.%s", strncmp(id, "filler.", 7) == 0 ? "filler" : id);
     for (size_t i = 0; i < plan->check_count; i++) {
         const struct plan_check *check = &plan->checks[i];
         if (strcmp(check->id, id) != 0)
@@ -373,19 +403,16 @@ static enum status why_check(const struct plan *plan, const char *id, struct why
         *why = (struct why){0};
         snprintf(why->question, sizeof why->question, "%s: %s", check->label,
                  verdict_screen_word(check->verdict));
-        snprintf(why->formula, sizeof why->formula, "%s",
-                 check->at_most ? "demand <= limit; JUST HOLDS above 0.9 of it"
-                                : "demand >= limit");
-        snprintf(why->source, sizeof why->source, "%s", check->source);
-        snprintf(why->valid, sizeof why->valid, "%s",
-                 check->binding ? "This check decides the exit status."
-                                : "Advice: it never decides.");
-        step(why, "is", "", "worked out", "what there is");
-        set_check_side(why, plan, check->demand, check->unit);
-        step(why, "limit", "", "rule", check->at_most ? "at most" : "at least");
-        set_check_side(why, plan, check->capacity, check->unit);
-        if (check->remedy[0] != '\0')
+        if (check->verdict == VERDICT_FAILS)
             snprintf(why->answer, sizeof why->answer, "%s", check->remedy);
+        explain(plan, path,
+                check->binding ? "This check decides the exit status."
+                               : "Advice: it never decides.",
+                check->source, why);
+        step(why, "=", "", "worked out", "what there is");
+        set_check_side(why, plan, check->demand, check->unit);
+        step(why, "limit", "", "", check->at_most ? "at most" : "at least");
+        set_check_side(why, plan, check->capacity, check->unit);
         return STATUS_OK;
     }
     return STATUS_REFUSED;
@@ -393,6 +420,9 @@ static enum status why_check(const struct plan *plan, const char *id, struct why
 
 static enum status why_limit(const struct plan *plan, const char *rule, struct why *why)
 {
+    char path[96];
+
+    snprintf(path, sizeof path, "spacing.limits.%s", rule);
     for (size_t i = 0; i < plan->spacing.count; i++) {
         const struct plan_limit *row = &plan->spacing.rows[i];
         char value[VALUE_MOST];
@@ -400,26 +430,46 @@ static enum status why_limit(const struct plan *plan, const char *rule, struct w
             continue;
         *why = (struct why){0};
         show_number(plan, row->limit_m, QUANTITY_LENGTH, value, sizeof value);
-        snprintf(why->question, sizeof why->question, "Spacing by %s: %s", row->words, value);
-        snprintf(why->formula, sizeof why->formula, "%s", row->words);
-        snprintf(why->source, sizeof why->source, "%s", row->source);
-        snprintf(why->valid, sizeof why->valid, "%s",
-                 row->counts ? "This row counts." : "Advice: it never shortens the spacing.");
-        step(why, "h", "slab.thickness", whose(plan, FIELD_slab_thickness), "thickness");
-        set_sum_format(why, plan->job.slab_thickness, plan, "%s", "");
-        step(why, "=", "", row->source, "limit by this row");
+        snprintf(why->question, sizeof why->question, "Spacing by %s: %s", row->rule, value);
+        snprintf(why->answer, sizeof why->answer, "%s.", row->words);
+        explain(plan, path,
+                row->counts ? "This row counts." : "Advice: it never shortens the spacing.",
+                row->source, why);
+        step(why, "=", "", "worked out", "limit by this row");
         set_sum(why, "", value);
         return STATUS_OK;
     }
     return STATUS_REFUSED;
 }
 
+/* Lists whose rows share one derivation. */
+static const struct {
+    const char *prefix, *as;
+} lists[] = {
+    {"working", "checks.working"},
+    {"sealing_table", "seal.window_coldest_c"},
+    {"quantities.packages", "quantities.sealant_order_l"},
+    {"quantities.rod_m", "seal.rod_m"},
+};
+
 enum status why_make(const struct plan *plan, const char *path, struct why *why)
 {
+    char id[128];
+
+    for (size_t i = 0; i < sizeof lists / sizeof *lists; i++) {
+        size_t length = strlen(lists[i].prefix);
+        if (strncmp(path, lists[i].prefix, length) == 0 &&
+            (path[length] == '.' || path[length] == '\0'))
+            return why_make(plan, lists[i].as, why);
+    }
     if (strncmp(path, "joints.", 7) == 0)
         return why_joint(plan, path + 7, why);
     if (strncmp(path, "checks.", 7) == 0)
         return why_check(plan, path + 7, why);
+    if (strncmp(path, "isolation.", 10) == 0) { /* isolation.edge3, isolation.C1 */
+        snprintf(id, sizeof id, "filler.%.100s", path + 10);
+        return why_check(plan, id, why);
+    }
     if (strncmp(path, "spacing.limits.", 15) == 0)
         return why_limit(plan, path + 15, why);
     if (strcmp(path, "seal.width_m") == 0 || strcmp(path, "seal.extension") == 0)

@@ -455,10 +455,16 @@ static bool contains(const char *paths, const char *path)
     return false;
 }
 
+const struct why_row *why_row_in(const struct why_row *table, size_t count, const struct plan *plan,
+                                 const char *path)
+{
+    for (size_t i = 0; i < count; i++)
+        if (contains(table[i].paths, path) && (table[i].applies == NULL || table[i].applies(plan)))
+            return &table[i];
+    return NULL;
+}
+
 const struct why_row *why_row_find(const struct plan *plan, const char *path)
 {
-    for (size_t i = 0; i < sizeof rows / sizeof *rows; i++)
-        if (contains(rows[i].paths, path) && (rows[i].applies == NULL || rows[i].applies(plan)))
-            return &rows[i];
-    return NULL;
+    return why_row_in(rows, sizeof rows / sizeof *rows, plan, path);
 }

@@ -19,5 +19,11 @@ struct why_row {
 
 /* NULL when there is none for that path. */
 const struct why_row *why_row_find(const struct plan *plan, const char *path);
+/* The same for "spacing.limits.RULE" and "checks.ID" (every board: "checks.filler"). Source and
+ * range of the row itself count where these are empty. */
+const struct why_row *why_check_find(const char *path);
+/* The first row for that path that applies (plan NULL: rows that always apply). */
+const struct why_row *why_row_in(const struct why_row *rows, size_t count, const struct plan *plan,
+                                 const char *path);
 
 #endif
