@@ -47,17 +47,23 @@ static struct shown whole_percent(double ratio)
     return shown;
 }
 
-static void limit_sentence(const struct plan *plan, char *out, size_t size)
+/* `room`: columns left on a line of 80 behind what stands there already. */
+static void limit_sentence(const struct plan *plan, size_t room, char *out, size_t size)
 {
     const char *rule = plan->spacing.governed_by;
+    bool typed = rule != NULL && strcmp(rule, "typed") == 0;
 
-    if (rule != NULL && strcmp(rule, "typed") == 0)
+    if (typed) {
         snprintf(out, size, "Your limit; %s would be %s.", plan->spacing.rule_words,
                  LENGTH(plan->spacing.rule_limit_m));
-    else if (strncmp(plan->spacing.rule_words, "at most", 7) == 0)
+        if (strlen(out) > room)
+            snprintf(out, size, "Your limit; %s: %s.", plan->spacing.rule_words,
+                     LENGTH(plan->spacing.rule_limit_m));
+    } else if (strncmp(plan->spacing.rule_words, "at most", 7) == 0) {
         snprintf(out, size, "Limit: %s.", plan->spacing.rule_words);
-    else
+    } else {
         snprintf(out, size, "Limit set by %s.", plan->spacing.rule_words);
+    }
 }
 
 static double joint_total(const struct plan *plan)
@@ -102,7 +108,8 @@ static struct sizes panel_sizes(const struct plan *plan)
             y0 = fmin(y0, panel->ring[j].y);
             y1 = fmax(y1, panel->ring[j].y);
         }
-        if (i > 0 && (fabs(x1 - x0 - sizes.along) > 0.0015 || fabs(y1 - y0 - sizes.across) > 0.0015))
+        if (i > 0 &&
+            (fabs(x1 - x0 - sizes.along) > 0.0015 || fabs(y1 - y0 - sizes.across) > 0.0015))
             sizes.alike = false;
         sizes.along = fmax(sizes.along, x1 - x0);
         sizes.across = fmax(sizes.across, y1 - y0);
@@ -110,38 +117,51 @@ static struct sizes panel_sizes(const struct plan *plan)
     return sizes;
 }
 
-static void joints_sentence(const struct plan *plan, const struct sizes *sizes, const char *limit,
-                            char *out, size_t size)
+static void joints_sentence(const struct plan *plan, const struct sizes *sizes, char *out,
+                            size_t size)
 {
+    enum { LINE = 72 };
     const char *every = sizes->alike ? "every" : "up to";
+    char apart[4 * SHOW_MOST], limit[208];
+    size_t used;
 
     if (plan->layout.panel_count <= 1)
-        snprintf(out, size, "none: one panel. %s", limit);
+        snprintf(apart, sizeof apart, "none: one panel.");
     else if (fabs(sizes->along - sizes->across) < 0.0005)
-        snprintf(out, size, "%s %s both ways, %s. %s", every, LENGTH(sizes->along),
-                 LENGTH(joint_total(plan)), limit);
+        snprintf(apart, sizeof apart, "%s %s both ways, %s.", every, LENGTH(sizes->along),
+                 LENGTH(joint_total(plan)));
     else
-        snprintf(out, size, "%s %s along, %s across, %s. %s", every, LENGTH(sizes->along),
-                 LENGTH(sizes->across), LENGTH(joint_total(plan)), limit);
+        snprintf(apart, sizeof apart, "%s %s along, %s across, %s.", every, LENGTH(sizes->along),
+                 LENGTH(sizes->across), LENGTH(joint_total(plan)));
+    used = strlen(apart);
+    limit_sentence(plan, used < LINE ? LINE - used - 1 : 0, limit, sizeof limit);
+    snprintf(out, size, "%s %s", apart, limit);
+}
+
+static void broken_sentence(const struct plan *plan, char *out, size_t size)
+{
+    char names[64];
+    size_t broken = broken_panels(plan, names, sizeof names);
+
+    if (broken > 0)
+        snprintf(out, size, "%zu panel%s break%s a rule: %s%s (plan). %s of joint.", broken,
+                 broken == 1 ? "" : "s", broken == 1 ? "s" : "", names, broken > 4 ? " ..." : "",
+                 LENGTH(joint_total(plan)));
 }
 
 static void answer_joints(const struct plan *plan, char *sentence, size_t size, char *more,
                           size_t more_size)
 {
     struct sizes sizes = panel_sizes(plan);
-    char limit[208], names[64];
-    size_t broken = broken_panels(plan, names, sizeof names);
+    char limit[208];
 
-    limit_sentence(plan, limit, sizeof limit);
     if (!plan->has_outline) {
+        limit_sentence(plan, 48, limit, sizeof limit);
         snprintf(sentence, size, "at most %s apart. %s", LENGTH(plan->spacing.limit_m), limit);
         return;
     }
-    joints_sentence(plan, &sizes, limit, sentence, size);
-    if (broken > 0)
-        snprintf(sentence, size, "%zu panel%s break%s a rule: %s%s (plan). %s of joint.", broken,
-                 broken == 1 ? "" : "s", broken == 1 ? "s" : "", names, broken > 4 ? " ..." : "",
-                 LENGTH(joint_total(plan)));
+    joints_sentence(plan, &sizes, sentence, size);
+    broken_sentence(plan, sentence, size);
     snprintf(more, more_size, "%zu panels, largest %s x %s; at least %d panels are needed.",
              plan->layout.panel_count, LENGTH(sizes.along), LENGTH(sizes.across),
              plan->layout.bound_panels);
@@ -236,8 +256,7 @@ static void answer_holds(const struct plan *plan, char *word, size_t word_size, 
         snprintf(word, word_size, "NOTE");
         snprintf(sentence, size, "%s",
                  plan->job.sealant_kind == SEALANT_FLOOR_FILLER
-                     ? "a floor filler parts from one side as the floor "
-                       "dries; that is no failure."
+                     ? "a floor filler parts as the floor dries; that is no failure."
                      : "no sealant to judge.");
         return;
     }

@@ -111,6 +111,18 @@ static void draw_ring(struct glyph_grid *grid, const struct drawing *drawing,
     }
 }
 
+/* A box too small for its own sides is drawn as <■>. */
+static bool small_box(const struct drawing *drawing, const struct layout *layout, int object)
+{
+    for (size_t i = 0; i < layout->box_count; i++) {
+        const struct layout_box *box = &layout->boxes[i];
+        if (box->object == object)
+            return column_of(drawing, box->x + box->half) - column_of(drawing, box->x) <= 3 &&
+                   row_of(drawing, box->y) - row_of(drawing, box->y + box->half) <= 1;
+    }
+    return false;
+}
+
 static void draw_joints(struct glyph_grid *grid, const struct drawing *drawing,
                         const struct layout *layout)
 {
@@ -119,7 +131,8 @@ static void draw_joints(struct glyph_grid *grid, const struct drawing *drawing,
         enum drawing_ink ink = joint->kind == LAYOUT_CONTRACTION    ? INK_CUT
                                : joint->kind == LAYOUT_CONSTRUCTION ? INK_POUR_END
                                                                     : INK_BOARD;
-        if (joint->object >= 0 && !drawing->joints_drawn)
+        if (joint->object >= 0 &&
+            (!drawing->joints_drawn || small_box(drawing, layout, joint->object)))
             continue;
         if (ink == INK_CUT && !drawing->joints_drawn)
             continue;
@@ -129,7 +142,7 @@ static void draw_joints(struct glyph_grid *grid, const struct drawing *drawing,
 }
 
 static void draw_objects(struct glyph_grid *grid, const struct drawing *drawing,
-                         const struct job *job)
+                         const struct job *job, const struct layout *layout)
 {
     for (size_t i = 0; i < job->object_count; i++) {
         const struct object *object = &job->objects[i];
@@ -142,6 +155,11 @@ static void draw_objects(struct glyph_grid *grid, const struct drawing *drawing,
         for (int row = top; row <= bottom && row < grid->rows; row++)
             for (int column = left; column <= right && column < grid->columns; column++)
                 glyph_put(grid, column, row, grid->ascii ? '@' : 0x25A0, INK_OBJECT); /* ■ */
+        if (left == right && top == bottom && drawing->joints_drawn &&
+            small_box(drawing, layout, (int)i)) {
+            glyph_put(grid, left - 1, top, '<', INK_BOARD);
+            glyph_put(grid, right + 1, top, '>', INK_BOARD);
+        }
     }
 }
 
@@ -161,7 +179,8 @@ static void draw_holes(struct glyph_grid *grid, const struct drawing *drawing,
     }
 }
 
-/* The name of a line stands in the slab's edge where the line ends: north or west, else the other. */
+/* The name of a line stands in the slab's edge where the line ends: north or west, else the other.
+ */
 static void draw_name(struct glyph_grid *grid, const struct drawing *drawing,
                       const struct layout *layout, int line)
 {
@@ -328,7 +347,7 @@ static void draw_all(struct glyph_grid *grid, struct drawing *drawing, const str
     draw_ring(grid, drawing, layout->outline, layout->outline_count);
     draw_holes(grid, drawing, layout);
     if (drawing->joints_drawn)
-        draw_objects(grid, drawing, &plan->job);
+        draw_objects(grid, drawing, &plan->job, layout);
     glyph_resolve(grid);
     if (drawing->joints_drawn) {
         draw_broken(grid, drawing, layout);

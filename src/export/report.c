@@ -119,6 +119,7 @@ struct table {
     enum unit_system units;
     int widths[COLUMNS_MOST];
     bool first_alone; /* too wide for one line: the first cell has its own */
+    bool failed;      /* no memory to measure */
 };
 
 /* Row 0 is the labels. */
@@ -131,7 +132,7 @@ static void table_cell(struct text *out, const struct table *table, size_t colum
 }
 
 /* Widest cell of a column, its label included. */
-static int column_width(const struct table *table, size_t column)
+static int column_width(struct table *table, size_t column)
 {
     int width = 0;
     struct text text = {0};
@@ -143,6 +144,7 @@ static int column_width(const struct table *table, size_t column)
         columns = utf8_columns(text_string(&text));
         width = columns > width ? columns : width;
     }
+    table->failed = table->failed || text.failed;
     text_free(&text);
     return width;
 }
@@ -194,6 +196,7 @@ static void add_list(struct text *out, const struct plan *plan, const char *name
         table.columns++;
     table.rows = rows < most ? rows : most;
     set_widths(&table);
+    out->failed = out->failed || table.failed;
     for (size_t r = 0; r <= table.rows; r++)
         add_row(out, &table, r);
     if (table.rows < rows)
@@ -306,6 +309,7 @@ static void add_checks(struct text *out, const struct plan *plan)
                 unbroken);
     if (unbroken > 0)
         wrap_add(out, "* HOLDS", 14, text_string(&words), REPORT_COLUMNS);
+    out->failed = out->failed || words.failed;
     text_free(&words);
 }
 

@@ -133,7 +133,7 @@ void app_go(struct app *app, enum page_id page)
     app->show_change = false;
     app->trouble[0] = '\0';
     if (page == PAGE_PLAN && app->cross_x == 0 && app->cross_y == 0)
-        app->cross_x = app->cross_y = 1;
+        app->cross_x = app->cross_y = app_units(app) == UNITS_US ? 4 * 0.3048 : 1;
 }
 
 /* The page and row where a field is filled in. */

@@ -21,7 +21,7 @@ const struct key_row key_table[] = {
      "Opens the row in hand; again: keeps what stands there."},
     {PRESS_BACK, ACTION_BACK, PLACE_EVERYWHERE, "Esc", NULL,
      "Gives the old value back; else one step back."},
-    {PRESS_UP, ACTION_UP, PLACE_EVERYWHERE, "up", NULL, "The row above; on the plan 0.5 m north."},
+    {PRESS_UP, ACTION_UP, PLACE_EVERYWHERE, "up", NULL, "The row above; on the plan 0.5 m (2 ft) north."},
     {PRESS_DOWN, ACTION_DOWN, PLACE_EVERYWHERE, "down", NULL,
      "The row below; keeps an opened row first."},
     {'a', ACTION_ADD, PLACE_PLAN, "a", NULL, "Plan: adds a column, manhole, hole, wall ... here."},

@@ -230,8 +230,7 @@ static void add_hole(struct app *app)
     char name[16], path[64], at[64], words[WORDS_MOST];
     double w, d;
 
-    if (!read_sizes(app->editor.bytes, unit_name(QUANTITY_LENGTH, app_units(app)),
-                    &w, &d)) {
+    if (!read_sizes(app->editor.bytes, unit_name(QUANTITY_LENGTH, app_units(app)), &w, &d)) {
         app_tell(app, "Type two sizes, such as 1.2 x 1.2 m.");
         return;
     }
@@ -358,6 +357,25 @@ static int count(const struct app *app)
     return 0;
 }
 
+/* 0.5 m or 2 ft; nearer 0.1 m or 6 in. */
+static double cross_step(const struct app *app)
+{
+    bool near = app->zoom >= 4;
+
+    if (app_units(app) == UNITS_US)
+        return near ? 0.1524 : 0.6096;
+    return near ? 0.1 : 0.5;
+}
+
+static const char *cross_words(const struct app *app)
+{
+    bool near = app->zoom >= 4;
+
+    if (app_units(app) == UNITS_US)
+        return near ? "6 in" : "2 ft";
+    return near ? "0.1 m" : "0.5 m";
+}
+
 static bool row(const struct app *app, int index, struct entry *out)
 {
     (void)app;
@@ -377,7 +395,9 @@ static void draw(const struct app *app, struct canvas *canvas)
     unit_show(&words, app->cross_x, QUANTITY_LENGTH, app_units(app));
     text_add(&words, " east, ");
     unit_show(&words, app->cross_y, QUANTITY_LENGTH, app_units(app));
-    text_add(&words, " north.  a add  d take away  z nearer  x farther");
+    text_add(&words, " north.  a add  d take away");
+    if (words.length < 62)
+        text_add(&words, "  z nearer  x farther");
     canvas_words(canvas, rows + 1, 0, app->columns, STYLE_PLAIN, text_string(&words));
     canvas_mark(canvas, rows + 1, 0, 4, STYLE_BOLD);
     under_words(app, &under);
@@ -386,8 +406,11 @@ static void draw(const struct app *app, struct canvas *canvas)
     canvas_mark(canvas, rows + 2, 0, 8, STYLE_BOLD);
     if (app_roomy(app))
         draw_answers(app, canvas, rows + 3, 0, 0, 2);
-    draw_foot(app, canvas,
-              "Arrows move the cross by 0.5 m; digits type where it stands. Enter says more.");
+    text_clear(&words);
+    text_format(&words,
+                "Arrows move the cross by %s; digits type where it stands. Enter says more.",
+                cross_words(app));
+    draw_foot(app, canvas, text_string(&words));
     text_free(&words);
     text_free(&under);
 }
@@ -403,7 +426,7 @@ static void say_under(struct app *app)
 
 static bool move_cross(struct app *app, uint32_t pressed)
 {
-    double step = app->zoom >= 4 ? 0.1 : 0.5;
+    double step = cross_step(app);
 
     switch (pressed) {
     case PRESS_LEFT:
@@ -421,8 +444,8 @@ static bool move_cross(struct app *app, uint32_t pressed)
     default:
         return false;
     }
-    app->cross_x = fmax(-1e5, fmin(1e5, round(app->cross_x * 1000) / 1000));
-    app->cross_y = fmax(-1e5, fmin(1e5, round(app->cross_y * 1000) / 1000));
+    app->cross_x = fmax(-1e5, fmin(1e5, round(app->cross_x * 10000) / 10000));
+    app->cross_y = fmax(-1e5, fmin(1e5, round(app->cross_y * 10000) / 10000));
     app->show_change = false;
     return true;
 }

@@ -204,22 +204,39 @@ static void draw_section(const struct app *app, struct canvas *canvas, int top)
     small(app, rod, plan->seal.rod_m, QUANTITY_SMALL_LENGTH);
     small(app, cut, plan->seal.cut_depth_m, QUANTITY_SMALL_LENGTH);
     canvas_format(canvas, top, 0, 39, STYLE_PLAIN, "   |<---->|  %s wide", width);
-    canvas_format(canvas, top + 1, 0, 39, STYLE_PLAIN, "───┐      ┌───  %s left low", low);
+    if (plan->seal.recess_m > 0)
+        canvas_format(canvas, top + 1, 0, 39, STYLE_PLAIN, "───┐      ┌───  %s left low", low);
+    else
+        canvas_words(canvas, top + 1, 0, 39, STYLE_PLAIN, "───┐######┌───  flush");
+    if (!isfinite(plan->seal.cut_depth_m)) { /* no rod: the slot is filled, or a seal pressed in */
+        bool seal = isfinite(plan->seal.cold_squeeze);
+        canvas_format(canvas, top + 2, 0, 39, STYLE_PLAIN, "   │######│     %s %s",
+                      seal ? rod : depth, seal ? "seal, pressed in" : "filled");
+        canvas_words(canvas, top + 3, 0, 39, STYLE_PLAIN, "   │######│");
+        canvas_words(canvas, top + 4, 0, 39, STYLE_PLAIN, "───┘  ┊   └───  crack below");
+        return;
+    }
     canvas_format(canvas, top + 2, 0, 39, STYLE_PLAIN, "   │######│     %s sealant, waisted",
                   depth);
     canvas_format(canvas, top + 3, 0, 39, STYLE_PLAIN, "   │( OO )│     %s rod, pressed in", rod);
     canvas_format(canvas, top + 4, 0, 39, STYLE_PLAIN, "───┘  ┊   └───  %s wide cut", cut);
 }
 
-static void draw_order(struct canvas *canvas, int top)
+static void draw_order(const struct app *app, struct canvas *canvas, int top)
 {
-    static const char *const words[] = {
-        "ORDER OF WORK", "1 blow out    2 finger comes up clean", "3 dry   4 rod, do not stretch",
-        "5 gun from the bottom   6 tool it low", "7 same day as cleaned; stop for dew"};
+    static const char *const words[3][5] = {
+        {"ORDER OF WORK", "1 blow out    2 finger comes up clean", "3 dry   4 rod, do not stretch",
+         "5 gun from the bottom   6 tool it low", "7 same day as cleaned; stop for dew"},
+        {"ORDER OF WORK", "1 as late as can be: 90 days", "2 vacuum the slot, full depth   3 dry",
+         "4 fill from the bottom, a little proud", "5 shave it flush   6 look in a year"},
+        {"ORDER OF WORK", "1 blow out    2 edges whole, no spalls", "3 lubricant on the faces",
+         "4 press in, do not stretch or twist", "5 top below the slab all along"}};
+    const struct plan *plan = &app->plan;
+    int kind = isfinite(plan->seal.cut_depth_m) ? 0 : isfinite(plan->seal.cold_squeeze) ? 2 : 1;
 
     for (int i = 0; i < 5; i++)
         canvas_words(canvas, top + i, 41, canvas->columns - 41, i == 0 ? STYLE_BOLD : STYLE_PLAIN,
-                     words[i]);
+                     words[kind][i]);
 }
 
 static void draw_safe(const struct app *app, struct canvas *canvas)
@@ -250,9 +267,9 @@ static void seal_draw(const struct app *app, struct canvas *canvas)
     else
         canvas_words(canvas, 5, 36, app->columns - 36, STYLE_PLAIN, "No sealant to judge.");
     canvas_rule(canvas, sketch);
-    if (app->has_plan && app->rows >= 22) {
+    if (app->has_plan && isfinite(app->plan.seal.width_m) && app->rows >= 22) {
         draw_section(app, canvas, sketch + 1);
-        draw_order(canvas, sketch + 1);
+        draw_order(app, canvas, sketch + 1);
     }
     if (app->rows > 24)
         draw_safe(app, canvas);
