@@ -286,7 +286,7 @@ static struct breaking breaking_of(const struct plan *plan, const struct plan_wo
         return (struct breaking){stretch, row->extension, plan->seal.extension_capacity,
                                  "it tears"};
     return (struct breaking){squeeze, row->compression, plan->seal.compression_capacity,
-                             "it is squeezed out"};
+                             "squeezed out"};
 }
 
 /* One cut in three is the usual warning; else the first row that breaks it. */

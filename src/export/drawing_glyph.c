@@ -1,5 +1,6 @@
 #include "export/drawing_glyph.h"
 #include "base/utf8.h"
+#include <math.h>
 #include <stdlib.h>
 #include <string.h>
 
@@ -70,8 +71,8 @@ static void slant(struct glyph_grid *grid, int c1, int r1, int c2, int r2, enum 
     if (steps > 100000)
         return; /* far outside any window */
     for (int i = 0; i <= steps; i++) {
-        int column = c1 + (int)((long long)(c2 - c1) * i / steps);
-        int row = r1 + (int)((long long)(r2 - r1) * i / steps);
+        int column = c1 + (int)lround((double)(c2 - c1) * i / steps);
+        int row = r1 + (int)lround((double)(r2 - r1) * i / steps);
         int arms = falls ? FALLS : RISES;
         if (columns > 4 * rows)
             arms = LEFT | RIGHT;

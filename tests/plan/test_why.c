@@ -1,5 +1,5 @@
-/* Every result can be asked why: a formula, a source and at least one line. Run from the root of the
- * project. */
+/* Every result can be asked why: a formula, a source and at least one line. Run from the root of
+ * the project. */
 #include <setjmp.h>
 #include <stdarg.h>
 #include <stddef.h>
@@ -98,8 +98,14 @@ static void test_every_result(void **state)
 
 static void test_no_such_result(void **state)
 {
-    static const char *const none[] = {"", "seal", "seal.", "seal.width", "joints.J99.open_m",
-                                       "checks.nothing", "spacing.limits.nothing", "......"};
+    static const char *const none[] = {"",
+                                       "seal",
+                                       "seal.",
+                                       "seal.width",
+                                       "joints.J99.open_m",
+                                       "checks.nothing",
+                                       "spacing.limits.nothing",
+                                       "......"};
     struct plan plan;
     struct why why;
 

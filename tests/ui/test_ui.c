@@ -183,11 +183,11 @@ static void test_edit_and_undo(void **state)
     assert_true(shows(app, "~JOINTS")); /* the standing answers are for the old value */
     press(app, "0~");
     assert_true(shows(app, "Thickness 200 mm to 180 mm"));
-    assert_true(shows(app, "24 x thickness would be 4.32 m")); /* 24 x 0.18 */
+    assert_true(shows(app, "24 x thickness: 4.32 m")); /* 24 x 0.18 */
     press(app, "u");
     assert_true(shows(app, "24 x thickness would be 4.8 m"));
     press(app, "r");
-    assert_true(shows(app, "24 x thickness would be 4.32 m"));
+    assert_true(shows(app, "24 x thickness: 4.32 m"));
     app_free(app);
 }
 
