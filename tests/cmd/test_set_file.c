@@ -1,5 +1,6 @@
 /* `slabgap set` on a real file: what it writes, what it leaves alone, and that a refused value
- * writes nothing. What is expected is docs/format.md: "What set can address" and its rule on saving. */
+ * writes nothing. What is expected is docs/format.md: "What set can address" and its rule on
+ * saving. */
 #include "cmd_help.h"
 
 static const char before[] =
