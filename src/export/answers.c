@@ -380,6 +380,20 @@ static void purchase(const struct plan *plan, char *out, size_t size)
         snprintf(out + used, size - used, ".");
 }
 
+/* By how much the order is short with one of the smallest packs less. */
+static double short_by(const struct plan *plan)
+{
+    double total = 0, smallest = INFINITY;
+
+    for (size_t i = 0; i < plan->quantities.package_count; i++) {
+        const struct plan_package *package = &plan->quantities.packages[i];
+        total += package->count * package->size_m3;
+        if (package->count > 0)
+            smallest = fmin(smallest, package->size_m3);
+    }
+    return plan->quantities.sealant_order_m3 - (total - smallest);
+}
+
 static void answer_buy(const struct plan *plan, char *sentence, size_t size, char *more,
                        size_t more_size)
 {
@@ -393,10 +407,11 @@ static void answer_buy(const struct plan *plan, char *sentence, size_t size, cha
     check_first(plan, taken < LINE ? LINE - taken : 8, check, sizeof check);
     snprintf(sentence, size, "%s%s%s.", buy, lead, check);
     if (plan->quantities.package_count > 0)
-        snprintf(more, more_size, "%s with %s waste%s.",
+        snprintf(more, more_size, "%s with %s waste%s; one pack less is %s short.",
                  show(plan, plan->quantities.sealant_order_m3, QUANTITY_VOLUME).words,
                  whole_percent(plan->job.takeoff_waste).words,
-                 plan->quantities.length_typed ? ", for the metres you typed" : "");
+                 plan->quantities.length_typed ? ", for the metres you typed" : "",
+                 show(plan, short_by(plan), QUANTITY_VOLUME).words);
 }
 
 void answers_make(const struct plan *plan, struct answers *answers)

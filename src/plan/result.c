@@ -99,9 +99,11 @@ const struct result result_table[] = {
     NUM("steel.dowel_diameter_m", "Dowel", MM, steel.dowel_diameter_m),
     NUM("steel.dowel_length_m", "Dowel length", MM, steel.dowel_length_m),
     NUM("steel.dowel_spacing_m", "Dowel spacing", MM, steel.dowel_spacing_m),
+    {"steel.dowel_count", "Dowels", RESULT_INT, QUANTITY_NONE, 1.0, AT(steel.dowel_count)},
     NUM("steel.tie_diameter_m", "Tie bar", MM, steel.tie_diameter_m),
     NUM("steel.tie_spacing_m", "Tie bar spacing", MM, steel.tie_spacing_m),
     NUM("steel.tie_length_m", "Tie bar length", MM, steel.tie_length_m),
+    NUM("steel.drag_steel_m2_per_m", "Mesh, m2 a metre", QUANTITY_NONE, steel.drag_steel_m2_per_m),
     NUM("restraint.edge_pa", "Curling stress, edge", QUANTITY_STRESS, restraint.edge_pa),
     NUM("restraint.interior_pa", "Curling stress, inside", QUANTITY_STRESS, restraint.interior_pa),
     NUM("restraint.lift_m", "Edge would lift", MM, restraint.lift_m),
@@ -283,6 +285,8 @@ bool result_there(const struct result *result, const struct plan *plan)
         return isfinite(result_number(result, plan));
     case RESULT_WORD:
         return *(const char *const *)(const void *)place != NULL;
+    case RESULT_INT:
+        return *(const int *)(const void *)place != 0;
     case RESULT_VERDICT:
         return *(const enum verdict *)(const void *)place != VERDICT_NONE;
     default:
