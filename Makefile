@@ -79,7 +79,9 @@ $(B)/terminfo/stamp: tests/term/slabgap-term.ti
 
 $(B)/tests/export/%: TEST_LIBS = -ljansson
 $(B)/tests/cmd/%: CFLAGS += -DSLABGAP_BINARY='"$(abspath $(B))/slabgap"'
-$(B)/tests/cmd/%: $(B)/slabgap
+$(filter $(B)/tests/cmd/%,$(TESTS)): $(B)/slabgap
+WRAP = -Wl,--wrap=malloc,--wrap=calloc,--wrap=realloc,--wrap=strdup
+$(filter %/test_memory,$(TESTS)): LDFLAGS += $(WRAP)
 
 # ---- set-up: packages of a fresh Debian by name; a stamp, so a second run asks nothing
 PACKAGES_DEMO = libncurses-dev pkgconf
@@ -101,6 +103,11 @@ demo: build/packages-demo
 test: build/packages-test
 	@$(MAKE) --no-print-directory -j$(JOBS) $(B)/slabgap $(TESTS)
 	@tests/run $(TESTS)
+
+# writes the golden screens, reports and drawings anew: read the change before you commit it
+golden: $(B)/tests/ui/test_ui $(B)/tests/export/test_golden
+	SLABGAP_REWRITE_GOLDEN=1 $(B)/tests/ui/test_ui >/dev/null 2>&1
+	SLABGAP_REWRITE_GOLDEN=1 $(B)/tests/export/test_golden >/dev/null 2>&1
 
 LONG_TESTS = $(patsubst tests/%.c,$(B)/tests/%,$(sort $(wildcard tests/*/long_*.c)))
 test-long: build/packages-test
@@ -147,6 +154,7 @@ help:
 	@echo "make demo       set up, build, show the plan of an example"
 	@echo "make test       set up, build, run the tests"
 	@echo "make            build $(B)/slabgap"
+	@echo "make golden     writes golden screens and reports anew"
 	@echo "make check      gcc and clang with warnings as errors, layers, purity, format"
 	@echo "make sanitize   the tests with address and undefined-behaviour sanitizers"
 	@echo "make test-long  tests that take minutes;  make fuzz FUZZ_SECONDS=20;  make bench"
@@ -154,5 +162,5 @@ help:
 
 clean:
 	rm -rf build
-.PHONY: all demo test test-long check everything sanitize fuzz bench install uninstall help clean
+.PHONY: all demo test golden test-long check everything sanitize fuzz bench install uninstall help clean
 -include $(shell find $(B) -name '*.d' 2>/dev/null)
