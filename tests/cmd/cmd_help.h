@@ -47,7 +47,7 @@ static inline int make_folder(void **state)
     (void)state;
     const char *base = getenv("TMPDIR");
     snprintf(folder, sizeof folder, "%s/slabgap-test-XXXXXX",
-             base != NULL && strlen(base) < 400 ? base : P_tmpdir);
+             base != NULL && base[0] != '\0' && strlen(base) < 400 ? base : P_tmpdir);
     return mkdtemp(folder) == NULL;
 }
 

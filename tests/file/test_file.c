@@ -38,7 +38,7 @@ static int make_folder(void **state)
 
     (void)state;
     snprintf(folder, sizeof folder, "%s/slabgap-file-XXXXXX",
-             base != NULL && strlen(base) < 400 ? base : P_tmpdir);
+             base != NULL && base[0] != '\0' && strlen(base) < 400 ? base : P_tmpdir);
     umask(022);
     return mkdtemp(folder) == NULL;
 }
