@@ -4,6 +4,7 @@
 #include "job/table.h"
 #include "plan/plan_steps.h"
 #include <math.h>
+#include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
 
@@ -246,29 +247,42 @@ static void set_neighbours(struct plan *plan)
 
 /* ---- bead ---- */
 
-static void warn_slot(struct plan *plan)
+/* One warning about the rod; `a` and `b` go into the sentence. */
+__attribute__((format(printf, 4, 0))) static void
+warn_rod(struct plan *plan, double a_m, double b_m, const char *format)
 {
-    struct text rod = {0}, slot = {0}, slab = {0};
+    struct text rod = {0}, a = {0}, b = {0};
     enum unit_system units = (enum unit_system)plan->job.job_units;
-    bool deep = plan->seal.cut_depth_m > plan->job.slab_thickness / 2;
+    char words[400];
 
     unit_show(&rod, plan->seal.rod_m, QUANTITY_SMALL_LENGTH, units);
-    unit_show(&slot, plan->seal.cut_depth_m, QUANTITY_SMALL_LENGTH, units);
-    unit_show(&slab, plan->job.slab_thickness, QUANTITY_SMALL_LENGTH, units);
-    if (deep)
-        finding_add(&plan->findings, SEVERITY_WARNING, "sealant.rod", text_string(&rod),
-                    text_string(&slab), 0, 0,
-                    "sealant.rod: a %s rod under the bead needs a slot %s deep, more than half of "
-                    "the %s slab; take a smaller rod, a thinner bead or bond-breaker tape.",
-                    text_string(&rod), text_string(&slot), text_string(&slab));
-    if (plan->job.given[FIELD_sealant_rod] && plan->seal.rod_m < plan->seal.width_m - 1e-9)
-        finding_add(&plan->findings, SEVERITY_WARNING, "sealant.rod", text_string(&rod), "", 0, 0,
-                    "sealant.rod: a %s rod is narrower than the joint and falls through; take one "
-                    "about a quarter wider than the joint.",
-                    text_string(&rod));
+    unit_show(&a, a_m, QUANTITY_SMALL_LENGTH, units);
+    unit_show(&b, b_m, QUANTITY_SMALL_LENGTH, units);
+    snprintf(words, sizeof words, format, text_string(&rod), text_string(&a), text_string(&b));
+    finding_add(&plan->findings, SEVERITY_WARNING, "sealant.rod", text_string(&rod), text_string(&b),
+                0, 0, "sealant.rod: %s", words);
     text_free(&rod);
-    text_free(&slot);
-    text_free(&slab);
+    text_free(&a);
+    text_free(&b);
+}
+
+/* The slot that rod, bead and recess need, and whether the rod can be pressed in and stays. */
+static void warn_slot(struct plan *plan)
+{
+    const double press = 2; /* widths; a quarter more is usual: common practice */
+    double width = plan->seal.width_m;
+
+    if (plan->seal.cut_depth_m > plan->cut.most_m + 1e-9)
+        warn_rod(plan, plan->seal.cut_depth_m, plan->cut.most_m,
+                 "a %s rod under the bead needs a slot %s deep, more than a third of the slab "
+                 "(%s); take a smaller rod, a thinner bead or bond-breaker tape.");
+    if (plan->job.given[FIELD_sealant_rod] && plan->seal.rod_m < width - 1e-9)
+        warn_rod(plan, width, width,
+                 "a %s rod is narrower than the %s joint and falls through; take one about a "
+                 "quarter wider than %s.");
+    if (plan->job.given[FIELD_sealant_rod] && plan->seal.rod_m > press * width)
+        warn_rod(plan, width, press * width,
+                 "a %s rod cannot be pressed into a joint %s wide; take one of at most %s.");
 }
 
 static void set_bead(struct plan *plan)

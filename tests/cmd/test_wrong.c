@@ -207,7 +207,7 @@ static const struct wrong warned[] = {
     {"rod that falls through",
      F "[sealant]\nwidth = 10 mm\nrod = 8 mm\n",
      0,
-     {"sealant.rod", "8 mm", "falls through", "wider than the joint"},
+     {"sealant.rod", "8 mm", "falls through", "quarter wider than"},
      NULL},
     {"sealing on the hottest day",
      F "[climate]\nslab-coldest = 0 degC\nslab-hottest = 40 degC\n[sealing]\ntemperature = 40 "
