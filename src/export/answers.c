@@ -20,7 +20,8 @@ static struct shown show(const struct plan *plan, double si, enum quantity quant
     struct text text = {0};
 
     unit_show(&text, si, quantity, (enum unit_system)plan->job.job_units);
-    snprintf(shown.words, sizeof shown.words, "%s", text_string(&text));
+    snprintf(shown.words, sizeof shown.words, "%s",
+             text.failed ? "(no memory)" : text_string(&text));
     text_free(&text);
     return shown;
 }

@@ -62,21 +62,12 @@ static void set_scale(struct drawing *drawing, const struct drawing_options *opt
     }
 }
 
-static int compare_doubles(const void *a, const void *b)
-{
-    double x = *(const double *)a, y = *(const double *)b;
-
-    return (x > y) - (x < y);
-}
-
 /* Whether nine in ten panels are large enough on the grid to show their joints. */
 static bool panels_fit(const struct drawing *drawing, const struct layout *layout)
 {
-    double *cells = layout->panel_count ? malloc(layout->panel_count * sizeof *cells) : NULL;
-    double tenth;
+    const double least = 0.75; /* of a panel's usual cells */
+    size_t small = 0;
 
-    if (cells == NULL)
-        return true;
     for (size_t i = 0; i < layout->panel_count; i++) {
         const struct layout_panel *panel = &layout->panels[i];
         double x0 = DBL_MAX, x1 = -DBL_MAX, y0 = DBL_MAX, y1 = -DBL_MAX;
@@ -86,13 +77,10 @@ static bool panels_fit(const struct drawing *drawing, const struct layout *layou
             y0 = fmin(y0, panel->ring[j].y);
             y1 = fmax(y1, panel->ring[j].y);
         }
-        cells[i] = fmin((x1 - x0) * drawing->columns_per_m / PANEL_COLUMNS,
-                        (y1 - y0) * drawing->rows_per_m / PANEL_ROWS);
+        small += (x1 - x0) * drawing->columns_per_m <= least * PANEL_COLUMNS ||
+                 (y1 - y0) * drawing->rows_per_m <= least * PANEL_ROWS;
     }
-    qsort(cells, layout->panel_count, sizeof *cells, compare_doubles);
-    tenth = cells[layout->panel_count / 10];
-    free(cells);
-    return tenth > 0.75;
+    return small <= layout->panel_count / 10;
 }
 
 static void draw_line(struct glyph_grid *grid, const struct drawing *drawing, double x1, double y1,
@@ -269,6 +257,7 @@ static void tape_mark(struct glyph_grid *grid, int column, int row, double metre
         glyph_words(grid, column, row, text_string(&words), INK_TAPE);
         *free_from = column + length + 1;
     }
+    grid->failed = grid->failed || words.failed;
     text_free(&words);
 }
 
@@ -365,6 +354,7 @@ static enum status try_draw(const struct plan *plan, const struct drawing_option
 {
     struct glyph_grid grid = {0};
     struct box box = bounds(&plan->layout);
+    bool failed;
 
     if (!glyph_grid_make(&grid, options->columns, options->rows, options->ascii))
         return STATUS_NO_MEMORY;
@@ -373,8 +363,12 @@ static enum status try_draw(const struct plan *plan, const struct drawing_option
               options->rows - 1 - (options->tape ? 1 : 0), box);
     draw_all(&grid, drawing, plan, options, box);
     *legend_placed = !options->legend || draw_legend(&grid, plan);
+    failed = grid.failed;
     drawing->cells = glyph_take_cells(&grid);
-    return STATUS_OK;
+    if (!failed)
+        return STATUS_OK;
+    drawing_free(drawing);
+    return STATUS_NO_MEMORY;
 }
 
 enum status drawing_make(const struct plan *plan, const struct drawing_options *options,

@@ -10,7 +10,7 @@ struct glyph_cell {
 };
 struct glyph_grid {
     int columns, rows;
-    bool ascii;
+    bool ascii, failed; /* failed: no memory for some words */
     struct glyph_cell *lines;
     struct drawing_cell *cells;
 };

@@ -19,6 +19,8 @@ enum status file_replace(const char *path, const char *bytes, size_t count);
 /* Whether a file may be overwritten without asking: it is not there, is empty, or carries this
  * program's mark near its start or end. */
 bool file_is_ours(const char *path);
+/* Whether a new file could be made there: its folder is there and may be written. */
+bool file_can_begin(const char *path);
 /* A sentence for a status about a path: "yard.slab: there is no such file. Check the name ...". */
 void file_explain(struct text *out, const char *path, enum status status);
 /* Finds a shipped file ("examples/e1-service-yard.slab"): in SLABGAP_SHARE, else beside the program

@@ -206,6 +206,13 @@ void app_start_own(struct app *app)
     app_go(app, PAGE_OWN);
 }
 
+void app_start_new(struct app *app, const char *path)
+{
+    snprintf(app->new_path, sizeof app->new_path, "%s", path);
+    app_start_own(app);
+    app_tell(app, "%s is not there yet: these questions begin it.", path);
+}
+
 static void go_back(struct app *app)
 {
     enum page_id before = app->before;

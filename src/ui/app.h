@@ -29,6 +29,8 @@ enum status app_load(struct app *app, const char *bytes, size_t count, const cha
                      bool example);
 /* A new slab by the questions of the own-slab page. */
 void app_start_own(struct app *app);
+/* The same for a file that is not there yet: the slab is saved there. */
+void app_start_new(struct app *app, const char *path);
 void app_resize(struct app *app, int columns, int rows);
 void app_key(struct app *app, uint32_t key);
 /* Whether a letter pressed now is text: then no letter is dropped as a bounce of the key. */

@@ -87,6 +87,7 @@ struct app {
     struct finding_list findings; /* of the document as it stands */
     struct history history;
     char path[PATH_MOST], saved[8];
+    char new_path[PATH_MOST]; /* of a file that is not there yet: the own slab goes there */
     bool example, asked_example;
 
     enum page_id page, before;

@@ -39,12 +39,18 @@ static void load_example(struct app *app)
     text_free(&bytes);
 }
 
-/* The file named must be there; the sentence says what is wrong with it. */
+/* A file that is not there yet is begun by the own-slab questions, unless its folder is missing; of
+ * any other trouble a sentence says what is wrong. */
 static int load(struct app *app, const char *path)
 {
     struct text bytes = {0};
     enum status status = file_read(path, &bytes);
 
+    if (status == STATUS_NO_FILE && file_can_begin(path)) {
+        load_example(app);
+        app_start_new(app, path);
+        return 0;
+    }
     if (status == STATUS_OK &&
         app_load(app, text_string(&bytes), bytes.length, path, false) == STATUS_NO_MEMORY)
         status = STATUS_NO_MEMORY;

@@ -311,6 +311,24 @@ static void test_bare_numbers_us(void **state)
     app_free(app);
 }
 
+/* A file that is not there yet: the questions begin it and saving goes there at once. */
+static void test_new_file(void **state)
+{
+    struct app *app = open_example(true);
+    struct request request;
+
+    (void)state;
+    app_start_new(app, "fresh.slab");
+    assert_true(shows(app, "not there yet"));
+    press(app, "~~~20~12~180~");
+    assert_true(shows(app, "180 mm"));
+    press(app, "m~");
+    assert_true(app_take_request(app, &request));
+    assert_int_equal(request.kind, REQUEST_SAVE);
+    assert_string_equal(request.path, "fresh.slab");
+    app_free(app);
+}
+
 /* A user's whole path: L-shaped slab, thickness, column on the plan, why, save. */
 static void test_new_user(void **state)
 {
@@ -514,6 +532,7 @@ int main(void)
         cmocka_unit_test(test_choice),
         cmocka_unit_test(test_example_never_leaks),
         cmocka_unit_test(test_bare_numbers_us),
+        cmocka_unit_test(test_new_file),
         cmocka_unit_test(test_new_user),
         cmocka_unit_test(test_leave_asks),
         cmocka_unit_test(test_every_field_reachable),
