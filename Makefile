@@ -86,7 +86,7 @@ $(filter %/test_memory,$(TESTS)): LDFLAGS += $(WRAP)
 # ---- set-up: packages of a fresh Debian by name; a stamp, so a second run asks nothing
 PACKAGES_DEMO = libncurses-dev pkgconf
 PACKAGES_TEST = $(PACKAGES_DEMO) libcmocka-dev libvterm-dev libjansson-dev libgeos-dev ncurses-bin ncurses-base units
-PACKAGES_CHECK = $(PACKAGES_TEST) clang libclang-rt-14-dev
+PACKAGES_CHECK = $(PACKAGES_TEST) clang libclang-rt-14-dev clang-format
 build/packages-%:
 	@.ci/packages $(PACKAGES_$(shell echo $* | tr a-z A-Z))
 	@mkdir -p build && touch $@
@@ -150,6 +150,9 @@ install: all
 uninstall:
 	rm -rf $(DESTDIR)$(PREFIX)/bin/slabgap $(DESTDIR)$(PREFIX)/share/slabgap $(DESTDIR)$(PREFIX)/share/doc/slabgap
 
+format:
+	clang-format -i $$(git ls-files "src/*.[ch]" "tests/*.[ch]")
+
 help:
 	@echo "make demo       set up, build, show the plan of an example"
 	@echo "make test       set up, build, run the tests"
@@ -158,9 +161,10 @@ help:
 	@echo "make check      gcc and clang with warnings as errors, layers, purity, format"
 	@echo "make sanitize   the tests with address and undefined-behaviour sanitizers"
 	@echo "make test-long  tests that take minutes;  make fuzz FUZZ_SECONDS=20;  make bench"
+	@echo "make format     formats the sources"
 	@echo "make install PREFIX=/usr/local DESTDIR=;  make uninstall;  make clean"
 
 clean:
 	rm -rf build
-.PHONY: all demo test golden test-long check everything sanitize fuzz bench install uninstall help clean
+.PHONY: all demo test golden test-long check everything sanitize fuzz bench install uninstall format help clean
 -include $(shell find $(B) -name '*.d' 2>/dev/null)

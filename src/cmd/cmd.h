@@ -1,4 +1,5 @@
-/* The commands of the command line. Each is a row of one table; help, usage and dispatch read it. */
+/* The commands of the command line. Each is a row of one table; help, usage and dispatch read it.
+ */
 #ifndef SLABGAP_CMD_CMD_H
 #define SLABGAP_CMD_CMD_H
 

@@ -4,7 +4,13 @@
 #include <stdio.h>
 #include <string.h>
 
-enum { DRAW_COLUMNS = 100, DRAW_ROWS = 40, DRAW_LEAST_COLUMNS = 20, DRAW_LEAST_ROWS = 8, DRAW_MOST = 2000 };
+enum {
+    DRAW_COLUMNS = 100,
+    DRAW_ROWS = 40,
+    DRAW_LEAST_COLUMNS = 20,
+    DRAW_LEAST_ROWS = 8,
+    DRAW_MOST = 2000
+};
 
 struct options {
     const char *path, *out;
@@ -77,8 +83,9 @@ static enum status draw_text(const struct plan *plan, const struct options *opti
     enum status status = drawing_make(plan, &wanted, &drawing);
 
     if (status == STATUS_OK) {
-        text_format(out, "%s\n\n", plan->job.given[FIELD_job_title] ? plan->job.job_title
-                                                                     : "A job without a title");
+        text_format(out, "%s\n\n",
+                    plan->job.given[FIELD_job_title] ? plan->job.job_title
+                                                     : "A job without a title");
         drawing_print(out, &drawing);
         text_format(out, "\n%s\n", report_caution(0));
         if (options->out != NULL)
@@ -103,8 +110,8 @@ int command_draw(int count, char **words)
     if (command_plan(options.path, &plan)) {
         enum status status = draw_text(&plan, &options, &out);
         if (!plan.has_outline)
-            code = command_refuse("%s: there is no [outline] to draw; add its corners.",
-                                  options.path);
+            code =
+                command_refuse("%s: there is no [outline] to draw; add its corners.", options.path);
         else if (status != STATUS_OK)
             code = command_refuse("draw: %s.", status_sentence(status));
         else

@@ -56,8 +56,7 @@ static void add_list(struct text *out, const struct plan *plan, const struct lis
             const struct column *column = &list->columns[c];
             if (c > 0)
                 text_add_char(out, ',', 1);
-            add_cell(out, column->type, column->json_scale,
-                     column_place(list, column, arrays, r));
+            add_cell(out, column->type, column->json_scale, column_place(list, column, arrays, r));
         }
         text_add(out, "\r\n");
     }
@@ -87,8 +86,7 @@ static void add_quantities(struct text *out, const struct plan *plan)
         text_add(out, "\r\n");
     }
     for (size_t i = 0; i < plan->quantities.package_count; i++)
-        text_format(out, "packages of %.9g l,%d\r\n",
-                    1000 * plan->quantities.packages[i].size_m3,
+        text_format(out, "packages of %.9g l,%d\r\n", 1000 * plan->quantities.packages[i].size_m3,
                     plan->quantities.packages[i].count);
     for (size_t i = 0; i < plan->quantities.rod_count; i++)
         text_format(out, "rod_m of diameter %.9g m,%.9g\r\n", plan->quantities.rods[i].diameter_m,

@@ -1,12 +1,13 @@
-/* The character grid behind a drawing: lines are collected as directions per cell and turned into one
- * character each at the end, so crossings and corners join by themselves. */
+/* The character grid behind a drawing: lines are collected as directions per cell and turned into
+ * one character each at the end, so crossings and corners join by themselves. */
 #ifndef SLABGAP_EXPORT_DRAWING_GLYPH_H
 #define SLABGAP_EXPORT_DRAWING_GLYPH_H
 
 #include "export/drawing.h"
 
 struct glyph_cell {
-    unsigned char arms[INK_BROKEN + 1]; /* per ink: bits up 1, down 2, left 4, right 8, slant 16 / 32 */
+    unsigned char
+        arms[INK_BROKEN + 1]; /* per ink: bits up 1, down 2, left 4, right 8, slant 16 / 32 */
 };
 struct glyph_grid {
     int columns, rows;

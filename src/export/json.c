@@ -6,7 +6,8 @@
 #include <math.h>
 #include <string.h>
 
-/* A group of single results ("seal") or a list; both may share a name ("spacing" holds "limits"). */
+/* A group of single results ("seal") or a list; both may share a name ("spacing" holds "limits").
+ */
 static size_t group_length(const char *path)
 {
     const char *dot = strchr(path, '.');
@@ -121,9 +122,9 @@ static void add_findings(struct json *json, const struct finding_list *findings)
 
 /* The top-level keys, in the order of docs/format.md. */
 static const char *const keys[] = {
-    "program",   "job",    "spacing",    "temperature", "shrinkage",  "movement", "working",
-    "seal",      "sealing_table", "isolation", "cut",   "checks",     "quantities", "joints",
-    "layout",    "findings", "concrete", "steel",       "restraint",
+    "program", "job",           "spacing",   "temperature", "shrinkage", "movement",   "working",
+    "seal",    "sealing_table", "isolation", "cut",         "checks",    "quantities", "joints",
+    "layout",  "findings",      "concrete",  "steel",       "restraint",
 };
 enum { KEY_COUNT = sizeof keys / sizeof *keys };
 

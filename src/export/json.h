@@ -1,4 +1,5 @@
-/* The JSON of docs/format.md: the whole result, one of its parts, the findings alone, the field table. */
+/* The JSON of docs/format.md: the whole result, one of its parts, the findings alone, the field
+ * table. */
 #ifndef SLABGAP_EXPORT_JSON_H
 #define SLABGAP_EXPORT_JSON_H
 

@@ -14,8 +14,8 @@ struct json {
 };
 
 /* Every value: `key` inside an object, NULL inside an array or at the top. */
-void json_open(struct json *json, const char *key, char bracket); /* '{' or '[' */
-void json_close(struct json *json, char bracket);                 /* '}' or ']' */
+void json_open(struct json *json, const char *key, char bracket);        /* '{' or '[' */
+void json_close(struct json *json, char bracket);                        /* '}' or ']' */
 void json_string(struct json *json, const char *key, const char *value); /* NULL = null */
 void json_number(struct json *json, const char *key, double value);
 void json_coordinate(struct json *json, const char *key, double metres);

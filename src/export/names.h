@@ -1,5 +1,6 @@
-/* Names that never shift: lines across are 1, 2, 3 from the west, lines along A, B, C from the south,
- * panels by the line to their right and the line above them: 2B = left of line 2, below line B. */
+/* Names that never shift: lines across are 1, 2, 3 from the west, lines along A, B, C from the
+ * south, panels by the line to their right and the line above them: 2B = left of line 2, below line
+ * B. */
 #ifndef SLABGAP_EXPORT_NAMES_H
 #define SLABGAP_EXPORT_NAMES_H
 

@@ -89,7 +89,6 @@ static void add_job(struct text *out, const struct plan *plan)
     add_fields(out, plan, "ASSUMED (nothing was typed)", plan->assumed, plan->assumed_count);
 }
 
-
 enum { COLUMNS_MOST = 8 };
 
 /* One cell of a list as text. */
@@ -245,7 +244,7 @@ static void add_seal(struct text *out, const struct plan *plan)
 
 static void add_table(struct text *out, const struct plan *plan)
 {
-    static const char *const keys[] = {"slab_c",   "gap_m",    "extension", "compression",
+    static const char *const keys[] = {"slab_c",  "gap_m",    "extension", "compression",
                                        "verdict", "too_cold", NULL};
 
     if (plan->table_count == 0)
@@ -339,8 +338,9 @@ static void add_quantities(struct text *out, const struct plan *plan)
     if (plan->quantities.rod_count > 0)
         add_list(out, plan, "quantities.rod_m", rods, PACKAGE_KINDS);
     if (plan->quantities.isolation_m + plan->quantities.expansion_m > 0)
-        text_add(out, "  Sealant counts cut joints and pour ends; what goes over the soft board is\n"
-                      "  not in it.\n");
+        text_add(out,
+                 "  Sealant counts cut joints and pour ends; what goes over the soft board is\n"
+                 "  not in it.\n");
     add_results(out, plan, "steel");
     add_restraint(out, plan);
 }
@@ -373,7 +373,8 @@ static void add_layout(struct text *out, const struct plan *plan)
     if (!plan->has_outline)
         return;
     heading(out, "LAYOUT");
-    text_format(out, "  %zu panels (at least %d are needed), %zu pieces of joint, %d broken rule%s\n",
+    text_format(out,
+                "  %zu panels (at least %d are needed), %zu pieces of joint, %d broken rule%s\n",
                 layout->panel_count, layout->bound_panels, layout->joint_count, layout->violations,
                 layout->violations == 1 ? "" : "s");
     for (size_t i = 0; i < layout->box_count; i++)
@@ -445,25 +446,24 @@ static const struct part {
     const char *key;
     void (*add)(struct text *out, const struct plan *plan);
 } parts[] = {
-    {"answers", add_answers},
-    {"job", add_job},
-    {"findings", add_findings},
-    {"spacing", add_spacing},
-    {"temperature", add_temperature},
-    {"seal", add_seal},
-    {"sealing_table", add_table},
-    {"isolation", add_isolation},
-    {"checks", add_checks},
-    {"quantities", add_quantities},
-    {"joints", add_joints},
-    {"layout", add_layout},
+    {"answers", add_answers},         {"job", add_job},
+    {"findings", add_findings},       {"spacing", add_spacing},
+    {"temperature", add_temperature}, {"seal", add_seal},
+    {"sealing_table", add_table},     {"isolation", add_isolation},
+    {"checks", add_checks},           {"quantities", add_quantities},
+    {"joints", add_joints},           {"layout", add_layout},
     {"cautions", add_cautions},
 };
 /* Keys of the JSON that stand inside another part of the text. */
 static const char *const inside[][2] = {
-    {"shrinkage", "temperature"}, {"movement", "temperature"}, {"concrete", "temperature"},
-    {"working", "seal"},          {"cut", "seal"},             {"steel", "quantities"},
-    {"restraint", "quantities"},  {"program", "answers"},
+    {"shrinkage", "temperature"},
+    {"movement", "temperature"},
+    {"concrete", "temperature"},
+    {"working", "seal"},
+    {"cut", "seal"},
+    {"steel", "quantities"},
+    {"restraint", "quantities"},
+    {"program", "answers"},
 };
 
 bool report_text(struct text *out, const struct plan *plan, const char *only)

@@ -204,8 +204,8 @@ bool file_is_ours(const char *path)
 bool file_can_begin(const char *path)
 {
     const char *slash = strrchr(path, '/');
-    char *folder = slash != NULL ? strndup(path, slash == path ? 1 : (size_t)(slash - path))
-                                 : strdup(".");
+    char *folder =
+        slash != NULL ? strndup(path, slash == path ? 1 : (size_t)(slash - path)) : strdup(".");
     bool can = folder != NULL && path[0] != '\0' && (slash == NULL || slash[1] != '\0') &&
                access(folder, W_OK | X_OK) == 0;
 

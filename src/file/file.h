@@ -13,8 +13,8 @@ enum { FILE_MOST = 16 * 1024 * 1024 };
  * _TOO_LARGE, _READ_FAILED, _NO_MEMORY; *out is untouched then. */
 enum status file_read(const char *path, struct text *out);
 /* Replaces (or makes) a file so that at every moment either the old or the new content is there:
- * links followed, temporary in the same folder under one predictable name, fsync, mode kept, rename,
- * fsync of the folder. On failure the old file is as it was and the temporary is gone. */
+ * links followed, temporary in the same folder under one predictable name, fsync, mode kept,
+ * rename, fsync of the folder. On failure the old file is as it was and the temporary is gone. */
 enum status file_replace(const char *path, const char *bytes, size_t count);
 /* Whether a file may be overwritten without asking: it is not there, is empty, or carries this
  * program's mark near its start or end. */

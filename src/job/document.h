@@ -24,9 +24,9 @@ void document_write(const struct document *document, struct text *out);
  * an error; the job then holds what was good. */
 enum status document_job(const struct document *document, struct job *job,
                          struct finding_list *findings);
-/* PATH = VALUE by docs/format.md ("What set can address"). VALUE follows the file's grammar; "" removes
- * the key, row or section. All or nothing: on STATUS_REFUSED the document is as it was and the
- * findings say why (field, value, limit, what to do). */
+/* PATH = VALUE by docs/format.md ("What set can address"). VALUE follows the file's grammar; ""
+ * removes the key, row or section. All or nothing: on STATUS_REFUSED the document is as it was and
+ * the findings say why (field, value, limit, what to do). */
 enum status document_set(struct document *document, const char *path, const char *value,
                          struct finding_list *findings);
 /* The value at a path as written, without blanks and comment; NULL when it is not there. The string

@@ -1,5 +1,5 @@
-/* PATH = VALUE in a document (docs/format.md "What set can address"). A change is made in a copy of the
- * text, which is parsed again and takes the old one's place only when everything went well. */
+/* PATH = VALUE in a document (docs/format.md "What set can address"). A change is made in a copy of
+ * the text, which is parsed again and takes the old one's place only when everything went well. */
 #include "job/document_path.h"
 #include "base/utf8.h"
 #include "job/value.h"

@@ -1,5 +1,5 @@
-/* Defaults that depend on other fields, and fields that contradict each other (docs/format.md "When a
- * key is missing"; the tables in share/tables hold the values with their sources). */
+/* Defaults that depend on other fields, and fields that contradict each other (docs/format.md "When
+ * a key is missing"; the tables in share/tables hold the values with their sources). */
 #include "job/field.h"
 #include "job/table.h"
 #include <math.h>

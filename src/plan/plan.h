@@ -103,7 +103,7 @@ struct plan {
         double width_m, least_width_m, tolerance_m, depth_m, recess_m, extension, compression;
         double extension_capacity, compression_capacity, bead_strain, rod_m, bulge_m;
         double cold_squeeze; /* compression seal: squeeze left at the coldest */
-        double cut_depth_m; /* depth of the wide cut: recess + depth + rod */
+        double cut_depth_m;  /* depth of the wide cut: recess + depth + rod */
         double next_down_m, next_down_extension, next_down_compression, next_up_m,
             next_up_extension, next_up_compression;
         double holds_when_n3_m; /* narrowest blade that takes n = 3, NAN none */

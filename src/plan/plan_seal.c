@@ -248,8 +248,8 @@ static void set_neighbours(struct plan *plan)
 /* ---- bead ---- */
 
 /* One warning about the rod; `a` and `b` go into the sentence. */
-__attribute__((format(printf, 4, 0))) static void
-warn_rod(struct plan *plan, double a_m, double b_m, const char *format)
+__attribute__((format(printf, 4, 0))) static void warn_rod(struct plan *plan, double a_m,
+                                                           double b_m, const char *format)
 {
     struct text rod = {0}, a = {0}, b = {0};
     enum unit_system units = (enum unit_system)plan->job.job_units;
@@ -259,8 +259,8 @@ warn_rod(struct plan *plan, double a_m, double b_m, const char *format)
     unit_show(&a, a_m, QUANTITY_SMALL_LENGTH, units);
     unit_show(&b, b_m, QUANTITY_SMALL_LENGTH, units);
     snprintf(words, sizeof words, format, text_string(&rod), text_string(&a), text_string(&b));
-    finding_add(&plan->findings, SEVERITY_WARNING, "sealant.rod", text_string(&rod), text_string(&b),
-                0, 0, "sealant.rod: %s", words);
+    finding_add(&plan->findings, SEVERITY_WARNING, "sealant.rod", text_string(&rod),
+                text_string(&b), 0, 0, "sealant.rod: %s", words);
     text_free(&rod);
     text_free(&a);
     text_free(&b);

@@ -260,7 +260,8 @@ static bool take_new(struct app *app)
     bool done = own_write(&app->own, &out, &trouble);
 
     if (done)
-        done = edit_replace(app, text_string(&out), out.length, app->new_path, false, "own slab begun");
+        done = edit_replace(app, text_string(&out), out.length, app->new_path, false,
+                            "own slab begun");
     else
         app_tell(app, "%s", text_string(&trouble));
     if (done)

@@ -1,5 +1,5 @@
-/* The grammar of the job file. Every case is a rule of docs/format.md "Grammar" (the contract of the
- * file format); the sample is the complete job that the page prints. */
+/* The grammar of the job file. Every case is a rule of docs/format.md "Grammar" (the contract of
+ * the file format); the sample is the complete job that the page prints. */
 #include "job_help.h"
 #include <math.h>
 

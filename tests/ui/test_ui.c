@@ -160,8 +160,8 @@ static void test_sides(void **state)
     struct text trouble = {0};
 
     (void)state;
-    assert_true(
-        own_read_sides("36 east, 12 north, 12 west, 12 north, 24 west, close", "m", &outline, &trouble));
+    assert_true(own_read_sides("36 east, 12 north, 12 west, 12 north, 24 west, close", "m",
+                               &outline, &trouble));
     assert_int_equal(outline.count, 6);
     assert_true(fabs(ring_area(&outline) - (36 * 12 + 24 * 12)) < 1e-9);
     assert_false(own_read_sides("36 east, 12 north, 12.4 west", "m", &outline, &trouble));
