@@ -58,6 +58,8 @@ bool unit_from_si(double si, const char *unit, enum quantity quantity, double *n
 const char *unit_name(enum quantity quantity, enum unit_system system);
 /* Lists the units of a quantity for a message: "mm cm m km in ft". */
 const char *unit_list(enum quantity quantity);
+/* What a tape shows: millimetres (4.000 m) or feet, inches and sixteenths, however long. */
+void unit_show_tape(struct text *out, double metres, enum unit_system system);
 /* Adds a value for people: 200 mm, 13'-4", 3/8 in, 15 °C, 59 °F, 25 %. Decimals as the trade
  * writes; a length in US units to the nearest 1/16 in as feet-inches. Never nan or inf: prints
  * "none". */

@@ -58,21 +58,36 @@ static void add_inches(struct text *out, double inches, bool always_sixteenths)
         text_format(out, "%ld %ld/%ld", whole, rest, bottom);
 }
 
-static void show_feet(struct text *out, double metres)
+static void add_feet_inches(struct text *out, double metres)
 {
     double sixteenths = round(fabs(metres) / 0.0254 * 16);
     double feet = floor(sixteenths / 192), inches = (sixteenths - 192 * feet) / 16;
 
-    if (fabs(metres) >= 100 * 0.3048) {
-        add_fixed(out, metres / 0.3048, fabs(metres) >= 1000 * 0.3048 ? 0 : 1, 0);
-        text_add(out, " ft");
-        return;
-    }
     if (metres < 0 && sixteenths > 0)
         text_add(out, "-");
     text_format(out, "%.0f'-", feet);
     add_inches(out, inches, true);
     text_add(out, "\"");
+}
+
+static void show_feet(struct text *out, double metres)
+{
+    if (fabs(metres) < 100 * 0.3048) {
+        add_feet_inches(out, metres);
+        return;
+    }
+    add_fixed(out, metres / 0.3048, fabs(metres) >= 1000 * 0.3048 ? 0 : 1, 0);
+    text_add(out, " ft");
+}
+
+void unit_show_tape(struct text *out, double metres, enum unit_system system)
+{
+    if (!isfinite(metres))
+        text_add(out, "none");
+    else if (system == UNITS_US)
+        add_feet_inches(out, metres);
+    else
+        text_format(out, "%.3f m", fabs(metres) < 0.0005 ? 0.0 : metres);
 }
 
 static void show_length(struct text *out, double si, enum unit_system system)

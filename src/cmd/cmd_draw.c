@@ -78,6 +78,7 @@ static enum status draw_text(const struct plan *plan, const struct options *opti
                                      .ascii = options->ascii,
                                      .names = true,
                                      .tape = true,
+                                     .tape_up = true,
                                      .legend = true};
     struct drawing drawing = {0};
     enum status status = drawing_make(plan, &wanted, &drawing);

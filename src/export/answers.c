@@ -229,6 +229,23 @@ static void seal_remedy(const struct plan *plan, char *out, size_t size)
              whole_percent(ceil(100 * need - 1e-9) / 100).words);
 }
 
+/* What is wrong at a board: it has no room, or the seal over it is strained too far. */
+static void board_sentence(const struct plan *plan, const struct plan_isolation *row, char *out,
+                           size_t size)
+{
+    if (row->least_filler_m > row->filler_m * (1 + 1e-9) || isnan(row->compression))
+        snprintf(out, size, "no room at %s: the slab wants %s more on a %s day; it shoves.",
+                 row->where, SMALL(row->expansion_m), TEMP(plan->temperature.hottest_c));
+    else if (row->compression / plan->job.sealant_compression >
+             row->extension / plan->job.sealant_extension)
+        snprintf(out, size, "the seal at %s is squeezed %s of %s: thicker board or nearer joints.",
+                 row->where, PERCENT(row->compression),
+                 whole_percent(plan->job.sealant_compression).words);
+    else
+        snprintf(out, size, "the seal at %s stretches %s of %s: take a thicker board.", row->where,
+                 PERCENT(row->extension), whole_percent(plan->job.sealant_extension).words);
+}
+
 static void answer_holds(const struct plan *plan, char *word, size_t word_size, char *sentence,
                          size_t size, char *more, size_t more_size)
 {
@@ -241,8 +258,7 @@ static void answer_holds(const struct plan *plan, char *word, size_t word_size, 
             worst = &plan->isolation[i];
     if (worst != NULL) {
         snprintf(word, word_size, "FAILS");
-        snprintf(sentence, size, "no room at %s: the slab wants %s more on a %s day; it shoves.",
-                 worst->where, SMALL(worst->expansion_m), TEMP(plan->temperature.hottest_c));
+        board_sentence(plan, worst, sentence, size);
         return;
     }
     if (isfinite(plan->seal.cold_squeeze)) {

@@ -209,6 +209,52 @@ static void draw_names(struct glyph_grid *grid, const struct drawing *drawing,
         }
 }
 
+static void tape_mark(struct glyph_grid *grid, int column, int row, double metres,
+                      enum unit_system units, int *free_from)
+{
+    struct text words = {0};
+    int length;
+
+    if (units == UNITS_US)
+        unit_show(&words, metres, QUANTITY_LENGTH, units);
+    else
+        unit_add_number(&words, metres, 2);
+    length = (int)words.length;
+    if (column >= *free_from && column + length <= grid->columns) {
+        glyph_words(grid, column, row, text_string(&words), INK_TAPE);
+        *free_from = column + length + 1;
+    }
+    grid->failed = grid->failed || words.failed;
+    text_free(&words);
+}
+
+/* Zoomed in, the slab's own edge may be out of sight: names along the top and the left of the
+ * window, readings along its foot. */
+static void draw_window_names(struct glyph_grid *grid, const struct drawing *drawing,
+                              const struct plan *plan, struct box box)
+{
+    const struct layout *layout = &plan->layout;
+    enum unit_system units = (enum unit_system)plan->job.job_units;
+    int last = 0, names_from = 2, tape_from = 0;
+
+    for (size_t i = 0; i < layout->joint_count; i++) {
+        const struct layout_joint *joint = &layout->joints[i];
+        int column = column_of(drawing, joint->x1), row = row_of(drawing, joint->y1);
+        char name[LINE_NAME_MOST];
+        if (joint->line <= last)
+            continue;
+        last = joint->line;
+        name_line(layout, joint->line, name);
+        if (fabs(joint->x1 - joint->x2) < 1e-6 && column >= names_from && column < grid->columns) {
+            glyph_words(grid, column, 0, name, INK_NAME);
+            names_from = column + (int)strlen(name) + 1;
+            tape_mark(grid, column, grid->rows - 1, joint->x1 - box.x0, units, &tape_from);
+        } else if (fabs(joint->y1 - joint->y2) < 1e-6 && row > 0 && row < grid->rows - 1) {
+            glyph_words(grid, 0, row, name, INK_NAME);
+        }
+    }
+}
+
 static void draw_broken(struct glyph_grid *grid, const struct drawing *drawing,
                         const struct layout *layout)
 {
@@ -239,26 +285,9 @@ static void draw_counts(struct glyph_grid *grid, const struct drawing *drawing,
     else
         snprintf(words, sizeof words, " %zu panels ", layout->panel_count);
     column = column_of(drawing, (box.x0 + box.x1) / 2) - (int)strlen(words) / 2;
+    if (row < 0 || row >= grid->rows || column < 0 || column >= grid->columns)
+        row = grid->rows / 2, column = grid->columns / 4;
     glyph_words(grid, column, row, words, INK_NAME);
-}
-
-static void tape_mark(struct glyph_grid *grid, int column, int row, double metres,
-                      enum unit_system units, int *free_from)
-{
-    struct text words = {0};
-    int length;
-
-    if (units == UNITS_US)
-        unit_show(&words, metres, QUANTITY_LENGTH, units);
-    else
-        unit_add_number(&words, metres, 2);
-    length = (int)words.length;
-    if (column >= *free_from && column + length <= grid->columns) {
-        glyph_words(grid, column, row, text_string(&words), INK_TAPE);
-        *free_from = column + length + 1;
-    }
-    grid->failed = grid->failed || words.failed;
-    text_free(&words);
 }
 
 /* Cumulative readings from the west end, below the slab, at the lines across. */
@@ -279,6 +308,33 @@ static void draw_tape(struct glyph_grid *grid, const struct drawing *drawing,
         }
     }
     tape_mark(grid, column_of(drawing, box.x1), row, box.x1 - box.x0, units, &free_from);
+}
+
+static int tape_up_columns(const struct drawing_options *options, const struct plan *plan)
+{
+    if (!options->tape_up)
+        return 0;
+    return plan->job.job_units == UNITS_US ? 9 : 7;
+}
+
+/* Cumulative readings from the south end, right of the slab, at the lines along. */
+static void draw_tape_up(struct glyph_grid *grid, const struct drawing *drawing,
+                         const struct plan *plan, struct box box)
+{
+    int column = column_of(drawing, box.x1) + 2, last = 0, taken = grid->rows;
+    enum unit_system units = (enum unit_system)plan->job.job_units;
+    const struct layout *layout = &plan->layout;
+
+    for (size_t i = 0; i < layout->joint_count && drawing->joints_drawn; i++) {
+        const struct layout_joint *joint = &layout->joints[i];
+        int row = row_of(drawing, joint->y1), free_from = 0;
+        if (joint->line <= last || fabs(joint->y1 - joint->y2) > 1e-6 || row >= taken)
+            continue;
+        last = joint->line;
+        taken = row;
+        if (glyph_is_free(grid, column, row) && glyph_is_free(grid, column + 2, row))
+            tape_mark(grid, column, row, joint->y1 - box.y0, units, &free_from);
+    }
 }
 
 static bool has_ink(const struct layout *layout, enum layout_joint_kind kind)
@@ -340,13 +396,17 @@ static void draw_all(struct glyph_grid *grid, struct drawing *drawing, const str
     glyph_resolve(grid);
     if (drawing->joints_drawn) {
         draw_broken(grid, drawing, layout);
-        if (options->names)
+        if (options->names && options->zoom <= 1)
             draw_names(grid, drawing, layout);
     } else {
         draw_counts(grid, drawing, layout, box);
     }
-    if (options->tape)
+    if (options->zoom > 1 && options->names && drawing->joints_drawn)
+        draw_window_names(grid, drawing, plan, box);
+    if (options->tape && options->zoom <= 1)
         draw_tape(grid, drawing, plan, box);
+    if (options->tape_up && options->zoom <= 1)
+        draw_tape_up(grid, drawing, plan, box);
 }
 
 static enum status try_draw(const struct plan *plan, const struct drawing_options *options,
@@ -359,6 +419,7 @@ static enum status try_draw(const struct plan *plan, const struct drawing_option
     if (!glyph_grid_make(&grid, options->columns, options->rows, options->ascii))
         return STATUS_NO_MEMORY;
     *drawing = (struct drawing){.columns = options->columns, .rows = options->rows};
+    reserved += tape_up_columns(options, plan);
     set_scale(drawing, options, options->columns - 1 - reserved - (options->tape ? 2 : 0),
               options->rows - 1 - (options->tape ? 1 : 0), box);
     draw_all(&grid, drawing, plan, options, box);

@@ -32,6 +32,7 @@ struct drawing_options {
     int columns, rows;
     bool ascii;
     bool names, tape, legend;
+    bool tape_up;                    /* readings from the south too, right of the slab */
     double zoom, centre_x, centre_y; /* zoom 0 = whole slab */
 };
 /* STATUS_NO_MEMORY leaves *drawing = {0}. */

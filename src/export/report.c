@@ -1,5 +1,6 @@
 #include "export/report.h"
 #include "export/answers.h"
+#include "export/lines.h"
 #include "base/utf8.h"
 #include "export/names.h"
 #include "export/wrap.h"
@@ -352,6 +353,10 @@ static void add_joints(struct text *out, const struct plan *plan)
 
     if (plan->layout.joint_count == 0)
         return;
+    if (joint_line_last(&plan->layout) > 0) {
+        heading(out, "LINES (tape from the slab's west end, or its south end)");
+        joint_lines_print(out, plan, JOINTS_MOST);
+    }
     heading(out, "JOINTS");
     add_list(out, plan, "joints", keys, JOINTS_MOST);
 }

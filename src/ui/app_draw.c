@@ -209,6 +209,7 @@ void draw_plan(const struct app *app, struct canvas *canvas, int row, int column
                                       .ascii = canvas->ascii,
                                       .names = true,
                                       .tape = true,
+                                      .tape_up = cross,
                                       .legend = true,
                                       .zoom = cross && app->zoom > 1 ? app->zoom : 0,
                                       .centre_x = app->cross_x,

@@ -1,5 +1,5 @@
 /* The plan: a cross with the tape readings, things added and taken away by eye. */
-#include "export/names.h"
+#include "export/lines.h"
 #include "ui/app_ask.h"
 #include <float.h>
 #include <math.h>
@@ -33,6 +33,43 @@ void plan_next_kind(struct app *app, int step)
 }
 
 /* ---- what lies under the cross ---- */
+
+/* How many metres a character stands for on this page, about. */
+static double cell_metres(const struct app *app)
+{
+    const struct layout *layout = &app->plan.layout;
+    double x0 = DBL_MAX, x1 = -DBL_MAX, y0 = DBL_MAX, y1 = -DBL_MAX;
+    int columns = app->columns - 24, rows = app->rows - (app_roomy(app) ? 9 : 7);
+
+    if (!app->has_plan || layout->outline_count == 0)
+        return 0.5;
+    for (size_t i = 0; i < layout->outline_count; i++) {
+        x0 = fmin(x0, layout->outline[i].x);
+        x1 = fmax(x1, layout->outline[i].x);
+        y0 = fmin(y0, layout->outline[i].y);
+        y1 = fmax(y1, layout->outline[i].y);
+    }
+    return fmax((x1 - x0) / (columns > 20 ? columns : 20),
+                (y1 - y0) / (2 * (rows > 8 ? rows : 8))) /
+           app->zoom;
+}
+
+/* The arrows move about one character, by a round step. */
+static double cross_step(const struct app *app)
+{
+    static const double round_steps[] = {10, 5, 2, 1, 0.5, 0.2, 0.1};
+    static const double round_feet[] = {30, 10, 5, 2, 1, 0.5};
+    bool us = app_units(app) == UNITS_US;
+    const double *steps = us ? round_feet : round_steps;
+    size_t count =
+        us ? sizeof round_feet / sizeof *round_feet : sizeof round_steps / sizeof *round_steps;
+    double cell = cell_metres(app) / (us ? 0.3048 : 1), step = steps[count - 1];
+
+    for (size_t i = count; i-- > 0;)
+        if (steps[i] <= cell * 1.05)
+            step = steps[i];
+    return us ? step * 0.3048 : step;
+}
 
 static double side_distance(const struct row *a, const struct row *b, double x, double y,
                             double *along)
@@ -120,12 +157,32 @@ static void add_size(const struct app *app, struct text *out, double a, double b
     unit_show(out, b, QUANTITY_LENGTH, app_units(app));
 }
 
+/* The line whose joint runs within a quarter of a step of the cross; 0: none. */
+static int line_under(const struct app *app)
+{
+    const struct layout *layout = &app->plan.layout;
+    double reach = cross_step(app) / 4 + 1e-6, best = reach;
+    int line = 0;
+
+    for (size_t i = 0; app->has_plan && i < layout->joint_count; i++) {
+        const struct layout_joint *joint = &layout->joints[i];
+        const struct row a = {.x = joint->x1, .y = joint->y1}, b = {.x = joint->x2, .y = joint->y2};
+        double along, distance = side_distance(&a, &b, app->cross_x, app->cross_y, &along);
+        if (joint->line > 0 && distance <= best) {
+            best = distance;
+            line = joint->line;
+        }
+    }
+    return line;
+}
+
 static void under_words(const struct app *app, struct text *out)
 {
     const struct object *object = object_under(app);
     const struct opening *opening = opening_under(app);
     const struct layout_panel *panel = panel_under(app);
     char name[2 * LINE_NAME_MOST], kind[CHOICE_MOST];
+    struct joint_line line;
 
     if (object != NULL) {
         field_choice_word(field_find("object", "kind"), (int)object->kind, kind, sizeof kind);
@@ -134,6 +191,8 @@ static void under_words(const struct app *app, struct text *out)
         text_add(out, "; the joints meet its box. d takes it away.");
     } else if (opening != NULL) {
         text_format(out, "hole %s. d takes it away.", opening->name);
+    } else if (joint_line_find(&app->plan.layout, line_under(app), &line)) {
+        joint_line_describe(out, &app->plan, &line);
     } else if (panel != NULL) {
         name_panel(&app->plan.layout, panel, name);
         text_format(out, "panel %s, ", name);
@@ -357,25 +416,6 @@ static int count(const struct app *app)
     return 0;
 }
 
-/* 0.5 m or 2 ft; nearer 0.1 m or 6 in. */
-static double cross_step(const struct app *app)
-{
-    bool near = app->zoom >= 4;
-
-    if (app_units(app) == UNITS_US)
-        return near ? 0.1524 : 0.6096;
-    return near ? 0.1 : 0.5;
-}
-
-static const char *cross_words(const struct app *app)
-{
-    bool near = app->zoom >= 4;
-
-    if (app_units(app) == UNITS_US)
-        return near ? "6 in" : "2 ft";
-    return near ? "0.1 m" : "0.5 m";
-}
-
 static bool row(const struct app *app, int index, struct entry *out)
 {
     (void)app;
@@ -391,12 +431,12 @@ static void draw(const struct app *app, struct canvas *canvas)
 
     draw_title(app, canvas, false);
     draw_plan(app, canvas, 1, 1, rows, app->columns - 2, true);
-    text_add(&words, "PLAN    cross ");
+    text_add(&words, "PLAN    + ");
     unit_show(&words, app->cross_x, QUANTITY_LENGTH, app_units(app));
     text_add(&words, " east, ");
     unit_show(&words, app->cross_y, QUANTITY_LENGTH, app_units(app));
     text_add(&words, " north.  a add  d take away");
-    if (words.length < 62)
+    if (words.length < 60)
         text_add(&words, "  z nearer  x farther");
     canvas_words(canvas, rows + 1, 0, app->columns, STYLE_PLAIN, text_string(&words));
     canvas_mark(canvas, rows + 1, 0, 4, STYLE_BOLD);
@@ -407,9 +447,9 @@ static void draw(const struct app *app, struct canvas *canvas)
     if (app_roomy(app))
         draw_answers(app, canvas, rows + 3, 0, 0, 2);
     text_clear(&words);
-    text_format(&words,
-                "Arrows move the cross by %s; digits type where it stands. Enter says more.",
-                cross_words(app));
+    text_add(&words, "Arrows move the cross by ");
+    unit_show(&words, cross_step(app), QUANTITY_LENGTH, app_units(app));
+    text_add(&words, "; digits type where it stands. Enter says more.");
     draw_foot(app, canvas, text_string(&words));
     text_free(&words);
     text_free(&under);
@@ -450,6 +490,28 @@ static bool move_cross(struct app *app, uint32_t pressed)
     return true;
 }
 
+/* A panel needs four columns to be drawn. */
+static bool panels_in_sight(const struct app *app)
+{
+    return cell_metres(app) < app->plan.spacing.limit_m * 0.9 / 4;
+}
+
+/* Nearer by two, and at once so near that joints can be seen; farther goes back over the same. */
+static void nearer(struct app *app)
+{
+    do
+        app->zoom *= 2;
+    while (app->zoom < 4096 && app->has_plan && !panels_in_sight(app));
+    app->zoom = fmin(4096, app->zoom);
+}
+
+static void farther(struct app *app)
+{
+    app->zoom /= 2;
+    if (app->zoom < 1 || (app->has_plan && !panels_in_sight(app)))
+        app->zoom = 1;
+}
+
 static bool key(struct app *app, uint32_t pressed)
 {
     if (move_cross(app, pressed))
@@ -467,10 +529,10 @@ static bool key(struct app *app, uint32_t pressed)
         take_away(app);
         return true;
     case ACTION_NEARER:
-        app->zoom = fmin(64, app->zoom * 2);
+        nearer(app);
         return true;
     case ACTION_FARTHER:
-        app->zoom = fmax(1, app->zoom / 2);
+        farther(app);
         return true;
     case ACTION_ENTER:
         say_under(app);
