@@ -222,11 +222,14 @@ static void answer_seal(const struct plan *plan, char *sentence, size_t size, ch
 /* What would make a failing seal hold: wider, or a better sealant. */
 static void seal_remedy(const struct plan *plan, char *out, size_t size)
 {
-    double need = fmax(plan->movement.open_m, plan->movement.close_m) /
-                  (plan->seal.width_m - plan->seal.tolerance_m);
+    double least = plan->seal.width_m - plan->seal.tolerance_m;
+    double need = fmax(plan->movement.open_m, plan->movement.close_m) / least;
 
-    snprintf(out, size, " Needs %s wide or %s sealant.", SMALL(plan->seal.least_width_m),
-             whole_percent(ceil(100 * need - 1e-9) / 100).words);
+    if (!(least > 0)) /* the tolerance takes the whole width: no sealant helps */
+        snprintf(out, size, " Needs %s wide.", SMALL(plan->seal.least_width_m));
+    else
+        snprintf(out, size, " Needs %s wide or %s sealant.", SMALL(plan->seal.least_width_m),
+                 whole_percent(ceil(100 * need - 1e-9) / 100).words);
 }
 
 /* What is wrong at a board: it has no room, or the seal over it is strained too far. */
