@@ -241,7 +241,7 @@ static void board_sentence(const struct plan *plan, const struct plan_isolation 
                  row->where, SMALL(row->expansion_m), TEMP(plan->temperature.hottest_c));
     else if (row->compression / plan->job.sealant_compression >
              row->extension / plan->job.sealant_extension)
-        snprintf(out, size, "the seal at %s is squeezed %s of %s: thicker board or nearer joints.",
+        snprintf(out, size, "the seal at %s is squeezed %s of %s; take a thicker board.",
                  row->where, PERCENT(row->compression),
                  whole_percent(plan->job.sealant_compression).words);
     else

@@ -323,6 +323,10 @@ static void key_on_page(struct app *app, uint32_t key)
 {
     struct entry row;
 
+    if (key == PRESS_BACK && app->working) {
+        edit_stop(app);
+        return;
+    }
     if (page_of(app->page)->key(app, key))
         return;
     if (key == PRESS_UP || key == PRESS_DOWN) {

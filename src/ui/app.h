@@ -19,6 +19,18 @@ struct request {
 };
 
 struct app;
+struct job;
+struct plan;
+
+/* Who makes plans for the form. Without one the form makes them itself, at once. */
+struct plan_maker {
+    /* True: *plan and *status are there. False: later, by app_take_plan(); or *status is not
+     * STATUS_OK and nothing was begun. */
+    bool (*make)(void *context, const struct job *job, struct plan *plan, enum status *status);
+    void (*stop)(void *context);
+    double (*share)(void *context); /* 0 to 1 of the plan that is being made */
+    void *context;
+};
 
 /* `today` is the day shown; year 0 shows none. NULL without memory. */
 struct app *app_make(struct date today);
@@ -37,6 +49,11 @@ void app_key(struct app *app, uint32_t key);
 bool app_takes_text(const struct app *app);
 void app_draw(const struct app *app, struct canvas *canvas);
 /* The next thing to do outside; false when there is none. */
+void app_set_maker(struct app *app, const struct plan_maker *maker);
+/* Whether a plan is being made; the answers shown are those of the job before. */
+bool app_working(const struct app *app);
+/* The plan that was to come later; the form owns it then. */
+void app_take_plan(struct app *app, struct plan *plan, enum status status);
 bool app_take_request(struct app *app, struct request *request);
 /* The job's text, to be saved. */
 void app_write(const struct app *app, struct text *out);

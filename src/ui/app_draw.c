@@ -43,6 +43,8 @@ static void add_practice(const struct app *app, struct text *out)
 
 static void add_saved(const struct app *app, struct text *out)
 {
+    if (app->working)
+        text_format(out, "working %.0f %%  ", 100 * app->maker.share(app->maker.context));
     if (app->example)
         return;
     if (app->job.job_revision[0] != '\0')
@@ -157,7 +159,7 @@ int draw_answers(const struct app *app, struct canvas *canvas, int row, size_t f
                               app->columns))
             text_format(&sentence, " %s", answers.rows[i].more);
         canvas_format(canvas, row + used, 0, word, word_style(app, answers.rows[i].word), "%s%s",
-                      half || app->stale ? "~" : "", answers.rows[i].word);
+                      half || app->stale || app->working ? "~" : "", answers.rows[i].word);
         if (spare > 0)
             took = canvas_wrap(canvas, row + used, word, app->columns - word, 2, STYLE_PLAIN,
                                text_string(&sentence));
@@ -309,6 +311,10 @@ void draw_foot(const struct app *app, struct canvas *canvas, const char *help)
     }
     if (app->said[0] != '\0')
         canvas_words(canvas, row, 0, app->columns, STYLE_BOLD, app->said);
+    else if (app->working)
+        canvas_words(
+            canvas, row, 0, app->columns, STYLE_BOLD,
+            "Working: the answers (~) are those of the job before. Go on, or Esc stops it.");
     else if (app->stale)
         canvas_wrap(canvas, row, 0, app->columns, 1, STYLE_BOLD, edit_first_error(&app->findings));
     else if (app->show_change && app->change[0] != '\0')

@@ -37,38 +37,88 @@ static enum status read_job(struct app *app, struct job *raw)
     return status;
 }
 
-static void take_plan(struct app *app, struct plan *made)
+static void say_outcome(struct app *app, enum status status)
 {
-    plan_free(&app->plan);
-    app->plan = *made;
-    app->has_plan = true;
-}
-
-void edit_recompute(struct app *app)
-{
-    struct plan *made = calloc(1, sizeof *made);
-    struct job raw;
-    enum status status;
-
-    finding_free(&app->findings);
-    job_init(&raw);
-    status = made != NULL ? read_job(app, &raw) : STATUS_NO_MEMORY;
-    if (status == STATUS_OK) {
-        status = plan_make(&raw, NULL, NULL, made);
-        finding_append(&app->findings, &made->findings);
-        if (status == STATUS_OK)
-            take_plan(app, made);
-        else
-            plan_free(made);
-    }
     app->stale = status != STATUS_OK;
     app->buy_count = 0;
     if (status == STATUS_NO_MEMORY)
         app_tell(app, "Not enough memory; close other programs. The answers are the old ones.");
     else if (app->stale)
         app_tell(app, "%s", edit_first_error(&app->findings));
-    job_free(&raw);
+}
+
+void app_take_plan(struct app *app, struct plan *made, enum status status)
+{
+    app->working = false;
+    finding_append(&app->findings, &made->findings);
+    if (status == STATUS_OK) {
+        plan_free(&app->plan);
+        app->plan = *made;
+        app->has_plan = true;
+    } else {
+        plan_free(made);
+    }
+    say_outcome(app, status);
+}
+
+void app_set_maker(struct app *app, const struct plan_maker *maker)
+{
+    app->maker = *maker;
+}
+
+bool app_working(const struct app *app)
+{
+    return app->working;
+}
+
+void edit_stop(struct app *app)
+{
+    if (!app->working)
+        return;
+    app->maker.stop(app->maker.context);
+    app->working = false;
+    app->stale = true;
+    app_tell(app, "Stopped. The answers are those of the job before; the next change works anew.");
+}
+
+/* Makes the plan, or has it made. */
+static void make_plan(struct app *app, const struct job *raw)
+{
+    struct plan *made = calloc(1, sizeof *made);
+    enum status status = STATUS_NO_MEMORY;
+
+    if (made == NULL) {
+        say_outcome(app, status);
+        return;
+    }
+    if (app->maker.make == NULL)
+        app_take_plan(app, made, plan_make(raw, NULL, NULL, made));
+    else if (app->maker.make(app->maker.context, raw, made, &status))
+        app_take_plan(app, made, status);
+    else if (status == STATUS_OK)
+        app->working = true;
+    else
+        say_outcome(app, status);
     free(made);
+}
+
+void edit_recompute(struct app *app)
+{
+    struct job raw;
+    enum status status;
+
+    finding_free(&app->findings);
+    job_init(&raw);
+    app->working = false;
+    status = read_job(app, &raw);
+    if (status == STATUS_OK) {
+        make_plan(app, &raw);
+    } else {
+        if (app->maker.stop != NULL)
+            app->maker.stop(app->maker.context); /* what runs is of an older job */
+        say_outcome(app, status);
+    }
+    job_free(&raw);
 }
 
 static bool remember(struct app *app, const char *words)

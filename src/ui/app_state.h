@@ -81,8 +81,10 @@ struct app {
     struct date today;
     int columns, rows;
     struct document *document;
-    struct job job;               /* settled, from the document */
-    struct plan plan;             /* the last good one */
+    struct job job;   /* settled, from the document */
+    struct plan plan; /* the last good one */
+    struct plan_maker maker;
+    bool working;                 /* a plan is being made elsewhere */
     bool has_plan, stale;         /* stale: the document asks for something that was refused */
     struct finding_list findings; /* of the document as it stands */
     struct history history;
@@ -139,6 +141,7 @@ bool edit_replace(struct app *app, const char *bytes, size_t count, const char *
 void edit_undo(struct app *app, int step); /* -1 undo, 1 redo */
 const char *edit_first_error(const struct finding_list *findings);
 void edit_recompute(struct app *app);
+void edit_stop(struct app *app); /* of a plan that is being made */
 /* Whether there is something not saved. */
 bool edit_unsaved(const struct app *app);
 

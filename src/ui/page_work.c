@@ -298,6 +298,22 @@ static bool buy_row(const struct app *app, int index, struct entry *out)
     return sized_row(buy_fields, BUY_ROWS, index, out);
 }
 
+/* A large slab is not laid out anew for every width: its metres and its governing panel serve. */
+static void without_layout(const struct app *app, struct job *job)
+{
+    enum { LARGE = 500 };
+
+    if (app->plan.layout.panel_count < LARGE || !isfinite(app->plan.movement.panel_m))
+        return;
+    job->outline.count = 0;
+    job->object_count = job->opening_count = job->edge_count = 0;
+    job->pour_line_count = job->joint_count = job->crack_count = 0;
+    job->rules_spacing = app->plan.movement.panel_m;
+    job->given[FIELD_rules_spacing] = true;
+    job->takeoff_length = app->plan.quantities.sealed_m;
+    job->given[FIELD_takeoff_length] = true;
+}
+
 /* One other width by a plan of its own; false when it gives none. */
 static bool fill_row(const struct app *app, double width, struct buy_row *row)
 {
@@ -312,6 +328,7 @@ static bool fill_row(const struct app *app, double width, struct buy_row *row)
         job.given[FIELD_sealant_width] = true;
         job.sealant_depth = NAN; /* by kind: a depth typed for one width does not suit another */
         job.given[FIELD_sealant_depth] = false;
+        without_layout(app, &job);
         good = plan_make(&job, NULL, NULL, plan) == STATUS_OK && plan->seal.sealed;
         if (good)
             *row = (struct buy_row){

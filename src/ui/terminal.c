@@ -2,6 +2,7 @@
 #include "base/utf8.h"
 #include "file/file.h"
 #include "ui/keys.h"
+#include "ui/worker.h"
 #include <curses.h>
 #include <errno.h>
 #include <langinfo.h>
@@ -17,6 +18,9 @@
 static volatile sig_atomic_t told_to_end;
 
 enum { PASTE_BEGINS = KEY_MAX + 1, PASTE_ENDS, BOUNCE_MS = 150 };
+/* A plan that is ready within a frame is shown with the key that asked for it; progress is shown so
+ * often. Under test every plan is waited for, so that a screen follows from the keys alone. */
+enum { FRAME_MS = 16, PROGRESS_MS = 200, TEST_MS = 60000 };
 
 struct terminal {
     SCREEN *screen;
@@ -29,6 +33,7 @@ struct terminal {
     bool count_events;
     uint32_t last_letter;
     long long last_ms;
+    struct worker *worker; /* NULL: plans are made at once */
 };
 
 static void on_end(int signal_number)
@@ -352,6 +357,53 @@ static void serve(struct terminal *terminal)
     }
 }
 
+/* ---- plans from the worker ---- */
+
+static bool begin_plan(void *context, const struct job *job, struct plan *plan, enum status *status)
+{
+    struct terminal *terminal = context;
+    int patience = terminal->count_events ? TEST_MS : FRAME_MS;
+
+    return worker_begin(terminal->worker, job, patience, status) &&
+           worker_take(terminal->worker, plan, status);
+}
+
+static void stop_plan(void *context)
+{
+    worker_stop(((struct terminal *)context)->worker);
+}
+
+static double share_of_plan(void *context)
+{
+    return worker_share(((struct terminal *)context)->worker);
+}
+
+static void start_worker(struct terminal *terminal)
+{
+    const struct plan_maker maker = {begin_plan, stop_plan, share_of_plan, terminal};
+
+    terminal->worker = worker_make();
+    if (terminal->worker != NULL)
+        app_set_maker(terminal->app, &maker);
+}
+
+static void stop_worker(struct terminal *terminal)
+{
+    const struct plan_maker none = {0};
+
+    app_set_maker(terminal->app, &none);
+    worker_free(terminal->worker);
+}
+
+static void take_plan(struct terminal *terminal)
+{
+    struct plan plan;
+    enum status status;
+
+    if (worker_take(terminal->worker, &plan, &status))
+        app_take_plan(terminal->app, &plan, status);
+}
+
 /* ---- the loop ---- */
 
 static bool take_keys(struct terminal *terminal)
@@ -369,21 +421,30 @@ static bool take_keys(struct terminal *terminal)
     return any;
 }
 
-/* Waits for a key, a resize or the end. False: the terminal is gone. */
+/* Waits for a key, a resize, a plan, the next look at its progress, or the end. False: the terminal
+ * is gone. */
 static bool wait_event(struct terminal *terminal)
 {
-    struct pollfd input = {.fd = STDIN_FILENO, .events = POLLIN};
-    int ready = ppoll(&input, 1, NULL, &terminal->before);
+    const struct timespec progress = {0, PROGRESS_MS * 1000000L};
+    struct pollfd events[2] = {{.fd = STDIN_FILENO, .events = POLLIN},
+                               {.fd = -1, .events = POLLIN}};
+    bool working = app_working(terminal->app);
+    int ready;
 
+    if (working)
+        events[1].fd = worker_descriptor(terminal->worker);
+    ready = ppoll(events, 2, working ? &progress : NULL, &terminal->before);
     if (told_to_end)
         return false;
     if (ready < 0) {
         terminal->events++;
         return errno == EINTR;
     }
-    if (input.revents & POLLIN)
-        return take_keys(terminal) || (input.revents & (POLLHUP | POLLERR | POLLNVAL)) == 0;
-    return (input.revents & (POLLHUP | POLLERR | POLLNVAL)) == 0;
+    if (events[1].revents & POLLIN)
+        take_plan(terminal);
+    if (events[0].revents & POLLIN)
+        return take_keys(terminal) || (events[0].revents & (POLLHUP | POLLERR | POLLNVAL)) == 0;
+    return (events[0].revents & (POLLHUP | POLLERR | POLLNVAL)) == 0;
 }
 
 /* End of input looks like readable with nothing to read; ncurses reports no key for it. */
@@ -405,11 +466,13 @@ int terminal_run(struct app *app)
         stop(&terminal);
         return 2;
     }
+    start_worker(&terminal);
     while (!terminal.over && redraw(&terminal)) {
         terminal.gone = !wait_event(&terminal) || at_end_of_input();
         if (terminal.gone)
             break;
     }
+    stop_worker(&terminal);
     stop(&terminal);
     return 0;
 }
