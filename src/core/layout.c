@@ -1,6 +1,8 @@
 /* Lays out a slab: its own frame, rings, forced lines, engine, joints and panels, checks. */
 #include "core/layout.h"
 #include "core/layout_place.h"
+#include "core/layout_variant.h"
+#include "core/layout_zone.h"
 #include <math.h>
 #include <stdio.h>
 #include <stdlib.h>
@@ -145,15 +147,13 @@ static bool is_convex(const struct layout *out)
 }
 
 /* The sides of all rings, those parallel to y and those parallel to x. */
-static enum status build(struct work *w)
+static bool collect_edges(const struct work *w, struct rect_edge *edges[2], size_t count[2])
 {
-    struct rect_edge *edges[2] = {NULL, NULL};
-    size_t count[2] = {0, 0}, total = 0;
+    size_t total = 0;
     for (size_t r = 0; r < w->ring_count; r++)
         total += w->rings[r].count;
     edges[0] = calloc(total + 1, sizeof *edges[0]);
     edges[1] = calloc(total + 1, sizeof *edges[1]);
-    enum status status = STATUS_NO_MEMORY;
     for (size_t r = 0; edges[0] && edges[1] && r < w->ring_count; r++)
         for (size_t i = 0; i < w->rings[r].count; i++) {
             const struct work_ring *g = &w->rings[r];
@@ -164,11 +164,7 @@ static enum status build(struct work *w)
                 edges[axis][count[axis]++] =
                     (struct rect_edge){axis ? g->y[i] : g->x[i], a < b ? a : b, a < b ? b : a};
         }
-    if (edges[0] && edges[1])
-        status = rect_build(&w->slab, edges, count);
-    free(edges[0]);
-    free(edges[1]);
-    return status;
+    return edges[0] && edges[1];
 }
 
 static void set_rules(struct work *w)
@@ -213,19 +209,23 @@ static void find_bounds(struct work *w)
 
 static enum status solve_rectilinear(struct work *w)
 {
+    struct rect_edge *edges[2] = {NULL, NULL};
+    size_t count[2] = {0, 0};
     set_rules(w);
-    enum status status = build(w);
+    enum status status = STATUS_NO_MEMORY;
+    if (collect_edges(w, edges, count) && place_boxes(w) && place_lines(w) && place_expansion(w) &&
+        place_matches(w))
+        status = variant_solve(w, edges, count);
+    if (!status)
+        status = zone_build(w, edges, count, &w->slab);
     if (!status && !w->slab.family[0].arc_count)
         status = STATUS_REFUSED; /* no area at all */
-    if (status)
-        return status;
-    if (!place_boxes(w) || !place_lines(w) || !place_expansion(w) || !place_matches(w) ||
-        !place_force_boxes(w))
-        return STATUS_NO_MEMORY;
-    status = rect_solve(&w->slab);
     if (!status)
         status = layout_emit(w);
-    find_bounds(w);
+    if (!status)
+        find_bounds(w);
+    free(edges[0]);
+    free(edges[1]);
     return status;
 }
 
@@ -306,6 +306,8 @@ static void work_free(struct work *w)
     free(w->ring_object);
     free(w->boxes);
     free(w->lines);
+    free(w->chords);
+    free(w->box_index);
     free(w->panels);
     rect_free(&w->slab);
 }

@@ -1,5 +1,5 @@
 /* From solved chords to joints and panels: topology first, one point per node. */
-#include "core/layout_work.h"
+#include "core/layout_zone.h"
 #include <math.h>
 #include <stdio.h>
 #include <stdlib.h>
@@ -64,8 +64,9 @@ static size_t find_stops(const struct emit *e, int axis, int64_t u, int64_t v0, 
     for (size_t i = 0; i < w->box_count; i++) {
         const struct work_box *b = &w->boxes[i];
         const int64_t bu = axis ? b->y : b->x, bv = axis ? b->x : b->y;
-        if (!b->dropped && bu == u && bv + b->half > v0 && bv - b->half < v1)
-            list[n++] = (struct stop){bv - b->half, bv + b->half};
+        const int64_t low = b->tip[axis ? 0 : 2], high = b->tip[axis ? 1 : 3];
+        if (!b->dropped && bu == u && bv + high > v0 && bv - low < v1)
+            list[n++] = (struct stop){bv - low, bv + high};
     }
     for (size_t i = 0; !isolation && i < e->chord_count; i++) {
         const struct rect_chord *c = &e->chords[i];
@@ -217,22 +218,21 @@ static bool emit_edges(struct emit *e)
 
 static const struct work_box *box_at(const struct work *w, int64_t x, int64_t y)
 {
-    for (size_t i = 0; i < w->box_count; i++)
-        if (w->boxes[i].x == x && w->boxes[i].y == y && !w->boxes[i].dropped)
-            return &w->boxes[i];
-    return NULL;
+    const struct rect_slab index = {.boxes = w->box_index, .box_count = w->box_count};
+    const struct rect_box *b = rect_box_at(&index, x, y);
+    return b && !w->boxes[b->number].dropped ? &w->boxes[b->number] : NULL;
 }
 
 /* Corner k (from the lower left, anticlockwise) cut by a box: two points, and the box side. */
 static bool cut_corner(struct emit *e, size_t panel, int k, const struct work_box *b,
                        struct layout_panel *out)
 {
-    static const int from_x[4] = {0, -1, 0, 1}, from_y[4] = {1, 0, -1, 0};
-    static const int to_x[4] = {1, 0, -1, 0}, to_y[4] = {0, 1, 0, -1};
+    static const int x[4] = {-1, 1, 0, 0}, y[4] = {0, 0, -1, 1}, tips[5] = {3, 0, 2, 1, 3};
+    const int f = tips[k], t = k ? tips[k - 1] : 1; /* anticlockwise round the panel */
     const struct layout_point a =
-        work_point(e->w, b->x + from_x[k] * b->half, b->y + from_y[k] * b->half);
+        work_point(e->w, b->x + x[f] * b->tip[f], b->y + y[f] * b->tip[f]);
     const struct layout_point c =
-        work_point(e->w, b->x + to_x[k] * b->half, b->y + to_y[k] * b->half);
+        work_point(e->w, b->x + x[t] * b->tip[t], b->y + y[t] * b->tip[t]);
     out->ring[out->count++] = a;
     out->ring[out->count++] = c;
     struct layout_joint joint = {.kind = LAYOUT_ISOLATION,
@@ -272,23 +272,11 @@ static bool emit_panel(struct emit *e, size_t i)
 /* A box is made only where all its quadrants are panel corners and it clears the next box. */
 static bool drop_clashes(struct work *w)
 {
+    zone_mark_faults(w);
     for (size_t i = 0; i < w->box_count; i++) {
-        struct work_box *b = &w->boxes[i];
-        int quadrants = 0;
-        for (size_t k = 0; k < w->panel_count; k++) {
-            const struct rect_panel *p = &w->panels[k];
-            if ((p->x0 == b->x || p->x1 == b->x) && (p->y0 == b->y || p->y1 == b->y) &&
-                p->x1 - p->x0 > b->half && p->y1 - p->y0 > b->half)
-                quadrants++;
-        }
-        bool clash = quadrants < (b->on_x ? 1 : 2) * (b->on_y ? 1 : 2);
-        for (size_t k = 0; k < i; k++) {
-            const struct work_box *o = &w->boxes[k];
-            clash |= !o->dropped && llabs(o->x - b->x) + llabs(o->y - b->y) < o->half + b->half;
-        }
-        if (!clash)
+        const struct work_box *b = &w->boxes[i];
+        if (!b->dropped)
             continue;
-        b->dropped = true;
         struct layout_reason reason = {
             .code = "BOX_CLASH", .rule = "object.isolated", .value = (double)b->half / LAYOUT_UNIT};
         snprintf(reason.cause, sizeof reason.cause,
@@ -368,10 +356,9 @@ static bool sort_panels(struct work *w)
 
 enum status layout_emit(struct work *w)
 {
-    struct emit e = {.w = w};
-    enum status status = rect_panels(&w->slab, &w->panels, &w->panel_count);
-    if (!status)
-        status = rect_chords(&w->slab, &e.chords, &e.chord_count);
+    struct emit e = {.w = w, .chords = w->chords, .chord_count = w->chord_count};
+    enum status status = STATUS_OK;
+    rect_sort_chords(w->chords, w->chord_count);
     if (!status) {
         w->out->panels = calloc(w->panel_count + 1, sizeof *w->out->panels);
         e.sides = calloc(w->input->object_count + 1, sizeof *e.sides);
@@ -384,6 +371,5 @@ enum status layout_emit(struct work *w)
         status = fine ? STATUS_OK : STATUS_NO_MEMORY;
     }
     free(e.sides);
-    free(e.chords);
     return status;
 }

@@ -162,12 +162,34 @@ static enum status find_corners(struct rect_slab *slab)
     return STATUS_OK;
 }
 
+/* Gates by the arc they bound, on its low side (0) and its high side (1). */
+static enum status index_gates(struct rect_family *f)
+{
+    for (int side = 0; side < 2; side++) {
+        size_t *first = calloc(f->arc_count + 2, sizeof *first);
+        size_t *list = calloc(f->gate_count + 1, sizeof *list);
+        f->beyond_first[side] = first;
+        f->beyond[side] = list;
+        if (!first || !list)
+            return STATUS_NO_MEMORY;
+        for (size_t i = 0; i < f->gate_count; i++)
+            first[(side ? f->gates[i].left : f->gates[i].right) + 2]++;
+        for (size_t i = 2; i < f->arc_count + 2; i++)
+            first[i] += first[i - 1];
+        for (size_t i = 0; i < f->gate_count; i++)
+            list[first[(side ? f->gates[i].left : f->gates[i].right) + 1]++] = i;
+    }
+    return STATUS_OK;
+}
+
 enum status rect_build(struct rect_slab *slab, struct rect_edge *const edges[2],
                        const size_t count[2])
 {
     for (int axis = 0; axis < 2; axis++) {
-        const enum status status = build_family(&slab->family[axis], edges[axis], count[axis],
-                                                edges[1 - axis], count[1 - axis]);
+        enum status status = build_family(&slab->family[axis], edges[axis], count[axis],
+                                          edges[1 - axis], count[1 - axis]);
+        if (!status)
+            status = index_gates(&slab->family[axis]);
         if (status)
             return status;
         slab->family[axis].limit = (int64_t)(slab->rules.side[axis] + 0.5);
@@ -175,9 +197,45 @@ enum status rect_build(struct rect_slab *slab, struct rect_edge *const edges[2],
     return find_corners(slab);
 }
 
-bool rect_force(struct rect_slab *slab, int axis, int64_t u, int64_t v)
+/* Makes room for u among the forced places of an arc, in order. */
+static bool force_in_arc(struct rect_arc *a, int64_t u, int64_t low, int64_t high)
+{
+    size_t at = 0;
+    while (at < a->forced_count && a->forced[at] < u)
+        at++;
+    if (at == a->forced_count || a->forced[at] != u) {
+        int64_t *more = realloc(a->forced, (a->forced_count + 1) * sizeof *more);
+        if (!more)
+            return false;
+        a->forced = more;
+        int64_t(*room)[2] = realloc(a->room, (a->forced_count + 1) * sizeof *room);
+        if (!room)
+            return false;
+        a->room = room;
+        memmove(more + at + 1, more + at, (a->forced_count - at) * sizeof *more);
+        memmove(room + at + 1, room + at, (a->forced_count - at) * sizeof *room);
+        more[at] = u;
+        room[at][0] = room[at][1] = 0;
+        a->forced_count++;
+    }
+    a->room[at][0] = low > a->room[at][0] ? low : a->room[at][0];
+    a->room[at][1] = high > a->room[at][1] ? high : a->room[at][1];
+    return true;
+}
+
+static bool force_room(struct rect_slab *slab, int axis, int64_t u, int64_t v, int64_t low,
+                       int64_t high)
 {
     struct rect_family *f = &slab->family[axis];
+    for (size_t i = 0; i < f->arc_count; i++) {
+        struct rect_arc *a = &f->arcs[i];
+        if (v < a->v0 || v > a->v1)
+            continue;
+        if (a->u0 == u && high > a->end_room[0])
+            a->end_room[0] = high;
+        if (a->u1 == u && low > a->end_room[1])
+            a->end_room[1] = low;
+    }
     for (size_t i = 0; i < f->gate_count; i++)
         if (f->gates[i].u == u && f->gates[i].v0 <= v && v <= f->gates[i].v1) {
             f->gates[i].forced = f->gates[i].on = true;
@@ -185,17 +243,52 @@ bool rect_force(struct rect_slab *slab, int axis, int64_t u, int64_t v)
         }
     for (size_t i = 0; i < f->arc_count; i++) {
         struct rect_arc *a = &f->arcs[i];
-        if (!(a->u0 < u && u < a->u1 && a->v0 <= v && v <= a->v1))
-            continue;
-        int64_t *more = realloc(a->forced, (a->forced_count + 1) * sizeof *more);
-        if (!more)
-            return false;
-        a->forced = more;
-        a->forced[a->forced_count++] = u;
-        a->forced_count = sort_unique(a->forced, a->forced_count);
-        return true;
+        if (a->u0 < u && u < a->u1 && a->v0 <= v && v <= a->v1)
+            return force_in_arc(a, u, low, high);
     }
     return false;
+}
+
+bool rect_force(struct rect_slab *slab, int axis, int64_t u, int64_t v)
+{
+    return force_room(slab, axis, u, v, 0, 0);
+}
+
+static int compare_box(const void *a, const void *b)
+{
+    const struct rect_box *p = a, *q = b;
+    if (p->x != q->x)
+        return p->x < q->x ? -1 : 1;
+    return (p->y > q->y) - (p->y < q->y);
+}
+
+void rect_sort_boxes(struct rect_box *boxes, size_t count)
+{
+    if (count)
+        qsort(boxes, count, sizeof *boxes, compare_box);
+}
+
+enum status rect_add_box(struct rect_slab *slab, const struct rect_box *box)
+{
+    struct rect_box *more = realloc(slab->boxes, (slab->box_count + 1) * sizeof *more);
+    if (!more)
+        return STATUS_NO_MEMORY;
+    slab->boxes = more;
+    size_t at = slab->box_count++;
+    for (; at > 0 && compare_box(&more[at - 1], box) > 0; at--)
+        more[at] = more[at - 1];
+    more[at] = *box;
+    force_room(slab, 0, box->x, box->y, box->tip[0], box->tip[1]);
+    force_room(slab, 1, box->y, box->x, box->tip[2], box->tip[3]);
+    return STATUS_OK;
+}
+
+const struct rect_box *rect_box_at(const struct rect_slab *slab, int64_t x, int64_t y)
+{
+    const struct rect_box key = {.x = x, .y = y};
+    if (!slab->box_count)
+        return NULL;
+    return bsearch(&key, slab->boxes, slab->box_count, sizeof key, compare_box);
 }
 
 static int compare_chord(const void *a, const void *b)
@@ -206,6 +299,12 @@ static int compare_chord(const void *a, const void *b)
     if (p->u != q->u)
         return p->u < q->u ? -1 : 1;
     return (p->v0 > q->v0) - (p->v0 < q->v0);
+}
+
+void rect_sort_chords(struct rect_chord *chords, size_t count)
+{
+    if (count)
+        qsort(chords, count, sizeof *chords, compare_chord);
 }
 
 enum status rect_chords(const struct rect_slab *slab, struct rect_chord **chords, size_t *count)
@@ -373,10 +472,16 @@ void rect_free(struct rect_slab *slab)
         for (size_t i = 0; i < slab->family[axis].arc_count; i++) {
             free(slab->family[axis].arcs[i].cut);
             free(slab->family[axis].arcs[i].forced);
+            free(slab->family[axis].arcs[i].room);
+        }
+        for (int side = 0; side < 2; side++) {
+            free(slab->family[axis].beyond[side]);
+            free(slab->family[axis].beyond_first[side]);
         }
         free(slab->family[axis].arcs);
         free(slab->family[axis].gates);
     }
     free(slab->corners);
+    free(slab->boxes);
     *slab = (struct rect_slab){0};
 }

@@ -16,6 +16,8 @@ struct rect_edge { /* side at coordinate u, running over v0 < v1 */
 struct rect_arc {
     int64_t u0, u1, v0, v1;
     int64_t *cut, *forced;
+    int64_t (*room)[2]; /* beside each forced one: a box takes so much of the panel below, above */
+    int64_t end_room[2]; /* the same at u0 and u1 */
     size_t cut_count, forced_count;
 };
 struct rect_gate {
@@ -27,7 +29,8 @@ struct rect_family {
     struct rect_arc *arcs;
     struct rect_gate *gates;
     size_t arc_count, gate_count;
-    int64_t limit; /* largest side across the chords */
+    size_t *beyond[2], *beyond_first[2]; /* gates on the low and the high side of each arc */
+    int64_t limit;                       /* largest side across the chords */
 };
 struct rect_corner {
     int64_t x, y;
@@ -41,6 +44,10 @@ struct rect_rules {
 struct rect_panel {
     int64_t x0, y0, x1, y1;
 };
+struct rect_box { /* a box about (x, y): its tips west, east, south, north */
+    int64_t x, y, tip[4];
+    size_t number;
+};
 struct rect_slab {
     struct rect_family family[2];
     struct rect_corner *corners;
@@ -48,6 +55,10 @@ struct rect_slab {
     struct rect_rules rules;
     uint64_t evaluations, allowed;
     bool fine; /* places at every 0.1 m too */
+    struct rect_box *boxes; /* sorted by x, then y */
+    size_t box_count;
+    double cost; /* of the solved slab: metres and penalties */
+    size_t broken;
 };
 struct rect_chord {
     int axis; /* 0: parallel to y at u = x */
@@ -59,8 +70,14 @@ enum status rect_build(struct rect_slab *slab, struct rect_edge *const edges[2],
                        const size_t count[2]);
 /* A chord of the family must pass (u, v). False: no chord can pass there. */
 bool rect_force(struct rect_slab *slab, int axis, int64_t u, int64_t v);
-enum status rect_solve(struct rect_slab *slab);
+/* Both chords through a box's centre; a box on an edge needs only the one square to it. */
+enum status rect_add_box(struct rect_slab *slab, const struct rect_box *box);
+void rect_sort_boxes(struct rect_box *boxes, size_t count);
+const struct rect_box *rect_box_at(const struct rect_slab *slab, int64_t x, int64_t y);
+/* quick: the starts only, no flips of single corners. */
+enum status rect_solve(struct rect_slab *slab, bool quick);
 enum status rect_chords(const struct rect_slab *slab, struct rect_chord **chords, size_t *count);
+void rect_sort_chords(struct rect_chord *chords, size_t count);
 enum status rect_panels(const struct rect_slab *slab, struct rect_panel **panels, size_t *count);
 /* Metres of joint and penalties (design page 2): the broken rules weigh more than any length. */
 double rect_penalty(const struct rect_rules *rules, int64_t along, int64_t across, int axis);

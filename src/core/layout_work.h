@@ -10,17 +10,21 @@ struct work_ring { /* points in the slab's own frame, units of 1/80 mm */
 };
 struct work_box {
     int object;
-    int64_t x, y, half; /* diamond about (x, y) */
+    int64_t x, y, half; /* about (x, y) */
+    int64_t tip[4];     /* how far it reaches west, east, south, north */
     int64_t moved_x, moved_y;
-    int sides;       /* quadrants of it that lie in the slab */
     bool dropped;    /* cannot be made: see the reasons */
     bool on_x, on_y; /* on a slab edge parallel to y, to x */
+    bool keep_off;   /* variant: no triangle on an edge farther than its half */
+    bool stay;       /* variant: not moved onto a common line */
 };
 struct work_line { /* a line with a name: what forces it, and what kind the joint on it is */
     int axis;
     int64_t u, v0, v1;
     enum layout_joint_kind kind;
     bool expansion, along_pour, labels;
+    bool at_point; /* forces only the chord through (u, point) */
+    int64_t point;
     char name[64];
 };
 struct work {
@@ -31,12 +35,18 @@ struct work {
     int *ring_object;        /* object of a rectangular box, -1 */
     size_t ring_count;
     struct work_box *boxes;
+    struct rect_box *box_index; /* the same, sorted, to find the box at a panel's corner */
     size_t box_count;
     struct work_line *lines;
     size_t line_count, line_room;
     struct rect_slab slab;
+    struct rect_chord *chords; /* of all zones */
+    size_t chord_count;
     struct rect_panel *panels; /* in plan order after the emit */
     size_t panel_count;
+    size_t cut_count; /* construction joints the program put in */
+    double cost;      /* metres and penalties of the zones */
+    size_t broken;
 };
 
 struct layout_point work_point(const struct work *w, int64_t x, int64_t y);

@@ -1,0 +1,114 @@
+/* Variants of the boxes: moved onto a common line or not, on the slab edge or off it. The first plan
+ * that breaks no rule is kept; else the one with the fewest breaches, then the least cost. */
+#include "core/layout_variant.h"
+#include "core/layout_place.h"
+#include "core/layout_zone.h"
+#include <math.h>
+#include <stdlib.h>
+#include <string.h>
+
+struct variants {
+    struct work *w;
+    struct rect_edge *const *edges;
+    const size_t *count;
+    struct work_box *origin; /* the boxes as the objects stand */
+    size_t line_count;       /* lines that no box makes */
+    uint64_t allowed;
+    /* the best so far */
+    bool *keep_off, *stay;
+    size_t broken;
+    double cost;
+};
+
+static enum status try_variant(struct variants *v, const bool *keep_off, const bool *stay)
+{
+    struct work *w = v->w;
+    if (w->box_count)
+        memcpy(w->boxes, v->origin, w->box_count * sizeof *w->boxes);
+    w->line_count = v->line_count;
+    for (size_t i = 0; i < w->box_count; i++) {
+        w->boxes[i].keep_off = keep_off[i];
+        w->boxes[i].stay = stay[i];
+    }
+    if (!place_snap(w))
+        return STATUS_NO_MEMORY;
+    return zone_solve(w, v->edges, v->count);
+}
+
+/* Solves it; true in *better when it is the best so far. */
+static enum status compare(struct variants *v, const bool *keep_off, const bool *stay, bool *better)
+{
+    const enum status status = try_variant(v, keep_off, stay);
+    *better = !status && (v->w->broken < v->broken ||
+                          (v->w->broken == v->broken && v->w->cost < v->cost - 1e-6));
+    if (*better) {
+        memmove(v->keep_off, keep_off, v->w->box_count * sizeof *keep_off);
+        memmove(v->stay, stay, v->w->box_count * sizeof *stay);
+        v->broken = v->w->broken;
+        v->cost = v->w->cost;
+    }
+    return status;
+}
+
+static enum status try_all_alike(struct variants *v, bool *keep_off, bool *stay, bool *last)
+{
+    enum status status = STATUS_OK;
+    for (int k = 0; !status && k < 4 && v->broken; k++) {
+        memset(keep_off, k & 1, v->w->box_count * sizeof *keep_off);
+        memset(stay, k >> 1, v->w->box_count * sizeof *stay);
+        status = compare(v, keep_off, stay, last);
+    }
+    return status;
+}
+
+/* One box after another, as long as it helps and effort is left. */
+static enum status try_one_by_one(struct variants *v, bool *keep_off, bool *stay, bool *last)
+{
+    enum status status = STATUS_OK;
+    for (bool gained = true; !status && gained && v->broken;) {
+        gained = false;
+        for (size_t i = 0; !status && i < 2 * v->w->box_count && v->broken; i++) {
+            if (v->w->slab.evaluations > v->allowed)
+                return status;
+            memcpy(keep_off, v->keep_off, v->w->box_count * sizeof *keep_off);
+            memcpy(stay, v->stay, v->w->box_count * sizeof *stay);
+            bool *one = i % 2 ? &stay[i / 2] : &keep_off[i / 2];
+            *one = !*one;
+            status = compare(v, keep_off, stay, last);
+            gained |= *last;
+        }
+    }
+    return status;
+}
+
+enum status variant_solve(struct work *w, struct rect_edge *const edges[2], const size_t count[2])
+{
+    const size_t n = w->box_count;
+    struct variants v = {.w = w,
+                         .edges = edges,
+                         .count = count,
+                         .origin = calloc(n + 1, sizeof *v.origin),
+                         .keep_off = calloc(n + 1, sizeof *v.keep_off),
+                         .stay = calloc(n + 1, sizeof *v.stay),
+                         .line_count = w->line_count,
+                         .allowed = 16 * w->slab.allowed,
+                         .broken = SIZE_MAX};
+    bool *keep_off = calloc(n + 1, sizeof *keep_off), *stay = calloc(n + 1, sizeof *stay);
+    bool last = false;
+    enum status status =
+        v.origin && v.keep_off && v.stay && keep_off && stay ? STATUS_OK : STATUS_NO_MEMORY;
+    if (!status) {
+        memcpy(v.origin, w->boxes, n * sizeof *v.origin);
+        status = n ? try_all_alike(&v, keep_off, stay, &last) : compare(&v, keep_off, stay, &last);
+    }
+    if (!status && n)
+        status = try_one_by_one(&v, keep_off, stay, &last);
+    if (!status && !last)
+        status = try_variant(&v, v.keep_off, v.stay);
+    free(v.origin);
+    free(v.keep_off);
+    free(v.stay);
+    free(keep_off);
+    free(stay);
+    return status;
+}
