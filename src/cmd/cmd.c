@@ -80,10 +80,11 @@ int command_write(const char *path, const struct text *out, bool force)
     return EXIT_WRONG;
 }
 
-static enum status read_job(const char *path, struct job *job, struct finding_list *findings)
+/* *document is NULL when the file cannot be read. */
+static enum status read_job(const char *path, struct document **document, struct job *job,
+                            struct finding_list *findings)
 {
     struct text bytes = {0}, words = {0};
-    struct document *document = NULL;
     enum status status = file_read(path, &bytes);
 
     job_init(job);
@@ -93,12 +94,11 @@ static enum status read_job(const char *path, struct job *job, struct finding_li
         text_free(&words);
         return status;
     }
-    status = document_parse(text_string(&bytes), bytes.length, &document, findings);
-    if (document != NULL) {
-        enum status read = document_job(document, job, findings);
+    status = document_parse(text_string(&bytes), bytes.length, document, findings);
+    if (*document != NULL) {
+        enum status read = document_job(*document, job, findings);
         status = status == STATUS_OK ? read : status;
     }
-    document_free(document);
     text_free(&bytes);
     return status;
 }
@@ -108,7 +108,8 @@ bool command_plan(const char *path, struct plan *plan)
     struct job job;
     struct finding_list findings = {0};
     struct text words = {0};
-    enum status status = read_job(path, &job, &findings);
+    struct document *document = NULL;
+    enum status status = read_job(path, &document, &job, &findings);
     bool place = status == STATUS_OK || status == STATUS_REFUSED;
 
     *plan = (struct plan){0};
@@ -116,7 +117,10 @@ bool command_plan(const char *path, struct plan *plan)
         status = plan_make(&job, NULL, NULL, plan);
     finding_append(&findings, &plan->findings);
     finding_free(&plan->findings);
+    if (document != NULL)
+        document_place(document, &findings);
     plan->findings = findings;
+    document_free(document);
     job_free(&job);
     if (status != STATUS_OK && !finding_has_error(&plan->findings))
         finding_add(&plan->findings, SEVERITY_ERROR, "", "", "", 0, 0, "%s: %s.", path,

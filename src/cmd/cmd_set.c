@@ -55,8 +55,7 @@ static enum status set_all(struct document *document, int count, char **words,
     enum status status = STATUS_OK;
 
     for (int i = 0; i < count && status == STATUS_OK; i++)
-        if (strcmp(words[i], "--dry-run") != 0)
-            status = set_one(document, words[i], findings);
+        status = set_one(document, words[i], findings);
     return status == STATUS_OK ? check_whole(document, findings) : status;
 }
 
@@ -71,34 +70,49 @@ static int finish(const struct document *document, const char *path, bool dry_ru
     return code;
 }
 
+/* The FILE is the first word that is not --dry-run; the rest are PATH=VALUE. */
+static const char *take_file(int *count, char **words, bool *dry_run)
+{
+    const char *file = NULL;
+    int kept = 0;
+
+    for (int i = 0; i < *count; i++) {
+        if (strcmp(words[i], "--dry-run") == 0)
+            *dry_run = true;
+        else if (file == NULL)
+            file = words[i];
+        else
+            words[kept++] = words[i];
+    }
+    *count = kept;
+    return file;
+}
+
 int command_set(int count, char **words)
 {
     struct text bytes = {0}, sentence = {0};
     struct document *document = NULL;
     struct finding_list findings = {0};
     bool dry_run = false;
-    int code = EXIT_WRONG, values = 0;
+    const char *file = take_file(&count, words, &dry_run);
+    int code = EXIT_WRONG;
     enum status status;
 
-    for (int i = 1; i < count; i++) {
-        dry_run = dry_run || strcmp(words[i], "--dry-run") == 0;
-        values += strcmp(words[i], "--dry-run") != 0;
-    }
-    if (count < 1 || values == 0)
+    if (file == NULL || count == 0)
         return command_refuse("set: name the FILE and at least one PATH=VALUE.");
-    status = file_read(words[0], &bytes);
+    status = file_read(file, &bytes);
     if (status != STATUS_OK) {
-        file_explain(&sentence, words[0], status);
+        file_explain(&sentence, file, status);
         command_refuse("%s", text_string(&sentence));
         text_free(&sentence);
         return EXIT_WRONG;
     }
     status = document_parse(text_string(&bytes), bytes.length, &document, &findings);
     if (status == STATUS_OK)
-        status = set_all(document, count - 1, words + 1, &findings);
-    print_findings(&findings, words[0]);
+        status = set_all(document, count, words, &findings);
+    print_findings(&findings, file);
     if (status == STATUS_OK)
-        code = finish(document, words[0], dry_run);
+        code = finish(document, file, dry_run);
     else if (status != STATUS_REFUSED)
         command_refuse("set: %s.", status_sentence(status));
     finding_free(&findings);

@@ -122,9 +122,10 @@ static void add_findings(struct json *json, const struct finding_list *findings)
 
 /* The top-level keys, in the order of docs/format.md. */
 static const char *const keys[] = {
-    "program", "job",           "spacing",   "temperature", "shrinkage", "movement",   "working",
-    "seal",    "sealing_table", "isolation", "cut",         "checks",    "quantities", "joints",
-    "layout",  "findings",      "concrete",  "steel",       "restraint",
+    "program",    "job",       "spacing",       "temperature",    "shrinkage", "movement",
+    "working",    "seal",      "sealing_table", "isolation",      "cut",       "checks",
+    "quantities", "joints",    "layout",        "layout_reasons", "findings",  "concrete",
+    "steel",      "restraint",
 };
 enum { KEY_COUNT = sizeof keys / sizeof *keys };
 
@@ -136,6 +137,8 @@ static void add_key(struct json *json, const char *key, const struct plan *plan)
         json_add_job(json, plan);
     else if (strcmp(key, "layout") == 0)
         json_add_layout(json, plan);
+    else if (strcmp(key, "layout_reasons") == 0)
+        json_add_slab_reasons(json, plan);
     else if (strcmp(key, "findings") == 0)
         add_findings(json, &plan->findings);
     else if (list_find(key) != NULL)

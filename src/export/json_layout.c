@@ -196,7 +196,6 @@ void json_add_layout(struct json *json, const struct plan *plan)
     add_pours(json, &plan->job);
     add_joints(json, layout);
     add_panels(json, layout);
-    add_reasons(json, "reasons", layout->reasons, layout->reason_count);
     json_open(json, "bound", '{');
     json_integer(json, "panels", layout->bound_panels);
     json_number(json, "joint_m", layout->bound_joint_m);
@@ -204,4 +203,9 @@ void json_add_layout(struct json *json, const struct plan *plan)
     json_integer(json, "violations", layout->violations);
     json->compact = compact;
     json_close(json, '}');
+}
+
+void json_add_slab_reasons(struct json *json, const struct plan *plan)
+{
+    add_reasons(json, "layout_reasons", plan->layout.reasons, plan->layout.reason_count);
 }

@@ -6,5 +6,7 @@
 #include "plan/plan.h"
 
 void json_add_layout(struct json *json, const struct plan *plan);
+/* "layout_reasons": what could not be done and belongs to no panel. */
+void json_add_slab_reasons(struct json *json, const struct plan *plan);
 
 #endif

@@ -467,7 +467,7 @@ static const char *const inside[][2] = {
     {"working", "seal"},
     {"cut", "seal"},
     {"steel", "quantities"},
-    {"restraint", "quantities"},
+    {"restraint", "quantities"},  {"layout_reasons", "layout"},
     {"program", "answers"},
 };
 

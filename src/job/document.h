@@ -33,4 +33,7 @@ enum status document_set(struct document *document, const char *path, const char
  * lives until the document changes. */
 const char *document_get(const struct document *document, const char *path);
 
+/* Fills in line and column of findings that name a field of the document and have no place yet. */
+void document_place(const struct document *document, struct finding_list *findings);
+
 #endif

@@ -129,3 +129,20 @@ const char *document_get(const struct document *document, const char *text)
         return NULL;
     return document->values.bytes + line->text_at;
 }
+
+void document_place(const struct document *document, struct finding_list *findings)
+{
+    for (size_t i = 0; i < findings->count; i++) {
+        struct finding *finding = &findings->items[i];
+        struct path path;
+        struct target target;
+        if (finding->line > 0 || !path_read(finding->field, &path) || path.key.length == 0)
+            continue;
+        target = path_find(document, &path);
+        if (target.line < 0)
+            continue;
+        finding->line = target.line + 1;
+        finding->column = document_column(document, &document->lines[target.line],
+                                          document->lines[target.line].value.at);
+    }
+}

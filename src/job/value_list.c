@@ -33,15 +33,17 @@ static bool add_piece(struct pieces *pieces, struct piece piece)
     return true;
 }
 
-/* Splits at commas; false on no memory. */
+/* Splits at commas; false on no memory, which the findings then say. */
 static bool split(const struct value *value, struct pieces *pieces)
 {
     size_t from = 0;
 
     for (size_t i = 0; i <= value->count; i++)
         if (i == value->count || value->bytes[i] == ',') {
-            if (!add_piece(pieces, trim(value, from, i)))
+            if (!add_piece(pieces, trim(value, from, i))) {
+                value->findings->failed = true;
                 return false;
+            }
             from = i + 1;
         }
     return true;
@@ -351,8 +353,10 @@ bool value_read_list(const struct value *value, const struct field *field, doubl
     double *members = NULL;
     bool good = split(value, &pieces);
 
-    if (good)
+    if (good) {
         members = calloc(pieces.count, sizeof *members);
+        value->findings->failed = value->findings->failed || members == NULL;
+    }
     good = good && members != NULL &&
            read_pieces(value, pieces.items, pieces.count, field->quantity, members);
     for (size_t i = 0; good && i < pieces.count; i++)

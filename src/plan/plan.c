@@ -99,6 +99,8 @@ enum status plan_make(const struct job *job, struct plan_cache *cache,
     job_settle(&plan->job, &plan->findings);
     job_check(&plan->job, &plan->findings);
     plan->has_outline = plan->job.outline.count >= 3;
+    if (plan->findings.failed)
+        return STATUS_NO_MEMORY;
     if (finding_has_error(&plan->findings))
         return STATUS_REFUSED;
     plan_list_assumed(plan);

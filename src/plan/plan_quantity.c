@@ -33,9 +33,14 @@ static void set_packages(struct plan *plan)
     const struct packages *sizes = &plan->job.takeoff_packages;
     int counts[PACKAGE_MOST];
     double left;
+    enum status status = quantity_packages(sizes->size, sizes->count,
+                                           plan->quantities.sealant_order_m3, counts, &left);
 
-    if (quantity_packages(sizes->size, sizes->count, plan->quantities.sealant_order_m3, counts,
-                          &left) != STATUS_OK) {
+    if (status == STATUS_NO_MEMORY) {
+        plan->findings.failed = true;
+        return;
+    }
+    if (status != STATUS_OK) {
         finding_add(&plan->findings, SEVERITY_WARNING, "takeoff.packages", "", "", 0, 0,
                     "takeoff.packages: more than a million of these packs would be needed; type a "
                     "larger size.");

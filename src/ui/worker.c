@@ -39,7 +39,6 @@ static void run(struct worker *worker)
     struct job job = worker->job;
     struct plan plan;
     enum status status;
-    const uint64_t one = 1;
 
     memset(&worker->job, 0, sizeof worker->job);
     worker->state = STATE_RUNNING;
@@ -59,8 +58,7 @@ static void run(struct worker *worker)
     worker->status = status;
     worker->state = STATE_READY;
     pthread_cond_broadcast(&worker->ready);
-    if (write(worker->event, &one, sizeof one) < 0)
-        return; /* the counter is full: it is readable already */
+    eventfd_write(worker->event, 1);
 }
 
 static void *serve(void *context)
@@ -107,7 +105,7 @@ struct worker *worker_make(void)
 /* Drops what is asked for, running or ready; with the lock held. */
 static void drop(struct worker *worker)
 {
-    uint64_t count;
+    eventfd_t count;
 
     atomic_store(&worker->stop, true);
     if (worker->state == STATE_ASKED)
@@ -116,8 +114,7 @@ static void drop(struct worker *worker)
         plan_free(&worker->plan);
     if (worker->state != STATE_RUNNING)
         worker->state = STATE_IDLE;
-    if (read(worker->event, &count, sizeof count) < 0)
-        return; /* nothing was ready */
+    eventfd_read(worker->event, &count); /* nothing is ready any more */
 }
 
 void worker_free(struct worker *worker)
@@ -174,14 +171,15 @@ bool worker_begin(struct worker *worker, const struct job *job, int patience_ms,
 bool worker_take(struct worker *worker, struct plan *plan, enum status *status)
 {
     bool taken = false;
-    uint64_t count;
+    eventfd_t count;
 
     pthread_mutex_lock(&worker->lock);
     if (worker->state == STATE_READY) {
         *plan = worker->plan;
         *status = worker->status;
         worker->state = STATE_IDLE;
-        taken = read(worker->event, &count, sizeof count) > 0 || errno == EAGAIN;
+        eventfd_read(worker->event, &count);
+        taken = true;
     }
     pthread_mutex_unlock(&worker->lock);
     return taken;
