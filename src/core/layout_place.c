@@ -120,17 +120,25 @@ static int compare_int64(const void *a, const void *b)
     return (p > q) - (p < q);
 }
 
-static void snap_box(struct work_box *b, int axis, int64_t to)
+static void snap_box(const struct work *w, struct work_box *b, int axis, int64_t to)
 {
     int64_t *at = axis ? &b->y : &b->x, *moved = axis ? &b->moved_y : &b->moved_x;
-    *moved = to - *at;
-    *at = to;
+    const int64_t shift = to - *at;
     if (b->on_x || b->on_y) { /* the triangle on the edge: its base grows */
-        b->tip[2 * axis] += llabs(*moved);
-        b->tip[2 * axis + 1] += llabs(*moved);
+        const int64_t more = llround((double)llabs(shift) * b->spread / 80) * 80 + 80;
+        double half[2];
+        extents_of(w, &w->input->objects[b->object], half);
+        if (b->tip[2 * axis] + more + llabs(shift) > UNITS(half[axis] + box_reach_m))
+            return;
+        *moved = shift;
+        *at = to;
+        b->tip[2 * axis] += more;
+        b->tip[2 * axis + 1] += more;
         return;
     }
-    b->half += llabs(*moved);
+    *moved = shift;
+    *at = to;
+    b->half += llabs(shift);
     b->tip[0] = b->tip[1] = b->tip[2] = b->tip[3] = b->half;
 }
 
@@ -155,6 +163,7 @@ static bool stand_on_edge(const struct work *w, struct work_box *b, int axis, st
                                    : UNITS(ceil((depth + beyond) * 1e3 - 1e-6) / 1e3);
         b->tip[2 * (1 - axis) + k] = base;
     }
+    b->spread = (depth + beyond) / beyond;
     *(axis ? &b->moved_y : &b->moved_x) = near.u - *at;
     *at = near.u;
     *(axis ? &b->on_y : &b->on_x) = true;
@@ -249,7 +258,7 @@ static bool snap_axis(struct work *w, int axis, int64_t reach)
             const struct layout_object *o = &w->input->objects[w->boxes[n].object];
             const bool fixed = o->box_at_given || (axis ? w->boxes[n].on_y : w->boxes[n].on_x);
             if (u >= list[i] && u <= list[k] && !fixed && u != to && !w->boxes[n].stay)
-                snap_box(&w->boxes[n], axis, to);
+                snap_box(w, &w->boxes[n], axis, to);
         }
         i = k + 1;
     }

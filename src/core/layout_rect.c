@@ -143,6 +143,50 @@ static size_t gate_at(const struct rect_family *f, int64_t u, int64_t v)
     return SIZE_MAX;
 }
 
+static bool end_corners(const struct rect_slab *slab, int axis, size_t gate, size_t ends[2])
+{
+    size_t n = 0;
+    for (size_t i = 0; i < slab->corner_count && n < 2; i++)
+        if (slab->corners[i].gate[axis] == gate)
+            ends[n++] = i;
+    return n > 0;
+}
+
+static void join_groups(struct rect_slab *slab, size_t a, size_t b)
+{
+    const size_t from = slab->corners[a].group, to = slab->corners[b].group;
+    for (size_t i = 0; i < slab->corner_count; i++)
+        if (slab->corners[i].group == from)
+            slab->corners[i].group = to;
+}
+
+/* Two gates at one coordinate beside one arc have a wall between them: its ends are one group. */
+static void group_corners(struct rect_slab *slab)
+{
+    for (int axis = 0; axis < 2; axis++) {
+        const struct rect_family *f = &slab->family[axis];
+        for (size_t i = 0; i < f->gate_count; i++)
+            for (size_t k = i + 1; k < f->gate_count && f->gates[k].u == f->gates[i].u; k++) {
+                const struct rect_gate *g = &f->gates[i], *h = &f->gates[k];
+                size_t a[2] = {0, 0}, b[2] = {0, 0};
+                if ((g->left != h->left && g->right != h->right) ||
+                    !end_corners(slab, axis, i, a) || !end_corners(slab, axis, k, b))
+                    continue;
+                for (int m = 0; m < 4; m++) {
+                    const struct rect_corner *p = &slab->corners[a[m / 2]],
+                                             *q = &slab->corners[b[m % 2]];
+                    const int64_t pv = axis ? p->x : p->y, qv = axis ? q->x : q->y;
+                    if ((pv == g->v1 && qv == h->v0) || (pv == g->v0 && qv == h->v1))
+                        join_groups(slab, a[m / 2], b[m % 2]);
+                }
+            }
+    }
+    slab->group_count = 0;
+    for (size_t i = 0; i < slab->corner_count; i++)
+        if (slab->corners[i].group == i)
+            slab->group_count++;
+}
+
 /* A gate's end where the two cross-sections differ is a re-entrant corner. */
 static enum status find_corners(struct rect_slab *slab)
 {
@@ -156,9 +200,14 @@ static enum status find_corners(struct rect_slab *slab)
         const int64_t y = i % 2 ? g->v1 : g->v0;
         if (i % 2 ? a->v1 == b->v1 : a->v0 == b->v0)
             continue;
-        slab->corners[slab->corner_count++] = (struct rect_corner){
+        const bool left = i % 2 ? a->v1 == y : a->v0 == y; /* the wall is on the left of u */
+        slab->corners[slab->corner_count] = (struct rect_corner){
             .x = g->u, .y = y, .gate = {i / 2, gate_at(&slab->family[1], y, g->u)}};
+        slab->corners[slab->corner_count].type = i % 2 ? left : left ? 2 : 3;
+        slab->corners[slab->corner_count].group = slab->corner_count;
+        slab->corner_count++;
     }
+    group_corners(slab);
     return STATUS_OK;
 }
 

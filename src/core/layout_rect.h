@@ -36,6 +36,8 @@ struct rect_corner {
     int64_t x, y;
     size_t gate[2]; /* in family 0 (chords parallel to y) and 1 */
     int choice;
+    int type;     /* corner of the wall: 0 lower left, anticlockwise to 3 upper left */
+    size_t group; /* corners of one opening, or along one stretch of the outline */
 };
 struct rect_rules {
     double side[2], aspect, least; /* units, ratio, units */
@@ -51,7 +53,7 @@ struct rect_box { /* a box about (x, y): its tips west, east, south, north */
 struct rect_slab {
     struct rect_family family[2];
     struct rect_corner *corners;
-    size_t corner_count;
+    size_t corner_count, group_count;
     struct rect_rules rules;
     uint64_t evaluations, allowed;
     bool fine; /* places at every 0.1 m too */

@@ -219,10 +219,42 @@ static enum status flips(struct rect_slab *slab, struct kept *best)
     return status;
 }
 
+/* Every corner by x (0), by y (1), by both (2), and the two pinwheels (3, 4). */
+static int pattern(int start, const struct rect_corner *c)
+{
+    return start < 3 ? start : (c->type + start) % 2;
+}
+
 static void set_start(struct rect_slab *slab, int start)
 {
     for (size_t i = 0; i < slab->corner_count; i++)
-        slab->corners[i].choice = start < 3 ? start : (int)((i + (i / 2) + (size_t)start) % 2);
+        slab->corners[i].choice = pattern(start, &slab->corners[i]);
+}
+
+/* All corners of one opening at once, in each pattern. */
+static enum status flip_groups(struct rect_slab *slab, struct kept *best)
+{
+    int *was = calloc(slab->corner_count + 1, sizeof *was);
+    enum status status = was ? STATUS_OK : STATUS_NO_MEMORY;
+    for (size_t g = 0; !status && g < slab->corner_count && slab->broken; g++) {
+        if (slab->corners[g].group != g)
+            continue;
+        for (int start = 0; !status && start < 5; start++) {
+            const double before = slab->cost;
+            if (slab->evaluations > slab->allowed)
+                break;
+            for (size_t i = 0; i < slab->corner_count; i++) {
+                was[i] = slab->corners[i].choice;
+                if (slab->corners[i].group == g)
+                    slab->corners[i].choice = pattern(start, &slab->corners[i]);
+            }
+            status = descend_all(slab, false, best);
+            for (size_t i = 0; slab->cost > before - 1e-7 && i < slab->corner_count; i++)
+                slab->corners[i].choice = was[i];
+        }
+    }
+    free(was);
+    return status;
 }
 
 /* Starts: every corner by x, by y, by both, and the two pinwheels (by turns). */
@@ -251,6 +283,8 @@ enum status rect_solve(struct rect_slab *slab, bool quick)
     enum status status = kept_make(&best, slab) ? STATUS_OK : STATUS_NO_MEMORY;
     if (!status)
         status = starts(slab, &best);
+    if (!status && slab->broken && slab->group_count > 1)
+        status = flip_groups(slab, &best);
     if (!status && !quick)
         status = flips(slab, &best);
     if (!status && !quick && slab->broken) { /* a rule gives: look closer, at every 0.1 m */

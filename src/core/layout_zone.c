@@ -269,6 +269,9 @@ static bool runs_across(const struct zone *z, const struct work_line *l)
         if (f->arcs[i].u0 < l->u && l->u < f->arcs[i].u1 &&
             (l->v0 > f->arcs[i].v0 || l->v1 < f->arcs[i].v1))
             return false;
+    for (size_t i = 0; i < f->gate_count; i++)
+        if (f->gates[i].u == l->u && (l->v0 > f->gates[i].v0 || l->v1 < f->gates[i].v1))
+            return false;
     return true;
 }
 
