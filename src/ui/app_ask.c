@@ -21,7 +21,7 @@ void app_ask_replace(struct app *app, const struct request *request)
 bool ask_has_text(enum ask ask)
 {
     return ask == ASK_OPEN || ask == ASK_SAVE || ask == ASK_FIND || ask == ASK_ADD_SIZE ||
-           ask == ASK_CROSS;
+           ask == ASK_MOVE || ask == ASK_CROSS;
 }
 
 void ask_words(const struct app *app, struct text *out)
@@ -59,6 +59,10 @@ void ask_words(const struct app *app, struct text *out)
         break;
     case ASK_ADD_SIZE:
         text_format(out, "Size of the %s: ", plan_kind_word(app->add_kind));
+        break;
+    case ASK_MOVE:
+        if (!plan_move_words(app, out))
+            text_add(out, "There is no line any more; Esc. ");
         break;
     case ASK_CROSS:
         text_add(out, "Cross to (east, north): ");
@@ -183,6 +187,9 @@ static void answer(struct app *app)
         break;
     case ASK_ADD_SIZE:
         plan_add(app);
+        break;
+    case ASK_MOVE:
+        plan_move_line(app);
         break;
     case ASK_CROSS:
         plan_cross_to(app);

@@ -15,6 +15,18 @@ void plan_next_kind(struct app *app, int step);
 void plan_add_kind(struct app *app);
 void plan_add(struct app *app);
 void plan_cross_to(struct app *app);
+void plan_point_words(double x, double y, char *out, size_t size);
+bool plan_on_slab(const struct app *app);   /* whether the cross is */
+int plan_line_under(const struct app *app); /* joint line under the cross, 0 = none */
+double plan_reach(const struct app *app);   /* how near the cross counts as on it, m */
+
+/* page_plan_line.c */
+void plan_draw_line(struct app *app, const char *kind, bool level);
+void plan_keep_line(struct app *app);       /* or lets a kept or drawn one go */
+bool plan_line_kept(const struct app *app); /* a [joint] is under the cross */
+bool plan_take_line(struct app *app);       /* false: there is no line under the cross */
+bool plan_move_words(const struct app *app, struct text *out); /* false: no line to move */
+void plan_move_line(struct app *app);
 
 /* page_buy.c: the other widths, by plans of their own */
 void buy_fill(struct app *app);

@@ -154,6 +154,17 @@ static void say_refused(struct app *app, const struct finding_list *findings)
     app_tell(app, "%s", message[0] != '\0' ? message : "Refused.");
 }
 
+/* Whether a path names a whole section: object.C1, opening.pit, joint.2; a path of a value has
+ * more. */
+static bool is_section(const char *path)
+{
+    const char *dot = strchr(path, '.');
+
+    return (strncmp(path, "object.", 7) == 0 || strncmp(path, "opening.", 8) == 0 ||
+            strncmp(path, "joint.", 6) == 0) &&
+           strchr(dot + 1, '.') == NULL;
+}
+
 bool edit_change(struct app *app, const struct change_item *items, size_t count, const char *words)
 {
     struct document *copy = NULL, *old = app->document;
@@ -161,9 +172,8 @@ bool edit_change(struct app *app, const struct change_item *items, size_t count,
     enum status status = document_copy(app->document, &copy);
 
     for (size_t i = 0; i < count && status == STATUS_OK; i++) {
-        if (items[i].value[0] == '\0' && document_get(copy, items[i].path) == NULL &&
-            strchr(items[i].path, '.') != NULL && strncmp(items[i].path, "object", 6) != 0 &&
-            strncmp(items[i].path, "opening", 7) != 0)
+        if (items[i].value[0] == '\0' && !is_section(items[i].path) &&
+            document_get(copy, items[i].path) == NULL)
             continue; /* nothing there to remove */
         status = document_set(copy, items[i].path, items[i].value, &findings);
     }

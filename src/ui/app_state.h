@@ -64,6 +64,7 @@ enum ask {
     ASK_FIND,
     ASK_ADD_KIND,
     ASK_ADD_SIZE,
+    ASK_MOVE,
     ASK_CROSS
 };
 

@@ -26,7 +26,11 @@ const struct key_row key_table[] = {
     {PRESS_DOWN, ACTION_DOWN, PLACE_EVERYWHERE, "down", NULL,
      "The row below; keeps an opened row first."},
     {'a', ACTION_ADD, PLACE_PLAN, "a", NULL, "Plan: adds a column, manhole, hole, wall ... here."},
-    {'d', ACTION_TAKE_AWAY, PLACE_PLAN, "d", NULL, "Plan: takes away what is under the cross."},
+    {'d', ACTION_TAKE_AWAY, PLACE_PLAN, "d", NULL,
+     "Plan: takes away what is under the cross; forbids a line there."},
+    {'k', ACTION_KEEP, PLACE_PLAN, "k", NULL,
+     "Plan: keeps the line under the cross, or lets it go."},
+    {'v', ACTION_MOVE, PLACE_PLAN, "v", NULL, "Plan: moves the line under the cross."},
     {'z', ACTION_NEARER, PLACE_PLAN, "z", NULL, "Plan: nearer."},
     {'x', ACTION_FARTHER, PLACE_PLAN, "x", NULL, "Plan: farther."},
 };

@@ -48,6 +48,8 @@ enum action {
     ACTION_DOWN,
     ACTION_ADD,
     ACTION_TAKE_AWAY,
+    ACTION_KEEP,
+    ACTION_MOVE,
     ACTION_NEARER,
     ACTION_FARTHER
 };

@@ -6,9 +6,9 @@
 #include <stdio.h>
 #include <string.h>
 
-enum { ADD_HOLE = 5, ADD_WALL = 6, ADD_OLD_JOINT = 7, ADD_COUNT };
+enum { ADD_HOLE = 5, ADD_WALL, ADD_OLD_JOINT, ADD_LINE, ADD_COUNT = ADD_LINE + 6 };
 static const struct {
-    const char *word, *kind, *size; /* kind: of an object; size: the usual one */
+    const char *word, *kind, *size; /* kind: of an object or joint; size: the usual one */
     const char *us_size;
     char letter;
 } things[ADD_COUNT] = {
@@ -20,6 +20,12 @@ static const struct {
     {"hole", NULL, "1.2 x 1.2 m", "4 x 4 ft", 0},
     {"wall along the side", NULL, NULL, NULL, 0},
     {"old joint beside the side", NULL, NULL, NULL, 0},
+    {"cut, south to north", "contraction", NULL, NULL, 0},
+    {"cut, west to east", "contraction", NULL, NULL, 0},
+    {"pour end, south to north", "construction", NULL, NULL, 0},
+    {"pour end, west to east", "construction", NULL, NULL, 0},
+    {"expansion joint, south to north", "expansion", NULL, NULL, 0},
+    {"expansion joint, west to east", "expansion", NULL, NULL, 0},
 };
 
 const char *plan_kind_word(int kind)
@@ -157,11 +163,16 @@ static void add_size(const struct app *app, struct text *out, double a, double b
     unit_show(out, b, QUANTITY_LENGTH, app_units(app));
 }
 
-/* The line whose joint runs within a quarter of a step of the cross; 0: none. */
-static int line_under(const struct app *app)
+/* A joint within a quarter of a step is under the cross. */
+double plan_reach(const struct app *app)
+{
+    return cross_step(app) / 4 + 1e-6;
+}
+
+int plan_line_under(const struct app *app)
 {
     const struct layout *layout = &app->plan.layout;
-    double reach = cross_step(app) / 4 + 1e-6, best = reach;
+    double best = plan_reach(app);
     int line = 0;
 
     for (size_t i = 0; app->has_plan && i < layout->joint_count; i++) {
@@ -174,6 +185,13 @@ static int line_under(const struct app *app)
         }
     }
     return line;
+}
+
+bool plan_on_slab(const struct app *app)
+{
+    const struct layout *layout = &app->plan.layout;
+
+    return inside(app->cross_x, app->cross_y, layout->outline, layout->outline_count);
 }
 
 static void under_words(const struct app *app, struct text *out)
@@ -191,7 +209,7 @@ static void under_words(const struct app *app, struct text *out)
         text_add(out, "; the joints meet its box. d takes it away.");
     } else if (opening != NULL) {
         text_format(out, "hole %s. d takes it away.", opening->name);
-    } else if (joint_line_find(&app->plan.layout, line_under(app), &line)) {
+    } else if (joint_line_find(&app->plan.layout, plan_line_under(app), &line)) {
         joint_line_describe(out, &app->plan, &line);
     } else if (panel != NULL) {
         name_panel(&app->plan.layout, panel, name);
@@ -216,7 +234,7 @@ static void put_item(struct change_item *item, const char *path, const char *val
     snprintf(item->value, sizeof item->value, "%s", value);
 }
 
-static void point_words(double x, double y, char *out, size_t size)
+void plan_point_words(double x, double y, char *out, size_t size)
 {
     struct text words = {0};
 
@@ -252,7 +270,7 @@ static void add_object(struct app *app)
     const char *size = app->editor.bytes;
 
     free_name(app, things[app->add_kind].letter, name, sizeof name);
-    point_words(app->cross_x, app->cross_y, at, sizeof at);
+    plan_point_words(app->cross_x, app->cross_y, at, sizeof at);
     snprintf(path, sizeof path, "object.%s.kind", name);
     put_item(&items[0], path, things[app->add_kind].kind);
     snprintf(path, sizeof path, "object.%s.at", name);
@@ -295,8 +313,8 @@ static void add_hole(struct app *app)
     }
     free_name(app, 0, name, sizeof name);
     for (int i = 0; i < 4; i++) {
-        point_words(app->cross_x + (i == 1 || i == 2 ? w : -w) / 2,
-                    app->cross_y + (i >= 2 ? d : -d) / 2, at, sizeof at);
+        plan_point_words(app->cross_x + (i == 1 || i == 2 ? w : -w) / 2,
+                         app->cross_y + (i >= 2 ? d : -d) / 2, at, sizeof at);
         snprintf(path, sizeof path, "opening.%s.point.%d", name, i + 1);
         put_item(&items[i], path, at);
     }
@@ -337,7 +355,9 @@ static void add_at_side(struct app *app, bool joint)
 
 void plan_add_kind(struct app *app)
 {
-    if (app->add_kind == ADD_WALL || app->add_kind == ADD_OLD_JOINT)
+    if (app->add_kind >= ADD_LINE)
+        plan_draw_line(app, things[app->add_kind].kind, (app->add_kind - ADD_LINE) % 2 == 1);
+    else if (app->add_kind == ADD_WALL || app->add_kind == ADD_OLD_JOINT)
         add_at_side(app, app->add_kind == ADD_OLD_JOINT);
     else
         app_ask(app, ASK_ADD_SIZE,
@@ -397,6 +417,8 @@ static void take_away(struct app *app)
         snprintf(path, sizeof path, "object.%.40s", object->name);
     else if (opening != NULL)
         snprintf(path, sizeof path, "opening.%.40s", opening->name);
+    else if (plan_take_line(app))
+        return;
     else if (side >= 0 && distance < 0.6)
         snprintf(path, sizeof path, "edge.%d.against", side + 1);
     else {
@@ -447,9 +469,17 @@ static void draw(const struct app *app, struct canvas *canvas)
     if (app_roomy(app))
         draw_answers(app, canvas, rows + 3, 0, 0, 2);
     text_clear(&words);
-    text_add(&words, "Arrows move the cross by ");
-    unit_show(&words, cross_step(app), QUANTITY_LENGTH, app_units(app));
-    text_add(&words, "; digits type where it stands. Enter says more.");
+    if (plan_line_under(app) > 0) {
+        text_format(&words, "k %s, v moves it, d %s. Arrows move the cross by ",
+                    plan_line_kept(app) ? "lets this line go" : "keeps this line",
+                    plan_line_kept(app) ? "takes it away" : "forbids it here");
+        unit_show(&words, cross_step(app), QUANTITY_LENGTH, app_units(app));
+        text_add(&words, ".");
+    } else {
+        text_add(&words, "Arrows move the cross by ");
+        unit_show(&words, cross_step(app), QUANTITY_LENGTH, app_units(app));
+        text_add(&words, "; digits type where it stands. Enter says more.");
+    }
     draw_foot(app, canvas, text_string(&words));
     text_free(&words);
     text_free(&under);
@@ -527,6 +557,15 @@ static bool key(struct app *app, uint32_t pressed)
         return true;
     case ACTION_TAKE_AWAY:
         take_away(app);
+        return true;
+    case ACTION_KEEP:
+        plan_keep_line(app);
+        return true;
+    case ACTION_MOVE:
+        if (plan_line_under(app) > 0)
+            app_ask(app, ASK_MOVE, "");
+        else
+            app_tell(app, "No joint under the cross: move it onto a line first.");
         return true;
     case ACTION_NEARER:
         nearer(app);

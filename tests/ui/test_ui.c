@@ -311,6 +311,40 @@ static void test_bare_numbers_us(void **state)
     app_free(app);
 }
 
+/* Keep a line, move it, let it go; draw a cut where the solver had none; forbid one. */
+static void test_hand_on_lines(void **state)
+{
+    struct app *app = open_example(false);
+    struct text bytes = {0};
+
+    (void)state;
+    press(app, "p8 6~"); /* on line 2 of the yard, 8 m from the west */
+    assert_true(shows(app, "cut 2, 24.0 m; tape from the west 8.000 m"));
+    press(app, "k");
+    app_write(app, &bytes);
+    assert_non_null(strstr(text_string(&bytes),
+                           "[joint]\nkind = contraction\nfrom = 8, 0 m\nto = 8, "
+                           "24 m\nkeep = yes\n"));
+    press(app, "v0.5~");
+    text_clear(&bytes);
+    app_write(app, &bytes);
+    assert_non_null(strstr(text_string(&bytes), "from = 8.5, 0 m\nto = 8.5, 24 m"));
+    press(app, "8.5 6~k"); /* lets it go: all joints are the program's again */
+    text_clear(&bytes);
+    app_write(app, &bytes);
+    assert_null(strstr(text_string(&bytes), "[joint]"));
+    assert_true(shows(app, "45 panels"));
+    press(app, "6 6~a");
+    for (int i = 0; i < 8; i++)
+        press(app, ">");
+    press(app, "~"); /* a cut from south to north through 6 m */
+    assert_true(shows(app, "6.000 m at both ends"));
+    press(app, "50 50~a~"); /* off the slab: said, nothing changed */
+    assert_true(shows(app, "not on the slab"));
+    text_free(&bytes);
+    app_free(app);
+}
+
 /* A file that is not there yet: the questions begin it and saving goes there at once. */
 static void test_new_file(void **state)
 {
@@ -532,6 +566,7 @@ int main(void)
         cmocka_unit_test(test_choice),
         cmocka_unit_test(test_example_never_leaks),
         cmocka_unit_test(test_bare_numbers_us),
+        cmocka_unit_test(test_hand_on_lines),
         cmocka_unit_test(test_new_file),
         cmocka_unit_test(test_new_user),
         cmocka_unit_test(test_leave_asks),

@@ -1,0 +1,233 @@
+/* The user's hand on joint lines: draw one through the cross, keep one as it stands, move it,
+ * forbid it. What is drawn or kept is a [joint] of the job; the rest of the plan is laid out around
+ * it. */
+#include "export/lines.h"
+#include "ui/app_ask.h"
+#include <float.h>
+#include <math.h>
+#include <stdio.h>
+#include <string.h>
+
+struct segment {
+    double x1, y1, x2, y2;
+};
+
+/* ---- what is under the cross ---- */
+
+static double distance_to(const struct segment *s, double x, double y)
+{
+    double dx = s->x2 - s->x1, dy = s->y2 - s->y1, length = hypot(dx, dy);
+    double t = length > 0 ? ((x - s->x1) * dx + (y - s->y1) * dy) / (length * length) : 0;
+
+    t = fmax(0, fmin(1, t));
+    return hypot(s->x1 + t * dx - x, s->y1 + t * dy - y);
+}
+
+/* The [joint] under the cross, from 1; 0: none. */
+static size_t drawn_under(const struct app *app)
+{
+    double best = plan_reach(app);
+    size_t found = 0;
+
+    for (size_t i = 0; i < app->job.joint_count; i++) {
+        const struct drawn_joint *joint = &app->job.joints[i];
+        const struct segment s = {joint->x1, joint->y1, joint->x2, joint->y2};
+        double distance = distance_to(&s, app->cross_x, app->cross_y);
+        if (distance <= best) {
+            best = distance;
+            found = i + 1;
+        }
+    }
+    return found;
+}
+
+bool plan_line_kept(const struct app *app)
+{
+    return drawn_under(app) > 0;
+}
+
+/* ---- the slab's edge on both sides of the cross ---- */
+
+/* Where a ring crosses the line through the cross along x (level) or y: the nearest before and
+ * after the cross. */
+static void cross_ring(const struct layout_point *points, size_t count, double at, double from,
+                       bool level, double *before, double *after)
+{
+    for (size_t i = 0; i < count; i++) {
+        const struct layout_point *a = &points[i], *b = &points[(i + 1) % count];
+        double a_at = level ? a->y : a->x, b_at = level ? b->y : b->x, along, t;
+        if ((a_at > at) == (b_at > at))
+            continue;
+        t = (at - a_at) / (b_at - a_at);
+        along = level ? a->x + t * (b->x - a->x) : a->y + t * (b->y - a->y);
+        if (along <= from)
+            *before = fmax(*before, along);
+        else
+            *after = fmin(*after, along);
+    }
+}
+
+/* The line through the cross from edge to edge; false when the cross is off the slab. */
+static bool chord(const struct app *app, bool level, struct segment *out)
+{
+    const struct layout *layout = &app->plan.layout;
+    double at = level ? app->cross_y : app->cross_x, from = level ? app->cross_x : app->cross_y;
+    double before = -DBL_MAX, after = DBL_MAX;
+
+    if (!app->has_plan || !plan_on_slab(app))
+        return false;
+    cross_ring(layout->outline, layout->outline_count, at, from, level, &before, &after);
+    for (size_t i = 0; i < layout->opening_count; i++)
+        cross_ring(layout->openings[i].points, layout->openings[i].count, at, from, level, &before,
+                   &after);
+    if (before <= -DBL_MAX || after >= DBL_MAX)
+        return false;
+    *out =
+        level ? (struct segment){before, at, after, at} : (struct segment){at, before, at, after};
+    return true;
+}
+
+/* ---- changes ---- */
+
+static void put(struct change_item *item, size_t number, const char *key, const char *value)
+{
+    *item = (struct change_item){0};
+    if (key[0] == '\0')
+        snprintf(item->path, sizeof item->path, "joint.%zu", number);
+    else
+        snprintf(item->path, sizeof item->path, "joint.%zu.%s", number, key);
+    snprintf(item->value, sizeof item->value, "%s", value);
+}
+
+static void put_point(struct change_item *item, size_t number, const char *key, double x, double y)
+{
+    char words[64];
+
+    plan_point_words(x, y, words, sizeof words);
+    put(item, number, key, words);
+}
+
+/* A new [joint] at the end of the file. */
+static bool add_joint(struct app *app, const char *kind, const struct segment *at, bool keep,
+                      const char *words)
+{
+    struct change_item items[4];
+    size_t number = app->job.joint_count + 1;
+
+    put(&items[0], number, "kind", kind);
+    put_point(&items[1], number, "from", at->x1, at->y1);
+    put_point(&items[2], number, "to", at->x2, at->y2);
+    put(&items[3], number, "keep", keep ? "yes" : "no");
+    return edit_change(app, items, 4, words);
+}
+
+static const char *kind_of(const struct joint_line *line)
+{
+    if (line->expansion)
+        return "expansion";
+    return line->kind == LAYOUT_CONTRACTION    ? "contraction"
+           : line->kind == LAYOUT_CONSTRUCTION ? "construction"
+                                               : "isolation";
+}
+
+void plan_draw_line(struct app *app, const char *kind, bool level)
+{
+    struct segment at;
+    char words[WORDS_MOST];
+
+    if (!chord(app, level, &at)) {
+        app_tell(app, "The cross is not on the slab: move it where the joint shall go.");
+        return;
+    }
+    snprintf(words, sizeof words, "%s joint drawn", kind);
+    add_joint(app, kind, &at, true, words);
+}
+
+void plan_keep_line(struct app *app)
+{
+    size_t drawn = drawn_under(app);
+    struct joint_line line;
+    struct change_item item;
+    char words[WORDS_MOST];
+
+    if (drawn > 0) {
+        put(&item, drawn, "", "");
+        edit_change(app, &item, 1, "joint let go");
+        return;
+    }
+    if (!joint_line_find(&app->plan.layout, plan_line_under(app), &line)) {
+        app_tell(app, "No joint under the cross: move it onto a line, then k keeps that line.");
+        return;
+    }
+    snprintf(words, sizeof words, "line %s kept as it stands", line.name);
+    add_joint(app, kind_of(&line), &(struct segment){line.x1, line.y1, line.x2, line.y2}, true,
+              words);
+}
+
+bool plan_take_line(struct app *app)
+{
+    size_t drawn = drawn_under(app);
+    struct joint_line line;
+    struct change_item item;
+    char words[WORDS_MOST];
+
+    if (drawn > 0) {
+        put(&item, drawn, "", "");
+        edit_change(app, &item, 1, "drawn joint taken away");
+        return true;
+    }
+    if (!joint_line_find(&app->plan.layout, plan_line_under(app), &line))
+        return false;
+    snprintf(words, sizeof words, "line %s forbidden there", line.name);
+    add_joint(app, kind_of(&line), &(struct segment){line.x1, line.y1, line.x2, line.y2}, false,
+              words);
+    return true;
+}
+
+/* ---- moving ---- */
+
+bool plan_move_words(const struct app *app, struct text *out)
+{
+    struct joint_line line;
+    bool level;
+
+    if (!joint_line_find(&app->plan.layout, plan_line_under(app), &line))
+        return false;
+    level = fabs(line.y2 - line.y1) < fabs(line.x2 - line.x1);
+    text_format(out, "Move line %s %s by (%s): ", line.name, level ? "north" : "east",
+                unit_name(QUANTITY_LENGTH, app_units(app)));
+    return true;
+}
+
+void plan_move_line(struct app *app)
+{
+    const char *typed = app->editor.bytes;
+    struct unit_reading by = unit_read(typed, strlen(typed), QUANTITY_LENGTH,
+                                       unit_name(QUANTITY_LENGTH, app_units(app)));
+    size_t drawn = drawn_under(app);
+    struct joint_line line;
+    struct segment at;
+    struct change_item items[2];
+    bool level;
+
+    if (by.problem != NULL || fabs(by.si) > 1e4 ||
+        !joint_line_find(&app->plan.layout, plan_line_under(app), &line)) {
+        app_tell(app, "Type a length, such as 0.3 or -0.3 m.");
+        return;
+    }
+    at = (struct segment){line.x1, line.y1, line.x2, line.y2};
+    if (drawn > 0) {
+        const struct drawn_joint *joint = &app->job.joints[drawn - 1];
+        at = (struct segment){joint->x1, joint->y1, joint->x2, joint->y2};
+    }
+    level = fabs(at.y2 - at.y1) < fabs(at.x2 - at.x1);
+    *(level ? &at.y1 : &at.x1) += by.si;
+    *(level ? &at.y2 : &at.x2) += by.si;
+    if (drawn == 0) {
+        add_joint(app, kind_of(&line), &at, true, "line moved");
+        return;
+    }
+    put_point(&items[0], drawn, "from", at.x1, at.y1);
+    put_point(&items[1], drawn, "to", at.x2, at.y2);
+    edit_change(app, items, 2, "line moved");
+}
