@@ -94,17 +94,50 @@ static bool far_apart(const struct layout_joint *joint, const struct extent *ext
            fmin(joint->y1, joint->y2) > extent->y1 + near_m;
 }
 
-static bool add_joint(const struct layout *layout, const struct extent *extents, size_t joint,
-                      struct contact_list *list)
-{
-    struct frame frame = frame_of(&layout->joints[joint]);
+/* Panels by their western side: a joint looks only at those that can reach it. */
+struct panel_place {
+    struct extent extent;
+    size_t panel;
+};
 
-    for (size_t p = 0; p < layout->panel_count; p++) {
-        struct contact contact = {.joint = joint, .panel = p};
-        if (far_apart(&layout->joints[joint], &extents[p]) ||
-            !overlap(&frame, &layout->panels[p], &contact.from, &contact.to))
+static int more_to_the_west(const void *a, const void *b)
+{
+    const struct panel_place *p = a, *q = b;
+
+    if (p->extent.x0 < q->extent.x0 || p->extent.x0 > q->extent.x0)
+        return p->extent.x0 < q->extent.x0 ? -1 : 1;
+    return p->panel < q->panel ? -1 : p->panel > q->panel;
+}
+
+/* The first place whose western side is not west of `x`. */
+static size_t first_from(const struct panel_place *places, size_t count, double x)
+{
+    size_t low = 0, high = count;
+
+    while (low < high) {
+        size_t middle = low + (high - low) / 2;
+        if (places[middle].extent.x0 < x)
+            low = middle + 1;
+        else
+            high = middle;
+    }
+    return low;
+}
+
+static bool add_joint(const struct layout *layout, const struct panel_place *places, double widest,
+                      size_t joint, struct contact_list *list)
+{
+    const struct layout_joint *at = &layout->joints[joint];
+    struct frame frame = frame_of(at);
+    double west = fmin(at->x1, at->x2) - near_m, east = fmax(at->x1, at->x2) + near_m;
+
+    for (size_t i = first_from(places, layout->panel_count, west - widest);
+         i < layout->panel_count && places[i].extent.x0 <= east; i++) {
+        const struct layout_panel *panel = &layout->panels[places[i].panel];
+        struct contact contact = {.joint = joint, .panel = places[i].panel};
+        if (far_apart(at, &places[i].extent) || !overlap(&frame, panel, &contact.from, &contact.to))
             continue;
-        contact.side = body_side(&frame, &layout->panels[p], &contact.extent);
+        contact.side = body_side(&frame, panel, &contact.extent);
         if (!array_reserve((void **)&list->items, &list->capacity, list->count + 1,
                            sizeof *list->items))
             return false;
@@ -115,19 +148,24 @@ static bool add_joint(const struct layout *layout, const struct extent *extents,
 
 enum status contact_list_make(const struct layout *layout, struct contact_list *list)
 {
-    struct extent *extents = calloc(layout->panel_count + 1, sizeof *extents);
+    struct panel_place *places = calloc(layout->panel_count + 1, sizeof *places);
+    double widest = 0;
     bool good;
 
     *list = (struct contact_list){0};
     list->first = calloc(layout->joint_count + 1, sizeof *list->first);
-    good = extents != NULL && list->first != NULL;
-    for (size_t p = 0; good && p < layout->panel_count; p++)
-        extents[p] = panel_extent(&layout->panels[p]);
+    good = places != NULL && list->first != NULL;
+    for (size_t p = 0; good && p < layout->panel_count; p++) {
+        places[p] = (struct panel_place){panel_extent(&layout->panels[p]), p};
+        widest = fmax(widest, places[p].extent.x1 - places[p].extent.x0);
+    }
+    if (good)
+        qsort(places, layout->panel_count, sizeof *places, more_to_the_west);
     for (size_t j = 0; good && j < layout->joint_count; j++) {
         list->first[j] = list->count;
-        good = add_joint(layout, extents, j, list);
+        good = add_joint(layout, places, widest, j, list);
     }
-    free(extents);
+    free(places);
     if (!good) {
         contact_list_free(list);
         return STATUS_NO_MEMORY;

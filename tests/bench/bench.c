@@ -3,7 +3,8 @@
  *   first screen   program start to the last byte of the first full screen, in a pty, against
  *                  starting /bin/true
  *   keystroke      the whole chain (plan_make) on an example, against GEOS polygonising the same
- *                  joints and edges (only to name the panels, no rule, no movement) */
+ *                  joints and edges (only to name the panels, no rule, no movement)
+ *   large slabs    the same on slabs of 1 000 to 50 000 panels, one object moved in every run */
 #include "job/document.h"
 #include "plan/plan.h"
 #include <geos_c.h>
@@ -12,6 +13,7 @@
 #include <stdio.h>
 #include <stdlib.h>
 #include <string.h>
+#include <sys/resource.h>
 #include <sys/wait.h>
 #include <time.h>
 #include <unistd.h>
@@ -41,7 +43,7 @@ static double median(double *values, size_t count)
 
 static void row(const char *what, double ms, const char *reference, double reference_ms)
 {
-    printf("%-34s %9.3f ms   %-22s %9.3f ms   ratio %.3f\n", what, ms, reference, reference_ms,
+    printf("%-38s %9.3f ms   %-22s %9.3f ms   ratio %.3f\n", what, ms, reference, reference_ms,
            reference_ms > 0 ? ms / reference_ms : 0.0);
 }
 
@@ -179,11 +181,80 @@ static void bench_keystroke(const char *name, const char *path)
     GEOS_finish_r(geos);
 }
 
+/* ---- large slabs: the layout alone ---- */
+
+/* A yard with columns in a grid, off the joint lines by a little so that lines have to bend to
+ * them. */
+static char *big_job(double length_m, double width_m, int columns, int rows, double shift_m)
+{
+    size_t room = 4096 + 128 * (size_t)(columns * rows), used;
+    char *text = malloc(room);
+
+    used = (size_t)snprintf(text, room,
+                            "format = 1\n[slab]\nthickness = 200 mm\n[outline]\npoint = 0, 0 m\n"
+                            "point = %g, 0 m\npoint = %g, %g m\npoint = 0, %g m\n",
+                            length_m, length_m, width_m, width_m);
+    for (int i = 0; i < columns * rows; i++)
+        used += (size_t)snprintf(text + used, room - used,
+                                 "[object C%d]\nkind = column\nat = %g, %g m\nsize = 0.4 x 0.4 m\n",
+                                 i + 1, length_m * (1 + i % columns) / (columns + 1) + shift_m,
+                                 width_m * (1 + i / columns) / (rows + 1));
+    return text;
+}
+
+static void read_text(const char *text, struct job *job)
+{
+    struct document *document = NULL;
+    struct finding_list findings = {0};
+
+    job_init(job);
+    document_parse(text, strlen(text), &document, &findings);
+    document_job(document, job, &findings);
+    document_free(document);
+    finding_free(&findings);
+}
+
+static void bench_large(double length_m, double width_m, int columns, int rows)
+{
+    GEOSContextHandle_t geos = GEOS_init_r();
+    enum { LARGE_RUNS = 5 };
+    double chain[LARGE_RUNS], reference[LARGE_RUNS];
+    struct job job;
+    size_t panels = 0;
+    int polygons = 0;
+    char what[64];
+
+    for (int i = 0; i < LARGE_RUNS; i++) { /* each run with its objects elsewhere: an edit */
+        char *text = big_job(length_m, width_m, columns, rows, 0.01 * i);
+        struct plan plan;
+        double begin;
+        read_text(text, &job);
+        free(text);
+        begin = now_ms();
+        plan_make(&job, NULL, NULL, &plan);
+        chain[i] = now_ms() - begin;
+        panels = plan.layout.panel_count;
+        reference[i] = polygonise_ms(geos, &plan.layout, &polygons);
+        plan_free(&plan);
+        job_free(&job);
+    }
+    snprintf(what, sizeof what, "%zu panels, %d objects (whole chain)", panels, columns * rows);
+    row(what, median(chain, LARGE_RUNS), "GEOS polygonise", median(reference, LARGE_RUNS));
+    GEOS_finish_r(geos);
+}
+
 int main(void)
 {
+    struct rusage usage;
+
     bench_start();
     bench_keystroke("E1", "share/examples/e1-service-yard.slab");
     bench_keystroke("E2", "share/examples/e2-store-floor.slab");
     bench_keystroke("E3", "share/examples/e3-two-lane-road.slab");
+    bench_large(150, 130, 6, 5);
+    bench_large(480, 400, 10, 10);
+    bench_large(1050, 900, 20, 19);
+    getrusage(RUSAGE_SELF, &usage);
+    printf("%-38s %9.1f MB\n", "largest memory of this run", (double)usage.ru_maxrss / 1024);
     return 0;
 }
