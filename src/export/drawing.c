@@ -255,6 +255,24 @@ static void draw_window_names(struct glyph_grid *grid, const struct drawing *dra
     }
 }
 
+static void draw_cracks(struct glyph_grid *grid, const struct drawing *drawing,
+                        const struct job *job)
+{
+    for (size_t i = 0; i < job->crack_count; i++) {
+        const struct rows *rows = &job->cracks[i].rows;
+        for (size_t j = 0; j + 1 < rows->count; j++) {
+            const struct row *a = &rows->items[j], *b = &rows->items[j + 1];
+            int steps = abs(column_of(drawing, b->x) - column_of(drawing, a->x)) +
+                        abs(row_of(drawing, b->y) - row_of(drawing, a->y));
+            for (int s = 0; s <= steps && steps < 10000; s++) {
+                double t = steps > 0 ? (double)s / steps : 0;
+                glyph_put(grid, column_of(drawing, a->x + t * (b->x - a->x)),
+                          row_of(drawing, a->y + t * (b->y - a->y)), '~', INK_BROKEN);
+            }
+        }
+    }
+}
+
 static void draw_broken(struct glyph_grid *grid, const struct drawing *drawing,
                         const struct layout *layout)
 {
@@ -360,6 +378,8 @@ static int legend_rows(const struct plan *plan, bool ascii, char rows[8][40])
         snprintf(rows[n++], 40, "%s soft board", ascii ? "=" : "║");
     snprintf(rows[n++], 40, "N up");
     snprintf(rows[n++], 40, "%zu panels", plan->layout.panel_count);
+    if (plan->job.crack_count > 0)
+        snprintf(rows[n++], 40, "~ crack");
     if (broken > 0)
         snprintf(rows[n++], 40, "! breaks rule");
     return n;
@@ -395,6 +415,7 @@ static void draw_all(struct glyph_grid *grid, struct drawing *drawing, const str
         draw_objects(grid, drawing, &plan->job, layout);
     glyph_resolve(grid);
     if (drawing->joints_drawn) {
+        draw_cracks(grid, drawing, &plan->job);
         draw_broken(grid, drawing, layout);
         if (options->names && options->zoom <= 1)
             draw_names(grid, drawing, layout);

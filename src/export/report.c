@@ -361,6 +361,17 @@ static void add_joints(struct text *out, const struct plan *plan)
     add_list(out, plan, "joints", keys, JOINTS_MOST);
 }
 
+static void add_cracks(struct text *out, const struct plan *plan)
+{
+    static const char *const keys[] = {"number", "length_m",   "panels",
+                                       "beside", "distance_m", NULL};
+
+    if (plan->crack_count == 0)
+        return;
+    heading(out, "CRACKS");
+    add_list(out, plan, "cracks", keys, JOINTS_MOST);
+}
+
 static void add_reasons(struct text *out, const char *name, const struct layout_reason *reasons,
                         size_t count)
 {
@@ -457,7 +468,7 @@ static const struct part {
     {"sealing_table", add_table},     {"isolation", add_isolation},
     {"checks", add_checks},           {"quantities", add_quantities},
     {"joints", add_joints},           {"layout", add_layout},
-    {"cautions", add_cautions},
+    {"cracks", add_cracks},           {"cautions", add_cautions},
 };
 /* Keys of the JSON that stand inside another part of the text. */
 static const char *const inside[][2] = {
@@ -467,7 +478,8 @@ static const char *const inside[][2] = {
     {"working", "seal"},
     {"cut", "seal"},
     {"steel", "quantities"},
-    {"restraint", "quantities"},  {"layout_reasons", "layout"},
+    {"restraint", "quantities"},
+    {"layout_reasons", "layout"},
     {"program", "answers"},
 };
 

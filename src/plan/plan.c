@@ -82,6 +82,9 @@ static enum status run_chain(struct plan *plan, const struct plan_progress *prog
     plan_set_restraint(plan);
     plan_set_steel(plan);
     plan_set_quantities(plan);
+    status = plan_set_cracks(plan);
+    if (status != STATUS_OK)
+        return status;
     return plan_set_checks(plan);
 }
 
@@ -120,6 +123,9 @@ void plan_free(struct plan *plan)
     free(plan->isolation);
     free(plan->checks);
     free(plan->joints);
+    free(plan->cracks);
+    plan->cracks = NULL;
+    plan->crack_count = 0;
     plan->isolation = NULL;
     plan->checks = NULL;
     plan->joints = NULL;

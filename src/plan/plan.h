@@ -57,6 +57,22 @@ struct plan_rod {
     double diameter_m, length_m;
 };
 
+enum { CRACK_PANELS = 16 };
+struct plan_crack_panel {
+    int panel;
+    double length_m;
+};
+struct plan_crack { /* one per [crack] */
+    int number;
+    double length_m;
+    struct plan_crack_panel panels[CRACK_PANELS]; /* those it crosses, in its own order */
+    size_t panel_count;
+    int panels_crossed; /* the same, for the table */
+    int joint;          /* contraction joint it runs beside, -1 = none */
+    char beside[48];    /* its id */
+    double distance_m;  /* mean distance from it */
+};
+
 enum { LIMIT_MOST = 16, WORKING_MOST = 4, TABLE_MOST = 24, PACKAGE_KINDS = 8 };
 
 struct plan {
@@ -145,6 +161,8 @@ struct plan {
         double locked_pa, locked_both_pa; /* locked slab at hottest - zero stress */
         double lift_off_hinge_k, lift_off_continuous_k, rise_left_k; /* blow-up */
     } restraint;
+    struct plan_crack *cracks;
+    size_t crack_count;
     struct plan_joint *joints; /* layout.joint_count of them */
     size_t
         governing_joint; /* index of the contraction joint `movement` describes; SIZE_MAX = none */

@@ -178,6 +178,13 @@ static const struct column check_columns[] = {
     CTEXT(plan_check, "source", "source", source),
     CTEXT(plan_check, "remedy", "what to do", remedy),
 };
+static const struct column crack_columns[] = {
+    CINT(plan_crack, "number", "crack", number),
+    CNUM(plan_crack, "length_m", "length", METRES, length_m),
+    CINT(plan_crack, "panels", "panels crossed", panels_crossed),
+    CTEXT(plan_crack, "beside", "beside joint", beside),
+    CNUM(plan_crack, "distance_m", "away by", MM, distance_m),
+};
 static const struct column package_columns[] = {
     COLUMN("size_l", "size", RESULT_NUMBER, QUANTITY_VOLUME, 1000.0, plan_package, size_m3),
     CINT(plan_package, "count", "packs", count),
@@ -220,6 +227,7 @@ ROWS(working_rows, working, working_count)
 ROWS(table_rows, table, table_count)
 ROWS(isolation_rows, isolation, isolation_count)
 ROWS(check_rows, checks, check_count)
+ROWS(crack_rows, cracks, crack_count)
 ROWS(package_rows, quantities.packages, quantities.package_count)
 ROWS(rod_rows, quantities.rods, quantities.rod_count)
 
@@ -240,6 +248,7 @@ const struct list list_table[] = {
     LIST("sealing_table", table_columns, plan_table_row, table_rows),
     LIST("isolation", isolation_columns, plan_isolation, isolation_rows),
     LIST("checks", check_columns, plan_check, check_rows),
+    LIST("cracks", crack_columns, plan_crack, crack_rows),
     LIST("quantities.packages", package_columns, plan_package, package_rows),
     LIST("quantities.rod_m", rod_columns, plan_rod, rod_rows),
     {"joints",

@@ -20,7 +20,14 @@ bool plan_on_slab(const struct app *app);   /* whether the cross is */
 int plan_line_under(const struct app *app); /* joint line under the cross, 0 = none */
 double plan_reach(const struct app *app);   /* how near the cross counts as on it, m */
 
+/* One length of a list; moves behind it and the comma. */
+bool plan_read_coordinate(const char **string, const char *bare, double *out);
+
 /* page_plan_line.c */
+void plan_add_crack(struct app *app); /* from the cross through the points typed */
+bool plan_crack_words(const struct app *app,
+                      struct text *out); /* what the one under the cross means */
+bool plan_take_crack(struct app *app);   /* false: there is no crack under the cross */
 void plan_draw_line(struct app *app, const char *kind, bool level);
 void plan_keep_line(struct app *app);       /* or lets a kept or drawn one go */
 bool plan_line_kept(const struct app *app); /* a [joint] is under the cross */

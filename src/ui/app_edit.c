@@ -161,7 +161,7 @@ static bool is_section(const char *path)
     const char *dot = strchr(path, '.');
 
     return (strncmp(path, "object.", 7) == 0 || strncmp(path, "opening.", 8) == 0 ||
-            strncmp(path, "joint.", 6) == 0) &&
+            strncmp(path, "joint.", 6) == 0 || strncmp(path, "crack.", 6) == 0) &&
            strchr(dot + 1, '.') == NULL;
 }
 

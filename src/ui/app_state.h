@@ -65,6 +65,7 @@ enum ask {
     ASK_ADD_KIND,
     ASK_ADD_SIZE,
     ASK_MOVE,
+    ASK_CRACK,
     ASK_CROSS
 };
 

@@ -6,7 +6,7 @@
 #include <stdio.h>
 #include <string.h>
 
-enum { ADD_HOLE = 5, ADD_WALL, ADD_OLD_JOINT, ADD_LINE, ADD_COUNT = ADD_LINE + 6 };
+enum { ADD_HOLE = 5, ADD_WALL, ADD_OLD_JOINT, ADD_CRACK, ADD_LINE, ADD_COUNT = ADD_LINE + 6 };
 static const struct {
     const char *word, *kind, *size; /* kind: of an object or joint; size: the usual one */
     const char *us_size;
@@ -20,6 +20,7 @@ static const struct {
     {"hole", NULL, "1.2 x 1.2 m", "4 x 4 ft", 0},
     {"wall along the side", NULL, NULL, NULL, 0},
     {"old joint beside the side", NULL, NULL, NULL, 0},
+    {"crack from here", NULL, NULL, NULL, 0},
     {"cut, south to north", "contraction", NULL, NULL, 0},
     {"cut, west to east", "contraction", NULL, NULL, 0},
     {"pour end, south to north", "construction", NULL, NULL, 0},
@@ -202,6 +203,8 @@ static void under_words(const struct app *app, struct text *out)
     char name[2 * LINE_NAME_MOST], kind[CHOICE_MOST];
     struct joint_line line;
 
+    if (plan_crack_words(app, out))
+        return;
     if (object != NULL) {
         field_choice_word(field_find("object", "kind"), (int)object->kind, kind, sizeof kind);
         text_format(out, "%s %s, ", kind, object->name);
@@ -355,7 +358,9 @@ static void add_at_side(struct app *app, bool joint)
 
 void plan_add_kind(struct app *app)
 {
-    if (app->add_kind >= ADD_LINE)
+    if (app->add_kind == ADD_CRACK)
+        app_ask(app, ASK_CRACK, "");
+    else if (app->add_kind >= ADD_LINE)
         plan_draw_line(app, things[app->add_kind].kind, (app->add_kind - ADD_LINE) % 2 == 1);
     else if (app->add_kind == ADD_WALL || app->add_kind == ADD_OLD_JOINT)
         add_at_side(app, app->add_kind == ADD_OLD_JOINT);
@@ -374,7 +379,7 @@ void plan_add(struct app *app)
 }
 
 /* One number of "10.4 4.9", "10.4 m, 4.9 m", "34 ft 16 ft"; moves behind it. */
-static bool read_coordinate(const char **string, const char *bare, double *out)
+bool plan_read_coordinate(const char **string, const char *bare, double *out)
 {
     size_t length = strcspn(*string, " ,;");
     struct unit_reading reading;
@@ -394,7 +399,7 @@ void plan_cross_to(struct app *app)
     double x, y;
     const char *string = app->editor.bytes, *bare = unit_name(QUANTITY_LENGTH, app_units(app));
 
-    if (read_coordinate(&string, bare, &x) && read_coordinate(&string, bare, &y)) {
+    if (plan_read_coordinate(&string, bare, &x) && plan_read_coordinate(&string, bare, &y)) {
         app->cross_x = x;
         app->cross_y = y;
         return;
@@ -417,7 +422,7 @@ static void take_away(struct app *app)
         snprintf(path, sizeof path, "object.%.40s", object->name);
     else if (opening != NULL)
         snprintf(path, sizeof path, "opening.%.40s", opening->name);
-    else if (plan_take_line(app))
+    else if (plan_take_crack(app) || plan_take_line(app))
         return;
     else if (side >= 0 && distance < 0.6)
         snprintf(path, sizeof path, "edge.%d.against", side + 1);

@@ -231,3 +231,78 @@ void plan_move_line(struct app *app)
     put_point(&items[1], drawn, "to", at.x2, at.y2);
     edit_change(app, items, 2, "line moved");
 }
+
+/* ---- cracks ---- */
+
+enum { CRACK_POINTS = 12 };
+
+static void put_crack_point(struct change_item *item, size_t number, int point, double x, double y)
+{
+    *item = (struct change_item){0};
+    snprintf(item->path, sizeof item->path, "crack.%zu.point.%d", number, point);
+    plan_point_words(x, y, item->value, sizeof item->value);
+}
+
+void plan_add_crack(struct app *app)
+{
+    struct change_item items[CRACK_POINTS];
+    const char *typed = app->editor.bytes, *bare = unit_name(QUANTITY_LENGTH, app_units(app));
+    size_t number = app->job.crack_count + 1;
+    int points = 1;
+
+    put_crack_point(&items[0], number, 1, app->cross_x, app->cross_y);
+    while (*typed != '\0' && points < CRACK_POINTS) {
+        double x, y;
+        if (!plan_read_coordinate(&typed, bare, &x) || !plan_read_coordinate(&typed, bare, &y)) {
+            app_tell(app, "Type pairs, how far east and north: 8.5 4, 8.2 9.");
+            return;
+        }
+        points++;
+        put_crack_point(&items[points - 1], number, points, x, y);
+    }
+    if (points < 2)
+        app_tell(app, "A crack needs a second point: 8.5 4.");
+    else
+        edit_change(app, items, (size_t)points, "crack entered");
+}
+
+/* The crack under the cross, from 1; 0: none. */
+static size_t crack_under(const struct app *app)
+{
+    for (size_t i = 0; i < app->job.crack_count; i++) {
+        const struct rows *rows = &app->job.cracks[i].rows;
+        for (size_t j = 0; j + 1 < rows->count; j++) {
+            const struct row *a = &rows->items[j], *b = &rows->items[j + 1];
+            const struct segment s = {a->x, a->y, b->x, b->y};
+            if (distance_to(&s, app->cross_x, app->cross_y) <= plan_reach(app))
+                return i + 1;
+        }
+    }
+    return 0;
+}
+
+bool plan_crack_words(const struct app *app, struct text *out)
+{
+    char field[32];
+    size_t number = crack_under(app);
+
+    snprintf(field, sizeof field, "crack.%zu", number);
+    for (size_t i = 0; number > 0 && i < app->findings.count; i++)
+        if (strcmp(app->findings.items[i].field, field) == 0) {
+            text_add(out, app->findings.items[i].message);
+            return true;
+        }
+    return false;
+}
+
+bool plan_take_crack(struct app *app)
+{
+    struct change_item item = {0};
+    size_t number = crack_under(app);
+
+    if (number == 0)
+        return false;
+    snprintf(item.path, sizeof item.path, "crack.%zu", number);
+    edit_change(app, &item, 1, "crack taken away");
+    return true;
+}
