@@ -335,7 +335,7 @@ static void test_hand_on_lines(void **state)
     assert_null(strstr(text_string(&bytes), "[joint]"));
     assert_true(shows(app, "45 panels"));
     press(app, "6 6~a");
-    for (int i = 0; i < 8; i++)
+    for (int i = 0; i < 9; i++)
         press(app, ">");
     press(app, "~"); /* a cut from south to north through 6 m */
     assert_true(shows(app, "6.000 m at both ends"));
