@@ -180,7 +180,7 @@ static void set_rules(struct work *w)
     w->slab.rules.raster = in->us_units ? 127 : 80;
     if (in->round_to > 0)
         w->slab.rules.raster = llround(in->round_to * LAYOUT_UNIT);
-    w->slab.allowed = (uint64_t)(2e6 * (in->effort > 0 ? in->effort : 1));
+    w->slab.allowed = (uint64_t)(1e8 * (in->effort > 0 ? in->effort : 1));
 }
 
 /* Panels meet a scan line in one piece: at least so many across, at least so much joint (design 5).

@@ -291,7 +291,12 @@ bool place_snap(struct work *w)
     const int64_t reach = UNITS(snap_m);
     for (size_t i = 0; i < w->box_count; i++)
         find_edge(w, &w->boxes[i]);
-    bool fine = snap_axis(w, 0, reach) && snap_axis(w, 1, reach);
+    return snap_axis(w, 0, reach) && snap_axis(w, 1, reach);
+}
+
+bool place_name_boxes(struct work *w)
+{
+    bool fine = true;
     for (size_t i = 0; fine && i < w->box_count; i++)
         fine = name_box(w, &w->boxes[i]);
     return fine;

@@ -9,8 +9,10 @@ bool place_boxes(struct work *w);
 bool place_lines(struct work *w);
 bool place_expansion(struct work *w);
 bool place_matches(struct work *w);
-/* Moves the boxes onto common lines within the tolerance, or onto the slab edge, and names them. */
+/* Moves the boxes onto common lines within the tolerance, or onto the slab edge. */
 bool place_snap(struct work *w);
+/* Their lines, with names. */
+bool place_name_boxes(struct work *w);
 bool place_index_boxes(struct work *w);
 /* Forces the lines into a region's families. */
 void place_force_lines(const struct work *w, struct rect_slab *slab);

@@ -1,5 +1,5 @@
 /* Families of arcs and gates, forced positions, chords, panels. */
-#include "core/layout_rect.h"
+#include "core/layout_rect_solve.h"
 #include <stdlib.h>
 #include <string.h>
 
@@ -522,6 +522,7 @@ void rect_free(struct rect_slab *slab)
             free(slab->family[axis].arcs[i].cut);
             free(slab->family[axis].arcs[i].forced);
             free(slab->family[axis].arcs[i].room);
+            rect_forget(&slab->family[axis].arcs[i]);
         }
         for (int side = 0; side < 2; side++) {
             free(slab->family[axis].beyond[side]);

@@ -13,12 +13,15 @@
 struct rect_edge { /* side at coordinate u, running over v0 < v1 */
     int64_t u, v0, v1;
 };
+struct rect_memo;
 struct rect_arc {
     int64_t u0, u1, v0, v1;
     int64_t *cut, *forced;
     int64_t (*room)[2]; /* beside each forced one: a box takes so much of the panel below, above */
     int64_t end_room[2]; /* the same at u0 and u1 */
     size_t cut_count, forced_count;
+    struct rect_memo *memo; /* chords for rows met before */
+    size_t memo_count, memo_next;
 };
 struct rect_gate {
     int64_t u, v0, v1;
@@ -55,7 +58,7 @@ struct rect_slab {
     struct rect_corner *corners;
     size_t corner_count, group_count;
     struct rect_rules rules;
-    uint64_t evaluations, allowed;
+    uint64_t evaluations, allowed, start_cost; /* start_cost: what the starts took */
     bool fine; /* places at every 0.1 m too */
     struct rect_box *boxes; /* sorted by x, then y */
     size_t box_count;
@@ -76,8 +79,9 @@ bool rect_force(struct rect_slab *slab, int axis, int64_t u, int64_t v);
 enum status rect_add_box(struct rect_slab *slab, const struct rect_box *box);
 void rect_sort_boxes(struct rect_box *boxes, size_t count);
 const struct rect_box *rect_box_at(const struct rect_slab *slab, int64_t x, int64_t y);
-/* quick: the starts only, no flips of single corners. */
-enum status rect_solve(struct rect_slab *slab, bool quick);
+/* The starts and whole openings only; single corners too; places at every 0.1 m too. */
+enum rect_depth { RECT_QUICK, RECT_FULL, RECT_FINE };
+enum status rect_solve(struct rect_slab *slab, enum rect_depth depth);
 enum status rect_chords(const struct rect_slab *slab, struct rect_chord **chords, size_t *count);
 void rect_sort_chords(struct rect_chord *chords, size_t count);
 enum status rect_panels(const struct rect_slab *slab, struct rect_panel **panels, size_t *count);

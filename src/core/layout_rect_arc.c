@@ -235,10 +235,11 @@ static double cramped(const struct rect_slab *slab, const struct rect_arc *a, in
     return (double)low > rest || (double)high > rest ? BROKEN : 0;
 }
 
-static double gap(const struct rect_slab *slab, int axis, const struct program *p, int64_t from,
+static double gap(struct rect_slab *slab, int axis, const struct program *p, int64_t from,
                   int64_t to, bool first, bool last)
 {
     double cost = 0;
+    slab->evaluations += !first && !last ? p->height_count : p->row_count;
     if (!first && !last) {
         for (size_t i = 0; i < p->height_count; i++)
             cost += p->heights[i].count *
@@ -290,7 +291,6 @@ static void run_program(struct rect_slab *slab, int axis, const struct rect_arc 
                     p->from[q] = k;
                 }
             }
-            slab->evaluations++;
             if (k == barrier || (double)(to - p->at[k]) > reach)
                 break;
         }
@@ -302,12 +302,96 @@ static void run_program(struct rect_slab *slab, int axis, const struct rect_arc 
     }
 }
 
+/* Rows met before and the chords found for them: the same question gets the same answer. */
+enum { MEMORIES = 12 };
+struct rect_memo {
+    struct row *rows;
+    size_t row_count;
+    int64_t *cut;
+    size_t cut_count;
+    bool fine;
+};
+
+void rect_forget(struct rect_arc *arc)
+{
+    for (size_t i = 0; i < arc->memo_count; i++) {
+        free(arc->memo[i].rows);
+        free(arc->memo[i].cut);
+    }
+    free(arc->memo);
+    arc->memo = NULL;
+    arc->memo_count = arc->memo_next = 0;
+}
+
+static bool same_rows(const struct rect_memo *m, const struct program *p)
+{
+    if (m->row_count != p->row_count)
+        return false;
+    for (size_t i = 0; i < p->row_count; i++)
+        if (compare_row(&m->rows[i], &p->rows[i]) || m->rows[i].count < p->rows[i].count ||
+            m->rows[i].count > p->rows[i].count)
+            return false;
+    return true;
+}
+
+static const struct rect_memo *recall(const struct rect_arc *a, const struct program *p, bool fine)
+{
+    for (size_t i = 0; i < a->memo_count; i++)
+        if (a->memo[i].fine == fine && same_rows(&a->memo[i], p))
+            return &a->memo[i];
+    return NULL;
+}
+
+static enum status set_cut(struct rect_arc *a, const int64_t *cut, size_t count)
+{
+    int64_t *copy = calloc(count + 1, sizeof *copy);
+    if (!copy)
+        return STATUS_NO_MEMORY;
+    if (count)
+        memcpy(copy, cut, count * sizeof *copy);
+    free(a->cut);
+    a->cut = copy;
+    a->cut_count = count;
+    return STATUS_OK;
+}
+
+/* Takes over the rows; forgets the oldest. */
+static enum status remember(struct rect_arc *a, struct program *p, bool fine)
+{
+    if (!a->memo)
+        a->memo = calloc(MEMORIES, sizeof *a->memo);
+    int64_t *copy = calloc(a->cut_count + 1, sizeof *copy);
+    if (!a->memo || !copy) {
+        free(copy);
+        return STATUS_NO_MEMORY;
+    }
+    if (a->cut_count)
+        memcpy(copy, a->cut, a->cut_count * sizeof *copy);
+    struct rect_memo *m = &a->memo[a->memo_next];
+    a->memo_next = (a->memo_next + 1) % MEMORIES;
+    if (a->memo_count < MEMORIES)
+        a->memo_count++;
+    free(m->rows);
+    free(m->cut);
+    *m = (struct rect_memo){p->rows, p->row_count, copy, a->cut_count, fine};
+    p->rows = NULL;
+    return STATUS_OK;
+}
+
 enum status rect_solve_arc(struct rect_slab *slab, int axis, size_t arc, bool blind)
 {
     struct rect_arc *a = &slab->family[axis].arcs[arc];
     struct program p = {0};
     struct places list = {0};
     enum status status = find_rows(slab, axis, arc, blind, &p);
+    const struct rect_memo *known = status ? NULL : recall(a, &p, slab->fine);
+    slab->evaluations += p.row_count;
+    if (known) {
+        status = set_cut(a, known->cut, known->cut_count);
+        free(p.rows);
+        free(p.heights);
+        return status;
+    }
     if (!status && !find_places(slab, axis, a, &p, &list))
         status = STATUS_NO_MEMORY;
     if (!status) {
@@ -328,6 +412,7 @@ enum status rect_solve_arc(struct rect_slab *slab, int axis, size_t arc, bool bl
             free(a->cut);
             a->cut = cut;
             a->cut_count = n;
+            status = remember(a, &p, slab->fine);
         } else {
             free(cut);
         }
@@ -419,7 +504,7 @@ static enum status common_lines(struct rect_slab *slab, int axis, const struct s
     for (size_t q = 1; q < n; q++) {
         best[q] = INFINITY;
         for (size_t k = q; k-- > 0;) {
-            slab->evaluations += slab->family[axis].arc_count / 4 + 1;
+            slab->evaluations += slab->family[axis].arc_count / 2 + 1;
             const double cost =
                 best[k] + strips_cost(slab, axis, strips, list->at[k], list->at[q]);
             if (cost < best[q] - 1e-9) {

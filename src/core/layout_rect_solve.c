@@ -44,7 +44,7 @@ static enum status total(struct rect_slab *slab, double *cost, size_t *broken)
     }
     double sum = 0;
     *broken = 0;
-    slab->evaluations += n + m;
+    slab->evaluations += 8 * n + 4 * m;
     for (size_t i = 0; i < m; i++)
         sum += (double)(chords[i].v1 - chords[i].v0) / LAYOUT_UNIT;
     for (size_t i = 0; i < n; i++)
@@ -276,20 +276,23 @@ static enum status starts(struct rect_slab *slab, struct kept *best)
     return status;
 }
 
-enum status rect_solve(struct rect_slab *slab, bool quick)
+enum status rect_solve(struct rect_slab *slab, enum rect_depth depth)
 {
     struct kept best = {0};
     slab->cost = INFINITY;
     enum status status = kept_make(&best, slab) ? STATUS_OK : STATUS_NO_MEMORY;
     if (!status)
         status = starts(slab, &best);
+    slab->start_cost = slab->evaluations;
+    if (depth == RECT_QUICK && slab->allowed > 3 * slab->start_cost)
+        slab->allowed = 3 * slab->start_cost;
     if (!status && slab->broken && slab->group_count > 1)
         status = flip_groups(slab, &best);
-    if (!status && !quick)
+    if (!status && depth > RECT_QUICK)
         status = flips(slab, &best);
-    if (!status && !quick && slab->broken) { /* a rule gives: look closer, at every 0.1 m */
+    if (!status && depth == RECT_FINE && slab->broken) { /* a rule gives: look closer, at every 0.1 m */
         slab->fine = true;
-        slab->allowed = slab->evaluations + slab->allowed;
+        slab->allowed += slab->allowed / 2;
         status = starts(slab, &best);
         if (!status)
             status = flips(slab, &best);

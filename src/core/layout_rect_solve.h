@@ -14,5 +14,6 @@
 enum status rect_solve_arc(struct rect_slab *slab, int axis, size_t arc, bool blind);
 /* Places lines common to all arcs of a family, the other family unknown. */
 enum status rect_solve_block(struct rect_slab *slab, int axis);
+void rect_forget(struct rect_arc *arc);
 
 #endif

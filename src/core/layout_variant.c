@@ -16,36 +16,60 @@ struct variants {
     uint64_t allowed;
     /* the best so far */
     bool *keep_off, *stay;
+    struct work_box *placed; /* the boxes as they were solved last */
+    bool placed_once, same;
     size_t broken;
     double cost;
 };
+
+static bool same_places(const struct variants *v)
+{
+    for (size_t i = 0; i < v->w->box_count; i++) {
+        const struct work_box *a = &v->w->boxes[i], *b = &v->placed[i];
+        if (a->x != b->x || a->y != b->y || memcmp(a->tip, b->tip, sizeof a->tip))
+            return false;
+    }
+    return true;
+}
 
 static enum status try_variant(struct variants *v, const bool *keep_off, const bool *stay)
 {
     struct work *w = v->w;
     if (w->box_count)
         memcpy(w->boxes, v->origin, w->box_count * sizeof *w->boxes);
-    w->line_count = v->line_count;
     for (size_t i = 0; i < w->box_count; i++) {
         w->boxes[i].keep_off = keep_off[i];
         w->boxes[i].stay = stay[i];
     }
     if (!place_snap(w))
         return STATUS_NO_MEMORY;
+    v->same = v->placed_once && same_places(v);
+    if (v->same)
+        return STATUS_OK;
+    w->line_count = v->line_count;
+    if (!place_name_boxes(w))
+        return STATUS_NO_MEMORY;
+    v->placed_once = true;
+    if (w->box_count)
+        memcpy(v->placed, w->boxes, w->box_count * sizeof *w->boxes);
     return zone_solve(w, v->edges, v->count);
 }
 
-/* Solves it; true in *better when it is the best so far. */
-static enum status compare(struct variants *v, const bool *keep_off, const bool *stay, bool *better)
+/* Solves it; true in *last when it is the best so far, *gained too; not solved again: as it was. */
+static enum status compare(struct variants *v, const bool *keep_off, const bool *stay, bool *last,
+                           bool *gained)
 {
     const enum status status = try_variant(v, keep_off, stay);
-    *better = !status && (v->w->broken < v->broken ||
-                          (v->w->broken == v->broken && v->w->cost < v->cost - 1e-6));
-    if (*better) {
+    if (v->same)
+        return status;
+    *last = !status && (v->w->broken < v->broken ||
+                        (v->w->broken == v->broken && v->w->cost < v->cost - 1e-6));
+    if (*last) {
         memmove(v->keep_off, keep_off, v->w->box_count * sizeof *keep_off);
         memmove(v->stay, stay, v->w->box_count * sizeof *stay);
         v->broken = v->w->broken;
         v->cost = v->w->cost;
+        *gained = true;
     }
     return status;
 }
@@ -53,10 +77,13 @@ static enum status compare(struct variants *v, const bool *keep_off, const bool 
 static enum status try_all_alike(struct variants *v, bool *keep_off, bool *stay, bool *last)
 {
     enum status status = STATUS_OK;
+    bool gained;
     for (int k = 0; !status && k < 4 && v->broken; k++) {
+        if (k && v->w->slab.evaluations > v->allowed)
+            break;
         memset(keep_off, k & 1, v->w->box_count * sizeof *keep_off);
         memset(stay, k >> 1, v->w->box_count * sizeof *stay);
-        status = compare(v, keep_off, stay, last);
+        status = compare(v, keep_off, stay, last, &gained);
     }
     return status;
 }
@@ -74,8 +101,7 @@ static enum status try_one_by_one(struct variants *v, bool *keep_off, bool *stay
             memcpy(stay, v->stay, v->w->box_count * sizeof *stay);
             bool *one = i % 2 ? &stay[i / 2] : &keep_off[i / 2];
             *one = !*one;
-            status = compare(v, keep_off, stay, last);
-            gained |= *last;
+            status = compare(v, keep_off, stay, last, &gained);
         }
     }
     return status;
@@ -88,24 +114,27 @@ enum status variant_solve(struct work *w, struct rect_edge *const edges[2], cons
                          .edges = edges,
                          .count = count,
                          .origin = calloc(n + 1, sizeof *v.origin),
+                         .placed = calloc(n + 1, sizeof *v.placed),
                          .keep_off = calloc(n + 1, sizeof *v.keep_off),
                          .stay = calloc(n + 1, sizeof *v.stay),
                          .line_count = w->line_count,
-                         .allowed = 16 * w->slab.allowed,
+                         .allowed = w->slab.allowed / 8 * 7,
                          .broken = SIZE_MAX};
     bool *keep_off = calloc(n + 1, sizeof *keep_off), *stay = calloc(n + 1, sizeof *stay);
-    bool last = false;
+    bool last = false, gained = false;
     enum status status =
-        v.origin && v.keep_off && v.stay && keep_off && stay ? STATUS_OK : STATUS_NO_MEMORY;
+        v.origin && v.placed && v.keep_off && v.stay && keep_off && stay ? STATUS_OK : STATUS_NO_MEMORY;
     if (!status) {
         memcpy(v.origin, w->boxes, n * sizeof *v.origin);
-        status = n ? try_all_alike(&v, keep_off, stay, &last) : compare(&v, keep_off, stay, &last);
+        status = n ? try_all_alike(&v, keep_off, stay, &last) : compare(&v, keep_off, stay, &last, &gained);
     }
     if (!status && n)
         status = try_one_by_one(&v, keep_off, stay, &last);
+    v.placed_once = false;
     if (!status && !last)
         status = try_variant(&v, v.keep_off, v.stay);
     free(v.origin);
+    free(v.placed);
     free(v.keep_off);
     free(v.stay);
     free(keep_off);

@@ -23,6 +23,7 @@ struct cut {
     int axis;
     int64_t u;
     bool given; /* a construction or isolation joint runs there anyhow */
+    double off; /* from the middle of the zone, as a share of its size */
 };
 struct parts {
     struct zone *zones;
@@ -119,8 +120,15 @@ static size_t find_parts(const struct rect_family *f, size_t *part)
     return n;
 }
 
+/* Evaluations one region may use: a part of what is left. */
+static uint64_t share_of(const struct search *s)
+{
+    const uint64_t left = s->used < s->allowed ? s->allowed - s->used : 0;
+    return left / 8;
+}
+
 static enum status add_zone(struct search *s, struct parts *p, const struct rect_family *f,
-                            const size_t *part, size_t number, bool quick)
+                            const size_t *part, size_t number, enum rect_depth deep)
 {
     struct zone *more = realloc(p->zones, (p->count + 1) * sizeof *more);
     if (!more)
@@ -140,8 +148,9 @@ static enum status add_zone(struct search *s, struct parts *p, const struct rect
         add_edge(&z->edges, 1, a->v1, a->u0, a->u1);
     }
     enum status status = zone_build(s->w, z->edges.list, z->edges.count, &z->slab);
+    z->slab.allowed = share_of(s);
     if (!status)
-        status = rect_solve(&z->slab, quick);
+        status = rect_solve(&z->slab, deep);
     s->used += z->slab.evaluations;
     p->cost += z->slab.cost;
     return status;
@@ -149,7 +158,7 @@ static enum status add_zone(struct search *s, struct parts *p, const struct rect
 
 /* The parts of a region that hang together, each laid out. */
 static enum status add_zones(struct search *s, struct parts *p, const struct outline_edges *edges,
-                             bool quick)
+                             enum rect_depth deep)
 {
     struct rect_slab whole = {.rules = s->w->slab.rules};
     enum status status = rect_build(&whole, edges->list, edges->count);
@@ -158,7 +167,7 @@ static enum status add_zones(struct search *s, struct parts *p, const struct out
         status = STATUS_NO_MEMORY;
     const size_t n = status ? 0 : find_parts(&whole.family[0], part);
     for (size_t i = 0; !status && i < n; i++)
-        status = add_zone(s, p, &whole.family[0], part, i, quick);
+        status = add_zone(s, p, &whole.family[0], part, i, deep);
     free(part);
     rect_free(&whole);
     return status;
@@ -224,7 +233,7 @@ static enum status split(struct search *s, const struct zone *z, struct cut cut,
         struct outline_edges half = {0};
         status = clip(&z->edges, cut.axis, cut.u, high, &half);
         if (!status)
-            status = add_zones(s, p, &half, true);
+            status = add_zones(s, p, &half, RECT_QUICK);
         edges_free(&half);
     }
     p->cost += cut_cost(z, cut);
@@ -296,7 +305,7 @@ static enum status find_cuts(const struct search *s, const struct zone *z, struc
             if (l->axis != axis)
                 continue;
             if (l->labels && l->kind != LAYOUT_CONTRACTION && runs_across(z, l))
-                add_cut(z, c, (struct cut){axis, l->u, true});
+                add_cut(z, c, (struct cut){axis, l->u, true, 0});
             at[n++] = l->u;
         }
         for (size_t i = 0; i < z->slab.box_count; i++)
@@ -307,11 +316,11 @@ static enum status find_cuts(const struct search *s, const struct zone *z, struc
         }
         qsort(at, n, sizeof *at, compare_int64);
         for (size_t i = 0; i < n; i++)
-            add_cut(z, c, (struct cut){axis, at[i], false});
+            add_cut(z, c, (struct cut){axis, at[i], false, 0});
         for (size_t i = 0; i + 1 < n; i++) {
             const int64_t middle = at[i] + (at[i + 1] - at[i]) / 2 / 80 * 80;
             if ((double)(at[i + 1] - at[i]) > 3 * z->slab.rules.least)
-                add_cut(z, c, (struct cut){axis, middle, false});
+                add_cut(z, c, (struct cut){axis, middle, false, 0});
         }
         free(at);
     }
@@ -392,10 +401,53 @@ static enum status take_cut(struct search *s, const struct zone *z, struct cut c
     return status;
 }
 
+/* The extent of a zone along an axis. */
+static void reach_of(const struct rect_family *f, int64_t *low, int64_t *high)
+{
+    *low = INT64_MAX;
+    *high = INT64_MIN;
+    for (size_t i = 0; i < f->arc_count; i++) {
+        *low = f->arcs[i].u0 < *low ? f->arcs[i].u0 : *low;
+        *high = f->arcs[i].u1 > *high ? f->arcs[i].u1 : *high;
+    }
+}
+
+static int compare_cut(const void *a, const void *b)
+{
+    const struct cut *p = a, *q = b;
+    if (p->given != q->given)
+        return p->given ? -1 : 1;
+    if (p->off < q->off || p->off > q->off)
+        return p->off < q->off ? -1 : 1;
+    if (p->axis != q->axis)
+        return p->axis - q->axis;
+    return (p->u > q->u) - (p->u < q->u);
+}
+
+/* Joints that are there anyhow first, then those that halve the zone best; no more than the effort
+ * that is left allows. */
+static void rank_cuts(const struct search *s, const struct zone *z, struct cuts *c)
+{
+    int64_t low[2], high[2];
+    reach_of(&z->slab.family[0], &low[0], &high[0]);
+    reach_of(&z->slab.family[1], &low[1], &high[1]);
+    for (size_t i = 0; i < c->count; i++) {
+        struct cut *t = &c->list[i];
+        const double size = (double)(high[t->axis] - low[t->axis]);
+        t->off = fabs((double)(t->u - low[t->axis]) / size - 0.5);
+    }
+    qsort(c->list, c->count, sizeof *c->list, compare_cut);
+    const uint64_t left = s->used < s->allowed ? s->allowed - s->used : 0;
+    const uint64_t most = left / 8 / (z->slab.start_cost + 1) + 4;
+    c->count = c->count < most ? c->count : most;
+}
+
 static enum status best_split(struct search *s, const struct zone *z, struct parts *best)
 {
     struct cuts c = {0};
     enum status status = find_cuts(s, z, &c);
+    if (c.count)
+        rank_cuts(s, z, &c);
     for (size_t i = 0; !status && i < c.count && s->used < s->allowed; i++) {
         struct parts p;
         status = split(s, z, c.list[i], &p);
@@ -419,6 +471,12 @@ static enum status solve_zone(struct search *s, struct zone *z, int depth)
     enum status status = STATUS_OK;
     if (z->slab.broken && depth < DEEPEST && s->used < s->allowed)
         status = best_split(s, z, &best);
+    if (!status && !best.count && z->slab.broken) {
+        z->slab.evaluations = 0;
+        z->slab.allowed = share_of(s);
+        status = rect_solve(&z->slab, RECT_FINE);
+        s->used += z->slab.evaluations;
+    }
     if (!status && !best.count) {
         s->w->cost += z->slab.cost;
         s->w->broken += z->slab.broken;
@@ -432,7 +490,8 @@ static enum status solve_zone(struct search *s, struct zone *z, int depth)
         struct zone *part = &best.zones[i];
         if (part->slab.broken) {
             part->slab.evaluations = 0;
-            status = rect_solve(&part->slab, false);
+            part->slab.allowed = share_of(s);
+            status = rect_solve(&part->slab, RECT_FULL);
             s->used += part->slab.evaluations;
         }
         if (!status)
@@ -484,9 +543,12 @@ size_t zone_mark_faults(struct work *w)
 
 enum status zone_solve(struct work *w, struct rect_edge *const edges[2], const size_t count[2])
 {
-    struct search s = {.w = w, .allowed = 8 * w->slab.allowed};
+    struct search s = {.w = w, .allowed = w->slab.allowed / 2};
+    const uint64_t left =
+        w->slab.evaluations < w->slab.allowed ? w->slab.allowed - w->slab.evaluations : 0;
     struct outline_edges whole = {{edges[0], edges[1]}, {count[0], count[1]}};
     struct parts p = {0};
+    s.allowed = s.allowed < left ? s.allowed : left;
     w->cost = 0;
     w->broken = w->cut_count = 0;
     free(w->chords);
@@ -496,7 +558,7 @@ enum status zone_solve(struct work *w, struct rect_edge *const edges[2], const s
     w->chord_count = w->panel_count = 0;
     enum status status = place_index_boxes(w) ? STATUS_OK : STATUS_NO_MEMORY;
     if (!status)
-        status = add_zones(&s, &p, &whole, false);
+        status = add_zones(&s, &p, &whole, RECT_FULL);
     for (size_t i = 0; !status && i < p.count; i++)
         status = solve_zone(&s, &p.zones[i], 0);
     w->slab.evaluations += s.used;
