@@ -72,6 +72,11 @@ static struct day day_of(const struct climate_range *range, int day)
     return made;
 }
 
+double climate_day_mean(const struct climate_range *range, int day)
+{
+    return day_of(range, day).mean_c;
+}
+
 void climate_make(const struct climate_range *range, struct climate_hour hours[CLIMATE_HOURS])
 {
     double latitude = latitude_of(range->latitude_deg);

@@ -19,6 +19,8 @@ struct climate_hour {
 };
 /* Five clear days in a row at each extreme; the rest a cosine through the middle of the range. */
 void climate_make(const struct climate_range *range, struct climate_hour hours[CLIMATE_HOURS]);
+/* Mean air of a day of the year (0 to 364). */
+double climate_day_mean(const struct climate_range *range, int day);
 /* Day of the year (0 to 364) in the middle of the coldest and the hottest spell. */
 int climate_coldest_day(double latitude_deg);
 int climate_hottest_day(double latitude_deg);

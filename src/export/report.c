@@ -218,8 +218,13 @@ static void add_temperature(struct text *out, const struct plan *plan)
 {
     heading(out, "TEMPERATURE AND MOVEMENT");
     add_results(out, plan, "temperature");
-    if (plan->temperature.basis != NULL && strcmp(plan->temperature.basis, "estimate") == 0)
-        text_add(out, "  Estimate, cautious. The deck rule is for comparison, no bound here.\n");
+    if (strcmp(plan->temperature.basis, "estimate") == 0)
+        text_add(out,
+                 "  Indoors: the air itself. The deck rule is for comparison, no bound here.\n");
+    else if (strcmp(plan->temperature.basis, "simulation") == 0)
+        text_add(out,
+                 "  Simulated: five clear days in a row at each extreme of the air. Estimate and\n"
+                 "  deck rule are for comparison, no bound.\n");
     add_results(out, plan, "shrinkage");
     add_results(out, plan, "movement");
     add_results(out, plan, "concrete");

@@ -208,6 +208,14 @@ bool date_valid(struct date date)
     return again.year == date.year && again.month == date.month && again.day == date.day;
 }
 
+int date_day_of_year(struct date date)
+{
+    static const int before[] = {0, 31, 59, 90, 120, 151, 181, 212, 243, 273, 304, 334};
+    bool leap_day = date.month == 2 && date.day == 29;
+
+    return before[(date.month - 1) % 12] + (leap_day ? 28 : date.day) - 1;
+}
+
 double job_sealing_age_days(const struct job *job)
 {
     if (job->pour_date.year != 0 && job->sealing_date.year != 0)

@@ -229,6 +229,8 @@ void job_check(const struct job *job, struct finding_list *findings);
 long date_days(struct date date);
 bool date_valid(struct date date);
 struct date date_from_days(long days);
+/* Day of the year from 0; 29 February counts as 28. */
+int date_day_of_year(struct date date);
 /* Age of the concrete at sealing in days: the dates, else 28. */
 double job_sealing_age_days(const struct job *job);
 

@@ -58,12 +58,15 @@ static void clear_results(struct plan *plan)
     plan->governing_joint = SIZE_MAX;
 }
 
-static enum status run_chain(struct plan *plan, const struct plan_progress *progress)
+static enum status run_chain(struct plan *plan, struct plan_cache *cache,
+                             const struct plan_progress *progress)
 {
-    enum status status = STATUS_OK;
+    enum status status;
 
     plan_set_concrete(plan);
-    plan_set_temperature(plan);
+    status = plan_set_temperature(plan, cache);
+    if (status != STATUS_OK)
+        return status;
     if (finding_has_error(&plan->findings))
         return STATUS_REFUSED;
     plan_set_shrinkage(plan);
@@ -93,7 +96,6 @@ enum status plan_make(const struct job *job, struct plan_cache *cache,
 {
     enum status status;
 
-    (void)cache; /* nothing is remembered yet: a plan with a cache equals a plan without */
     memset(plan, 0, sizeof *plan);
     clear_results(plan);
     status = job_copy(&plan->job, job);
@@ -107,7 +109,7 @@ enum status plan_make(const struct job *job, struct plan_cache *cache,
     if (finding_has_error(&plan->findings))
         return STATUS_REFUSED;
     plan_list_assumed(plan);
-    status = run_chain(plan, progress);
+    status = run_chain(plan, cache, progress);
     if (status == STATUS_OK && plan->findings.failed)
         status = STATUS_NO_MEMORY;
     if (status == STATUS_OK && finding_has_error(&plan->findings))

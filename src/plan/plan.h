@@ -3,6 +3,8 @@
 #ifndef SLABGAP_PLAN_PLAN_H
 #define SLABGAP_PLAN_PLAN_H
 
+#include "core/climate.h"
+#include "core/conduction.h"
 #include "core/layout.h"
 #include "job/job.h"
 
@@ -100,8 +102,10 @@ struct plan {
     struct {
         double coldest_c, hottest_c, sealing_c, zero_stress_c /* for isolation, runs */,
             crack_zero_c /* for crack opening */, cut_c /* when the wide cut was made */;
-        double deck_coldest_c, deck_hottest_c; /* EN 1991-1-5, comparison only */
-        const char *basis;                     /* typed | estimate */
+        double deck_coldest_c, deck_hottest_c;         /* EN 1991-1-5, comparison only */
+        double estimate_coldest_c, estimate_hottest_c; /* air and Barber, comparison only */
+        double day_k, night_k; /* top hotter, top colder than bottom, sizes; for curling */
+        const char *basis;     /* typed | estimate (indoors: the air) | simulation */
     } temperature;
     struct {
         double after_sealing, before_sealing, end_years;
@@ -157,6 +161,7 @@ struct plan {
         double drag_steel_m2_per_m;
     } steel;
     struct {
+        double night_edge_pa; /* of the night alone; edge_pa: the worse of day and night */
         double bradbury_x, bradbury_y, edge_pa, interior_pa, lift_m, settlement_m;
         double locked_pa, locked_both_pa; /* locked slab at hottest - zero stress */
         double lift_off_hinge_k, lift_off_continuous_k, rise_left_k; /* blow-up */
@@ -169,7 +174,14 @@ struct plan {
     struct layout layout;
 };
 
-struct plan_cache; /* remembered zones; may be NULL everywhere */
+/* What a plan remembers for the next one: the slab's year. May be NULL everywhere; a plan made with
+ * it equals a plan made without. Starts as {0}, owns nothing. */
+struct plan_cache {
+    bool has_year;
+    struct climate_range range;
+    struct conduction_slab slab;
+    double coldest_c, hottest_c, day_k, night_k;
+};
 struct plan_progress {
     bool (*go_on)(void *context, double share);
     void *context;

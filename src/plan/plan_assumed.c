@@ -6,19 +6,29 @@
 
 /* ---- when a field has any say ---- */
 
-static bool estimated(const struct job *job)
+static bool from_air(const struct job *job)
 {
     return isnan(job->climate_slab_coldest) || isnan(job->climate_slab_hottest);
 }
 
-static bool estimated_in_sun(const struct job *job)
+static bool simulated(const struct job *job)
 {
-    return isnan(job->climate_slab_hottest) && job->climate_exposure != EXPOSURE_INDOOR;
+    return from_air(job) && job->climate_exposure != EXPOSURE_INDOOR;
+}
+
+static bool not_simulated(const struct job *job)
+{
+    return !simulated(job);
 }
 
 static bool dries_by_model(const struct job *job)
 {
     return job->concrete_shrinkage_model != SHRINKAGE_TYPED;
+}
+
+static bool uses_humidity(const struct job *job)
+{
+    return dries_by_model(job) || simulated(job);
 }
 
 static bool dries_by_aci(const struct job *job)
@@ -58,7 +68,7 @@ static bool by_factor(const struct job *job)
 
 static bool has_gradient(const struct job *job)
 {
-    return fabs(job->slab_gradient + job->slab_built_in_gradient) > 0;
+    return simulated(job) || fabs(job->slab_gradient + job->slab_built_in_gradient) > 0;
 }
 
 static bool without_zero_stress(const struct job *job)
@@ -99,8 +109,9 @@ static const struct {
     {FIELD_slab_ties, never},
     {FIELD_slab_wheels, never},
     {FIELD_concrete_creep, never},
-    {FIELD_climate_swing_cold, never},
-    {FIELD_climate_cloud, never},
+    {FIELD_climate_swing_cold, simulated},
+    {FIELD_climate_cloud, simulated},
+    {FIELD_slab_gradient, not_simulated},
     {FIELD_sawing_saws, never},
     {FIELD_sawing_pace, never},
     {FIELD_sealing_dew_margin, never},
@@ -115,16 +126,16 @@ static const struct {
     {FIELD_concrete_cement, dries_by_model},
     {FIELD_concrete_curing, dries_by_model},
     {FIELD_concrete_horizon, dries_by_model},
-    {FIELD_climate_humidity, dries_by_model},
+    {FIELD_climate_humidity, uses_humidity},
     {FIELD_concrete_cement_content, dries_by_aci},
     {FIELD_concrete_fines, dries_by_aci},
     {FIELD_concrete_air, dries_by_aci},
-    {FIELD_climate_air_coldest, estimated},
-    {FIELD_climate_air_hottest, estimated},
-    {FIELD_climate_exposure, estimated},
-    {FIELD_climate_swing_hot, estimated_in_sun},
-    {FIELD_climate_wind, estimated_in_sun},
-    {FIELD_climate_absorptivity, estimated_in_sun},
+    {FIELD_climate_air_coldest, from_air},
+    {FIELD_climate_air_hottest, from_air},
+    {FIELD_climate_exposure, from_air},
+    {FIELD_climate_swing_hot, simulated},
+    {FIELD_climate_wind, simulated},
+    {FIELD_climate_absorptivity, simulated},
     {FIELD_pour_placing_temperature, without_zero_stress},
     {FIELD_sealing_cut_temperature, never},
     {FIELD_sealing_factor, by_factor},

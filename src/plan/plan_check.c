@@ -312,7 +312,8 @@ static bool add_stress_advice(struct plan *plan)
     check = add(plan, "curling", "curling and drag against its share of the bending strength");
     if (check == NULL)
         return false;
-    set_sides(check, plan->restraint.edge_pa + drag,
+    /* by night the drag adds to the curling; by day it is compression and does not */
+    set_sides(check, fmax(plan->restraint.edge_pa, plan->restraint.night_edge_pa + drag),
               job->rules_curling_share * plan->concrete.rupture_pa, "Pa");
     set_words(check, "Westergaard 1927, Bradbury 1938; sum: derived", "Shorter panels.");
     check = add(plan, "contact", "edge lift against the slab's own weight");

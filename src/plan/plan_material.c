@@ -6,6 +6,8 @@
 #include "core/spacing.h"
 #include "plan/plan_steps.h"
 #include <math.h>
+#include <stdlib.h>
+#include <string.h>
 
 static const double second_per_day = 86400, second_per_year = 31557600;
 
@@ -79,43 +81,155 @@ static void check_sealing_temperature(struct plan *plan)
                          "is too cold for the sealant to stick; wait for a warmer slab, at least");
 }
 
-void plan_set_temperature(struct plan *plan)
+bool plan_simulated(const struct plan *plan)
+{
+    const struct job *job = &plan->job;
+
+    return job->climate_exposure != EXPOSURE_INDOOR &&
+           (isnan(job->climate_slab_coldest) || isnan(job->climate_slab_hottest));
+}
+
+bool plan_climate(const struct plan *plan, struct climate_range *range,
+                  struct conduction_slab *slab)
+{
+    const struct job *job = &plan->job;
+    double share = slab_exposure_share((enum slab_exposure)job->climate_exposure);
+
+    if (job->climate_exposure == EXPOSURE_INDOOR)
+        return false;
+    if (isfinite(job->climate_sun)) /* kWh/m2 of the hottest clear day, typed */
+        share *= job->climate_sun * 3.6e6 / slab_sun_clear_most(job->place_latitude);
+    *range = (struct climate_range){
+        .air_coldest_c = job->climate_air_coldest,
+        .air_hottest_c = job->climate_air_hottest,
+        .swing_cold_k = job->climate_swing_cold,
+        .swing_hot_k = job->climate_swing_hot,
+        .wind_m_s = job->climate_wind,
+        .cloud = job->climate_cloud,
+        .humidity = job->climate_humidity,
+        .latitude_deg = job->place_latitude,
+        .sun_share = share,
+    };
+    conduction_slab_default(job->slab_thickness, slab);
+    slab->absorptivity = job->climate_absorptivity;
+    return true;
+}
+
+/* The slab's steady year, remembered for as long as nothing that enters it changes. */
+static enum status simulate(const struct plan *plan, struct plan_cache *cache,
+                            struct plan_cache *out)
+{
+    struct climate_hour *hours;
+    struct conduction_year *year;
+    enum status status = STATUS_NO_MEMORY;
+
+    *out = (struct plan_cache){.has_year = true};
+    plan_climate(plan, &out->range, &out->slab);
+    if (cache != NULL && cache->has_year &&
+        memcmp(&cache->range, &out->range, sizeof out->range) == 0 &&
+        memcmp(&cache->slab, &out->slab, sizeof out->slab) == 0) {
+        *out = *cache;
+        return STATUS_OK;
+    }
+    hours = malloc(CLIMATE_HOURS * sizeof *hours);
+    year = malloc(sizeof *year);
+    if (hours != NULL && year != NULL) {
+        climate_make(&out->range, hours);
+        status = conduction_year_make(&out->slab, hours, year);
+        out->coldest_c = year->coldest_c;
+        out->hottest_c = year->hottest_c;
+        out->day_k = year->day_k;
+        out->night_k = -year->night_k;
+        if (status == STATUS_OK && cache != NULL)
+            *cache = *out;
+    }
+    free(hours);
+    free(year);
+    return status;
+}
+
+/* Curling: a typed difference counts for day and night alike; else what the simulation gives, with
+ * the difference built in at hardening added. */
+static void set_gradients(struct plan *plan, double day_k, double night_k)
+{
+    const struct job *job = &plan->job;
+    double built_in = job->slab_built_in_gradient;
+
+    if (job->given[FIELD_slab_gradient] || !plan_simulated(plan)) {
+        plan->temperature.day_k = plan->temperature.night_k = fabs(job->slab_gradient + built_in);
+        return;
+    }
+    plan->temperature.day_k = fmax(day_k + built_in, 0);
+    plan->temperature.night_k = fmax(night_k - built_in, 0);
+}
+
+static void check_order(struct plan *plan)
+{
+    if (plan->temperature.coldest_c <= plan->temperature.hottest_c)
+        return;
+    /* one is typed, the other worked out from the air: nothing can be made of the two */
+    finding_add(&plan->findings, SEVERITY_ERROR, "climate.slab-coldest", "", "", 0, 0,
+                "climate.slab-coldest: the coldest slab (%.1f degC) is above the hottest "
+                "(%.1f degC); type both, or put the air temperatures right.",
+                plan->temperature.coldest_c, plan->temperature.hottest_c);
+}
+
+/* Zero stress for isolation: typed, else the lower of the placing temperature and the mean air of
+ * the day of pouring; for cracks: typed, else placing + 10 K (heat of hydration, from memory). */
+static void set_zero_stress(struct plan *plan)
+{
+    const double hydration_k = 10;
+    const struct job *job = &plan->job;
+    struct climate_range range;
+    struct conduction_slab slab;
+
+    plan->temperature.zero_stress_c = plan->temperature.crack_zero_c =
+        job->pour_zero_stress_temperature;
+    if (isfinite(job->pour_zero_stress_temperature))
+        return;
+    plan->temperature.zero_stress_c = job->pour_placing_temperature;
+    plan->temperature.crack_zero_c = job->pour_placing_temperature + hydration_k;
+    if (job->pour_date.year != 0 && plan_simulated(plan) && plan_climate(plan, &range, &slab))
+        plan->temperature.zero_stress_c =
+            fmin(plan->temperature.zero_stress_c,
+                 climate_day_mean(&range, date_day_of_year(job->pour_date)));
+}
+
+enum status plan_set_temperature(struct plan *plan, struct plan_cache *cache)
 {
     const struct job *job = &plan->job;
     struct slab_extremes guess = estimate(job);
     struct slab_extremes deck =
         slab_temperature_deck(job->climate_air_coldest, job->climate_air_hottest);
-    bool typed = isfinite(job->climate_slab_coldest) && isfinite(job->climate_slab_hottest);
+    struct plan_cache year = {.coldest_c = guess.coldest_c, .hottest_c = guess.hottest_c};
+    bool simulated = plan_simulated(plan);
 
+    if (simulated && simulate(plan, cache, &year) != STATUS_OK)
+        return STATUS_NO_MEMORY;
     plan->temperature.coldest_c =
-        isfinite(job->climate_slab_coldest) ? job->climate_slab_coldest : guess.coldest_c;
+        isfinite(job->climate_slab_coldest) ? job->climate_slab_coldest : year.coldest_c;
     plan->temperature.hottest_c =
-        isfinite(job->climate_slab_hottest) ? job->climate_slab_hottest : guess.hottest_c;
-    plan->temperature.basis = typed ? "typed" : "estimate";
+        isfinite(job->climate_slab_hottest) ? job->climate_slab_hottest : year.hottest_c;
+    plan->temperature.basis =
+        simulated                                                                    ? "simulation"
+        : isfinite(job->climate_slab_coldest) && isfinite(job->climate_slab_hottest) ? "typed"
+                                                                                     : "estimate";
     plan->temperature.deck_coldest_c = deck.coldest_c;
     plan->temperature.deck_hottest_c = deck.hottest_c;
-    if (plan->temperature.coldest_c > plan->temperature.hottest_c) {
-        /* one is typed, the other estimated from the air: nothing can be worked out of the two */
-        finding_add(&plan->findings, SEVERITY_ERROR, "climate.slab-coldest", "", "", 0, 0,
-                    "climate.slab-coldest: the coldest slab (%.1f degC) is above the hottest "
-                    "(%.1f degC); type both, or put the air temperatures right.",
-                    plan->temperature.coldest_c, plan->temperature.hottest_c);
-    }
+    plan->temperature.estimate_coldest_c = guess.coldest_c;
+    plan->temperature.estimate_hottest_c = guess.hottest_c;
+    set_gradients(plan, year.day_k, year.night_k);
+    check_order(plan);
     plan->temperature.sealing_c = job->sealing_temperature;
     if (isnan(job->sealing_temperature))
         plan->temperature.sealing_c =
             (plan->temperature.coldest_c + plan->temperature.hottest_c) / 2;
-    plan->temperature.cut_c = job->sealing_cut_temperature;
-    if (!job->given[FIELD_sealing_cut_temperature])
-        plan->temperature.cut_c = plan->temperature.sealing_c;
-    plan->temperature.zero_stress_c = job->pour_zero_stress_temperature;
-    plan->temperature.crack_zero_c = job->pour_zero_stress_temperature;
-    if (isnan(job->pour_zero_stress_temperature)) { /* docs/theory.md, three moments */
-        const double hydration_k = 10;              /* from memory */
-        plan->temperature.zero_stress_c = job->pour_placing_temperature;
-        plan->temperature.crack_zero_c = job->pour_placing_temperature + hydration_k;
-    }
+    plan->temperature.cut_c = job->given[FIELD_sealing_cut_temperature]
+                                  ? job->sealing_cut_temperature
+                                  : plan->temperature.sealing_c;
+    set_zero_stress(plan);
     check_sealing_temperature(plan);
+    return STATUS_OK;
 }
 
 /* ---- shrinkage ---- */

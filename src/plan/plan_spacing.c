@@ -92,7 +92,7 @@ static void add_curling_row(struct plan *plan)
         .modulus_pa = plan->concrete.modulus_pa,
         .expansion = plan->concrete.expansion_k,
         .radius_m = plan->concrete.stiffness_radius_m,
-        .difference_k = fabs(job->slab_gradient + job->slab_built_in_gradient),
+        .difference_k = plan->temperature.night_k,
         .unit_weight = job->concrete_unit_weight,
         .friction = job->base_friction_high,
         .allowed_pa = job->rules_curling_share * plan->concrete.rupture_pa,

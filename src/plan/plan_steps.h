@@ -7,7 +7,7 @@
 
 void plan_list_assumed(struct plan *plan); /* defaults an answer leans on; overrides */
 void plan_set_concrete(struct plan *plan);
-void plan_set_temperature(struct plan *plan);
+enum status plan_set_temperature(struct plan *plan, struct plan_cache *cache);
 void plan_set_shrinkage(struct plan *plan);
 void plan_set_spacing(struct plan *plan);
 enum status plan_set_layout(struct plan *plan, const struct plan_progress *progress);
@@ -22,6 +22,11 @@ enum status plan_set_cracks(struct plan *plan);
 enum status plan_set_checks(struct plan *plan);
 
 /* ---- shared by the steps ---- */
+/* The weather and the column of the simulation; false when the job needs none (indoors). */
+bool plan_climate(const struct plan *plan, struct climate_range *range,
+                  struct conduction_slab *slab);
+/* Whether the slab's temperatures come from it. */
+bool plan_simulated(const struct plan *plan);
 /* Movement of one joint between bars of lengths l1 and l2 (0 = no bar on that side) for a free
  * strain e >= 0: C (l1 + l2)/2 e with the factor; with friction the sum of both end movements, low
  * mu; bars over 15 m move freely. m. */

@@ -34,7 +34,7 @@ static void set_curling(struct plan *plan)
         .thickness_m = job->slab_thickness,
         .subgrade_pa_m = job->base_subgrade_modulus,
         .unit_weight = job->concrete_unit_weight,
-        .difference_k = job->slab_gradient + job->slab_built_in_gradient,
+        .difference_k = fmax(plan->temperature.day_k, plan->temperature.night_k),
     };
     double length, width, radius = plan->concrete.stiffness_radius_m;
 
@@ -44,6 +44,8 @@ static void set_curling(struct plan *plan)
     plan->restraint.bradbury_x = curling_coefficient(length / radius);
     plan->restraint.bradbury_y = curling_coefficient(width / radius);
     plan->restraint.edge_pa = fabs(curling_edge_stress(&slab, plan->restraint.bradbury_x));
+    plan->restraint.night_edge_pa =
+        plan->restraint.edge_pa * plan->temperature.night_k / slab.difference_k;
     plan->restraint.interior_pa = fabs(
         curling_interior_stress(&slab, plan->restraint.bradbury_x, plan->restraint.bradbury_y));
     plan->restraint.lift_m = fabs(curling_lift(&slab));

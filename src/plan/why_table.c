@@ -27,6 +27,11 @@ static bool practice_us(const struct plan *plan)
     return plan->job.job_practice == PRACTICE_US;
 }
 
+static bool temperature_simulated(const struct plan *plan)
+{
+    return plan->temperature.basis != NULL && strcmp(plan->temperature.basis, "simulation") == 0;
+}
+
 static bool temperature_estimated(const struct plan *plan)
 {
     return plan->temperature.basis != NULL && strcmp(plan->temperature.basis, "estimate") == 0;
@@ -109,6 +114,42 @@ static const struct why_row rows[] = {
      {{"E", "modulus of elasticity", "concrete.modulus_pa"},
       {"h", "thickness", "slab.thickness"},
       {"k", "modulus of subgrade", "base.subgrade-modulus"}}},
+    {"temperature.coldest_c temperature.hottest_c temperature.basis",
+     temperature_simulated,
+     "rho c dT/dt = k T'', top: a Q + e s (Tsky^4 - Ts^4) + hc (Ta - Ts); extremes of the mean "
+     "over h",
+     "heat conduction, implicit; sky: Clark and Allen (1978); sun: FAO-56 (1998)",
+     "A made year: five clear days in a row at each extreme of the air. Typed ones win.",
+     {{"Ta min", "air coldest", "climate.air-coldest"},
+      {"Ta max", "air hottest", "climate.air-hottest"},
+      {"v", "wind", "climate.wind"},
+      {"a", "sun taken in", "climate.absorptivity"},
+      {"lat", "latitude", "place.latitude"},
+      {"h", "thickness", "slab.thickness"},
+      {"min", "estimate, to compare", "temperature.estimate_coldest_c"},
+      {"max", "estimate, to compare", "temperature.estimate_hottest_c"}}},
+    {"temperature.estimate_coldest_c",
+     NULL,
+     "coldest = the coldest air temperature",
+     "cautious estimate, no publication",
+     "For comparison.",
+     {{"air", "air coldest", "climate.air-coldest"}}},
+    {"temperature.estimate_hottest_c",
+     NULL,
+     "hottest = Barber at mid-depth on the hottest clear day",
+     "Barber (1957), Highway Research Board Bulletin 168",
+     "For comparison.",
+     {{"air", "air hottest", "climate.air-hottest"},
+      {"v", "wind", "climate.wind"},
+      {"a", "sun taken in", "climate.absorptivity"},
+      {"h", "thickness", "slab.thickness"}}},
+    {"temperature.day_k temperature.night_k",
+     NULL,
+     "dT = typed, else the largest slope of the straight line through the slab's temperatures x h",
+     "least squares over the depth of the simulated year",
+     "Differences built in at hardening are added.",
+     {{"typed", "top minus bottom", "slab.gradient"},
+      {"built in", "at hardening", "slab.built-in-gradient"}}},
     {"temperature.coldest_c",
      temperature_estimated,
      "coldest = typed, else the coldest air temperature",
@@ -420,7 +461,7 @@ static const struct why_row rows[] = {
      "Linear gradient, slab in full contact.",
      {{"E", "modulus", "concrete.modulus_pa"},
       {"a", "thermal expansion", "concrete.expansion_k"},
-      {"dT", "top minus bottom", "slab.gradient"},
+      {"dT", "top against bottom, night", "temperature.night_k"},
       {"l", "radius of relative stiffness", "concrete.stiffness_radius_m"}}},
     {"restraint.lift_m restraint.settlement_m",
      NULL,
@@ -428,7 +469,7 @@ static const struct why_row rows[] = {
      "Westergaard (1927)",
      "Outside it the curling stress is out of range.",
      {{"a", "thermal expansion", "concrete.expansion_k"},
-      {"dT", "top minus bottom", "slab.gradient"},
+      {"dT", "top against bottom, night", "temperature.night_k"},
       {"l", "radius of relative stiffness", "concrete.stiffness_radius_m"}}},
     {"restraint.locked_pa restraint.locked_both_pa",
      NULL,

@@ -92,7 +92,7 @@ static void make_plan(struct app *app, const struct job *raw)
         return;
     }
     if (app->maker.make == NULL)
-        app_take_plan(app, made, plan_make(raw, NULL, NULL, made));
+        app_take_plan(app, made, plan_make(raw, &app->cache, NULL, made));
     else if (app->maker.make(app->maker.context, raw, made, &status))
         app_take_plan(app, made, status);
     else if (status == STATUS_OK)

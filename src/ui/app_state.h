@@ -85,6 +85,7 @@ struct app {
     struct document *document;
     struct job job;   /* settled, from the document */
     struct plan plan; /* the last good one */
+    struct plan_cache cache; /* of plans the form makes itself */
     struct plan_maker maker;
     bool working;                 /* a plan is being made elsewhere */
     bool has_plan, stale;         /* stale: the document asks for something that was refused */

@@ -315,7 +315,7 @@ static void without_layout(const struct app *app, struct job *job)
 }
 
 /* One other width by a plan of its own; false when it gives none. */
-static bool fill_row(const struct app *app, double width, struct buy_row *row)
+static bool fill_row(struct app *app, double width, struct buy_row *row)
 {
     struct plan *plan = calloc(1, sizeof *plan);
     struct job job;
@@ -329,7 +329,7 @@ static bool fill_row(const struct app *app, double width, struct buy_row *row)
         job.sealant_depth = NAN; /* by kind: a depth typed for one width does not suit another */
         job.given[FIELD_sealant_depth] = false;
         without_layout(app, &job);
-        good = plan_make(&job, NULL, NULL, plan) == STATUS_OK && plan->seal.sealed;
+        good = plan_make(&job, &app->cache, NULL, plan) == STATUS_OK && plan->seal.sealed;
         if (good)
             *row = (struct buy_row){
                 plan->seal.width_m,

@@ -18,6 +18,7 @@ struct worker {
     bool ending;
     struct job job; /* asked for */
     struct plan plan;
+    struct plan_cache cache; /* the thread's own */
     enum status status;
     atomic_bool stop;     /* of the running job */
     atomic_int per_mille; /* progress of it */
@@ -45,7 +46,7 @@ static void run(struct worker *worker)
     atomic_store(&worker->stop, false);
     atomic_store(&worker->per_mille, 0);
     pthread_mutex_unlock(&worker->lock);
-    status = plan_make(&job, NULL, &progress, &plan);
+    status = plan_make(&job, &worker->cache, &progress, &plan);
     job_free(&job);
     pthread_mutex_lock(&worker->lock);
     if (worker->state != STATE_RUNNING || atomic_load(&worker->stop)) {
