@@ -1,6 +1,7 @@
 /* Lays out a slab: its own frame, rings, forced lines, engine, joints and panels, checks. */
 #include "core/layout.h"
 #include "core/layout_place.h"
+#include "core/layout_shape.h"
 #include "core/layout_variant.h"
 #include "core/layout_zone.h"
 #include <math.h>
@@ -132,20 +133,6 @@ static bool is_rectilinear(const struct work *w)
     return true;
 }
 
-static bool is_convex(const struct layout *out)
-{
-    bool left = false, right = false;
-    for (size_t i = 0; i < out->outline_count; i++) {
-        const struct layout_point a = out->outline[i],
-                                  b = out->outline[(i + 1) % out->outline_count];
-        const struct layout_point c = out->outline[(i + 2) % out->outline_count];
-        const double turn = (b.x - a.x) * (c.y - b.y) - (b.y - a.y) * (c.x - b.x);
-        left |= turn > 1e-9;
-        right |= turn < -1e-9;
-    }
-    return left != right;
-}
-
 /* The sides of all rings, those parallel to y and those parallel to x. */
 static bool collect_edges(const struct work *w, struct rect_edge *edges[2], size_t count[2])
 {
@@ -227,22 +214,6 @@ static enum status solve_rectilinear(struct work *w)
     free(edges[0]);
     free(edges[1]);
     return status;
-}
-
-/* A shape that is neither rectilinear nor convex: the whole as one panel, and it is said. */
-static enum status solve_other(struct work *w)
-{
-    const bool plain = is_convex(w->out) && !w->out->opening_count && !w->input->object_count;
-    struct layout_reason reason = {.code = "GIVEN_ANGLE", .rule = "panel.corner"};
-    if (plain)
-        return layout_convex(w);
-    snprintf(reason.cause, sizeof reason.cause,
-             "This outline has slanting or curved sides with inside corners, openings or objects.");
-    snprintf(reason.remedy, sizeof reason.remedy,
-             "Split it into rectangular and tapered parts, and lay each out as a slab of its own.");
-    w->out->violations++;
-    return layout_reason_add(&w->out->reasons, &w->out->reason_count, reason) ? STATUS_OK
-                                                                              : STATUS_NO_MEMORY;
 }
 
 static int orient(struct layout_point a, struct layout_point b, struct layout_point c)
@@ -329,8 +300,8 @@ enum status layout_solve(const struct layout_input *input, struct layout *layout
         status = make_rings(&w) ? STATUS_OK : STATUS_NO_MEMORY;
     }
     if (!status && !too_large)
-        status = is_rectilinear(&w) ? solve_rectilinear(&w) : solve_other(&w);
-    if (!status)
+        status = is_rectilinear(&w) ? solve_rectilinear(&w) : shape_solve(&w);
+    if (!status && (too_large || is_rectilinear(&w)))
         status = layout_check_panels(&w);
     out.evaluations = w.slab.evaluations;
     work_free(&w);

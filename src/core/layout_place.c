@@ -7,8 +7,8 @@
 #include <string.h>
 
 #define UNITS(m) llround((m)*LAYOUT_UNIT)
-static const double clearance_m = 0.1; /* own choice: box corner beyond the object's corner */
-static const double snap_m = 0.3;      /* design, "Snapping": a box may be moved so far */
+static const double clearance_m = 0.1;  /* own choice: box corner beyond the object's corner */
+static const double snap_m = 0.3;       /* design, "Snapping": a box may be moved so far */
 static const double box_reach_m = 1.45; /* a box goes at most so far beyond its object (own) */
 
 bool work_line_add(struct work *w, struct work_line line)
@@ -158,9 +158,8 @@ static bool stand_on_edge(const struct work *w, struct work_box *b, int axis, st
     if (v - base < near.low || v + base > near.high)
         return false;
     for (int k = 0; k < 2; k++) {
-        b->tip[2 * axis + k] = o->box_half_given
-                                   ? b->half + away
-                                   : UNITS(ceil((depth + beyond) * 1e3 - 1e-6) / 1e3);
+        b->tip[2 * axis + k] =
+            o->box_half_given ? b->half + away : UNITS(ceil((depth + beyond) * 1e3 - 1e-6) / 1e3);
         b->tip[2 * (1 - axis) + k] = base;
     }
     b->spread = (depth + beyond) / beyond;
@@ -307,8 +306,7 @@ bool place_index_boxes(struct work *w)
     free(w->box_index);
     w->box_index = calloc(w->box_count + 1, sizeof *w->box_index);
     for (size_t i = 0; w->box_index && i < w->box_count; i++) {
-        w->box_index[i] =
-            (struct rect_box){.x = w->boxes[i].x, .y = w->boxes[i].y, .number = i};
+        w->box_index[i] = (struct rect_box){.x = w->boxes[i].x, .y = w->boxes[i].y, .number = i};
         memcpy(w->box_index[i].tip, w->boxes[i].tip, sizeof w->boxes[i].tip);
     }
     if (w->box_index)

@@ -17,7 +17,7 @@ struct rect_memo;
 struct rect_arc {
     int64_t u0, u1, v0, v1;
     int64_t *cut, *forced;
-    int64_t (*room)[2]; /* beside each forced one: a box takes so much of the panel below, above */
+    int64_t (*room)[2];  /* beside each forced one: a box takes so much of the panel below, above */
     int64_t end_room[2]; /* the same at u0 and u1 */
     size_t cut_count, forced_count;
     struct rect_memo *memo; /* chords for rows met before */
@@ -59,8 +59,8 @@ struct rect_slab {
     size_t corner_count, group_count;
     struct rect_rules rules;
     uint64_t evaluations, allowed, start_cost; /* start_cost: what the starts took */
-    bool fine; /* places at every 0.1 m too */
-    struct rect_box *boxes; /* sorted by x, then y */
+    bool fine;                                 /* places at every 0.1 m too */
+    struct rect_box *boxes;                    /* sorted by x, then y */
     size_t box_count;
     double cost; /* of the solved slab: metres and penalties */
     size_t broken;

@@ -283,9 +283,8 @@ static void run_program(struct rect_slab *slab, int axis, const struct rect_arc 
                          cramped(slab, a, a->u0, to, low, a->end_room[0]);
         for (size_t k = q; k-- > 0;) {
             if (p->best[k] < p->best[q]) {
-                const double cost =
-                    p->best[k] + gap(slab, axis, p, p->at[k], to, false, end) +
-                    cramped(slab, a, p->at[k], to, low, room_at(a, p->at[k], true));
+                const double cost = p->best[k] + gap(slab, axis, p, p->at[k], to, false, end) +
+                                    cramped(slab, a, p->at[k], to, low, room_at(a, p->at[k], true));
                 if (cost < p->best[q] - 1e-9) {
                     p->best[q] = cost;
                     p->from[q] = k;
@@ -425,7 +424,6 @@ enum status rect_solve_arc(struct rect_slab *slab, int axis, size_t arc, bool bl
     return status;
 }
 
-
 /* ---- lines common to all arcs of a family: the start of the descent (design, "Block DP") */
 struct strip { /* an arc prolonged over the gates that are off, in rows of one height */
     int64_t from, to, height;
@@ -505,14 +503,12 @@ static enum status common_lines(struct rect_slab *slab, int axis, const struct s
         best[q] = INFINITY;
         for (size_t k = q; k-- > 0;) {
             slab->evaluations += slab->family[axis].arc_count / 2 + 1;
-            const double cost =
-                best[k] + strips_cost(slab, axis, strips, list->at[k], list->at[q]);
+            const double cost = best[k] + strips_cost(slab, axis, strips, list->at[k], list->at[q]);
             if (cost < best[q] - 1e-9) {
                 best[q] = cost;
                 from[q] = k;
             }
-            if (k == barrier ||
-                (double)(list->at[q] - list->at[k]) > 2 * slab->rules.side[axis])
+            if (k == barrier || (double)(list->at[q] - list->at[k]) > 2 * slab->rules.side[axis])
                 break;
         }
         best[q] += line_length(&slab->family[axis], list->at[q]);
@@ -564,8 +560,8 @@ enum status rect_solve_block(struct rect_slab *slab, int axis)
         f->arcs[i].cut_count = 0;
         const double rows =
             fmax(1, ceil(((double)(a->v1 - a->v0) - SLACK) / slab->rules.side[1 - axis]));
-        strips[i] = (struct strip){.height = (int64_t)((double)(a->v1 - a->v0) / rows),
-                                   .count = rows};
+        strips[i] =
+            (struct strip){.height = (int64_t)((double)(a->v1 - a->v0) / rows), .count = rows};
         strips[i].from = walk(f, i, mid, false);
         strips[i].to = walk(f, i, mid, true);
     }

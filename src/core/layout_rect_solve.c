@@ -290,7 +290,8 @@ enum status rect_solve(struct rect_slab *slab, enum rect_depth depth)
         status = flip_groups(slab, &best);
     if (!status && depth > RECT_QUICK)
         status = flips(slab, &best);
-    if (!status && depth == RECT_FINE && slab->broken) { /* a rule gives: look closer, at every 0.1 m */
+    if (!status && depth == RECT_FINE &&
+        slab->broken) { /* a rule gives: look closer, at every 0.1 m */
         slab->fine = true;
         slab->allowed += slab->allowed / 2;
         status = starts(slab, &best);

@@ -1,5 +1,5 @@
-/* Variants of the boxes: moved onto a common line or not, on the slab edge or off it. The first plan
- * that breaks no rule is kept; else the one with the fewest breaches, then the least cost. */
+/* Variants of the boxes: moved onto a common line or not, on the slab edge or off it. The first
+ * plan that breaks no rule is kept; else the one with the fewest breaches, then the least cost. */
 #include "core/layout_variant.h"
 #include "core/layout_place.h"
 #include "core/layout_zone.h"
@@ -122,11 +122,13 @@ enum status variant_solve(struct work *w, struct rect_edge *const edges[2], cons
                          .broken = SIZE_MAX};
     bool *keep_off = calloc(n + 1, sizeof *keep_off), *stay = calloc(n + 1, sizeof *stay);
     bool last = false, gained = false;
-    enum status status =
-        v.origin && v.placed && v.keep_off && v.stay && keep_off && stay ? STATUS_OK : STATUS_NO_MEMORY;
+    enum status status = v.origin && v.placed && v.keep_off && v.stay && keep_off && stay
+                             ? STATUS_OK
+                             : STATUS_NO_MEMORY;
     if (!status) {
         memcpy(v.origin, w->boxes, n * sizeof *v.origin);
-        status = n ? try_all_alike(&v, keep_off, stay, &last) : compare(&v, keep_off, stay, &last, &gained);
+        status = n ? try_all_alike(&v, keep_off, stay, &last)
+                   : compare(&v, keep_off, stay, &last, &gained);
     }
     if (!status && n)
         status = try_one_by_one(&v, keep_off, stay, &last);

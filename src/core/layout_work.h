@@ -12,7 +12,7 @@ struct work_box {
     int object;
     int64_t x, y, half; /* about (x, y) */
     int64_t tip[4];     /* how far it reaches west, east, south, north */
-    double spread; /* on an edge: width of the base in widths at the object */
+    double spread;      /* on an edge: width of the base in widths at the object */
     int64_t moved_x, moved_y;
     bool dropped;    /* cannot be made: see the reasons */
     bool on_x, on_y; /* on a slab edge parallel to y, to x */
