@@ -17,6 +17,8 @@ static const struct command commands[] = {
      command_fields},
     {"why", "why FILE PATH", "how a result comes about: seal.width_m, joints.J4.1.open_m",
      command_why},
+    {"year", "year FILE [--csv]",
+     "slab temperature, width and strain of the joint through the year", command_year},
 };
 enum { COMMANDS = sizeof commands / sizeof *commands };
 

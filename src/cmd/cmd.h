@@ -35,5 +35,6 @@ int command_check(int count, char **words);
 int command_set(int count, char **words);
 int command_fields(int count, char **words);
 int command_why(int count, char **words);
+int command_year(int count, char **words);
 
 #endif

@@ -254,6 +254,11 @@ static struct shrinkage_slab shrinkage_slab_of(const struct job *job)
     return slab;
 }
 
+void plan_shrinkage_slab(const struct plan *plan, struct shrinkage_slab *slab)
+{
+    *slab = shrinkage_slab_of(&plan->job);
+}
+
 void plan_set_shrinkage(struct plan *plan)
 {
     static const char *const basis[] = {"en1992", "aci209", "mc2010", "typed"};

@@ -25,6 +25,9 @@ enum status plan_set_checks(struct plan *plan);
 /* The weather and the column of the simulation; false when the job needs none (indoors). */
 bool plan_climate(const struct plan *plan, struct climate_range *range,
                   struct conduction_slab *slab);
+/* The slab as the shrinkage models see it. */
+struct shrinkage_slab;
+void plan_shrinkage_slab(const struct plan *plan, struct shrinkage_slab *slab);
 /* Whether the slab's temperatures come from it. */
 bool plan_simulated(const struct plan *plan);
 /* Movement of one joint between bars of lengths l1 and l2 (0 = no bar on that side) for a free

@@ -8,7 +8,7 @@
 const struct page *page_of(enum page_id id)
 {
     static const struct page *const pages[PAGE_COUNT] = {
-        &page_job,  &page_plan, &page_cut,   &page_seal, &page_buy,  &page_why,
+        &page_job,  &page_plan, &page_cut,   &page_seal, &page_buy,  &page_why,     &page_year,
         &page_more, &page_rest, &page_sides, &page_own,  &page_help, &page_cautions};
 
     return pages[id];
@@ -42,6 +42,7 @@ void app_free(struct app *app)
     plan_free(&app->plan);
     finding_free(&app->findings);
     history_free(&app->history);
+    year_drop(app);
     free(app);
 }
 
@@ -268,6 +269,9 @@ static bool act_page(struct app *app, enum action action)
     case ACTION_WHY:
         go_why(app);
         return true;
+    case ACTION_YEAR:
+        app_go(app, PAGE_YEAR);
+        return true;
     case ACTION_MORE:
         app_go(app, PAGE_MORE);
         return true;
@@ -358,4 +362,6 @@ void app_key(struct app *app, uint32_t key)
         key_on_page(app, key);
     if (app->page == PAGE_BUY && app->buy_count == 0 && app->has_plan)
         buy_fill(app);
+    if (app->page == PAGE_YEAR)
+        year_fill(app);
 }

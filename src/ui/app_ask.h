@@ -35,6 +35,9 @@ bool plan_take_line(struct app *app);       /* false: there is no line under the
 bool plan_move_words(const struct app *app, struct text *out); /* false: no line to move */
 void plan_move_line(struct app *app);
 
+/* page_year.c */
+void year_fill(struct app *app);
+
 /* page_buy.c: the other widths, by plans of their own */
 void buy_fill(struct app *app);
 

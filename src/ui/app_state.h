@@ -5,6 +5,7 @@
 #include "job/document.h"
 #include "job/field.h"
 #include "plan/plan.h"
+#include "plan/year.h"
 #include "ui/app.h"
 #include "ui/editor.h"
 #include "ui/history.h"
@@ -18,6 +19,7 @@ enum page_id {
     PAGE_SEAL,
     PAGE_BUY,
     PAGE_WHY,
+    PAGE_YEAR,
     PAGE_MORE,
     PAGE_REST,
     PAGE_SIDES,
@@ -83,8 +85,8 @@ struct app {
     struct date today;
     int columns, rows;
     struct document *document;
-    struct job job;   /* settled, from the document */
-    struct plan plan; /* the last good one */
+    struct job job;          /* settled, from the document */
+    struct plan plan;        /* the last good one */
     struct plan_cache cache; /* of plans the form makes itself */
     struct plan_maker maker;
     bool working;                 /* a plan is being made elsewhere */
@@ -118,6 +120,9 @@ struct app {
     char why_path[64];
     struct buy_row buy[BUY_MOST];
     size_t buy_count;
+    struct year *year; /* of the plan; NULL: none */
+    bool year_done;    /* tried for this plan */
+    int year_day;      /* the mark, a day of it */
     struct own own;
 };
 
@@ -129,8 +134,8 @@ struct page {
     bool (*key)(struct app *app, uint32_t key); /* its own keys; false: not mine */
 };
 const struct page *page_of(enum page_id id);
-extern const struct page page_job, page_plan, page_cut, page_seal, page_buy, page_why, page_more,
-    page_rest, page_sides, page_own, page_help, page_cautions;
+extern const struct page page_job, page_plan, page_cut, page_seal, page_buy, page_why, page_year,
+    page_more, page_rest, page_sides, page_own, page_help, page_cautions;
 
 /* ---- app_edit.c: changing the document ---- */
 struct change_item {
@@ -145,6 +150,8 @@ void edit_undo(struct app *app, int step); /* -1 undo, 1 redo */
 const char *edit_first_error(const struct finding_list *findings);
 void edit_recompute(struct app *app);
 void edit_stop(struct app *app); /* of a plan that is being made */
+/* ---- page_year.c ---- */
+void year_drop(struct app *app); /* the year shown is of an older plan */
 /* Whether there is something not saved. */
 bool edit_unsaved(const struct app *app);
 

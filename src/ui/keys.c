@@ -11,6 +11,7 @@ const struct key_row key_table[] = {
     {'m', ACTION_MORE, PLACE_EVERYWHERE, "m", "more", "Open, save, units, help, leave."},
     {'u', ACTION_UNDO, PLACE_EVERYWHERE, "u", "undo", "Takes the last change back."},
     {'f', ACTION_FIND, PLACE_EVERYWHERE, "f", "find", "Finds a row by a part of its name."},
+    {'y', ACTION_YEAR, PLACE_EVERYWHERE, "y", NULL, "The joint's width through the year."},
     {'r', ACTION_REDO, PLACE_EVERYWHERE, "r", NULL, "Makes a change again that undo took back."},
     {'n', ACTION_NEW, PLACE_EVERYWHERE, "n", NULL, "A slab of your own, nothing typed in it."},
     {'o', ACTION_OPEN_JOB, PLACE_EVERYWHERE, "o", NULL, "Opens a job file."},

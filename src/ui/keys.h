@@ -33,6 +33,7 @@ enum action {
     ACTION_SEAL,
     ACTION_BUY,
     ACTION_WHY,
+    ACTION_YEAR,
     ACTION_MORE,
     ACTION_UNDO,
     ACTION_REDO,

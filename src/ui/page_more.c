@@ -7,6 +7,7 @@ enum {
     MORE_SAVE_AS,
     MORE_OPEN,
     MORE_NEW,
+    MORE_YEAR,
     MORE_PRACTICE,
     MORE_UNITS,
     MORE_REST,
@@ -22,6 +23,7 @@ static const struct {
     {"Save as", "Writes it to another file; .slab is added when no suffix is typed."},
     {"Open a job", "Any file that begins with format = 1."},
     {"My own slab", "A new slab by a few questions; nothing of this one is kept."},
+    {"The year", "The joint's width and strain through the year (y)."},
     {"Practice", "Whose usual values stand where you typed none."},
     {"Units", "How numbers are shown. Both systems can always be typed."},
     {"The rest", "Every row that can be typed."},
@@ -92,6 +94,9 @@ static bool enter(struct app *app)
         return true;
     case MORE_NEW:
         app_start_own(app);
+        return true;
+    case MORE_YEAR:
+        app_go(app, PAGE_YEAR);
         return true;
     case MORE_REST:
         app_go(app, PAGE_REST);

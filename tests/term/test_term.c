@@ -338,7 +338,7 @@ static void test_leave_restores(void **state)
     start(&harness, 80, 24);
     assert_int_equal(tcgetattr(harness.master, &before), 0);
     wait_for(&harness, 0);
-    send_keys(&harness, "m)))))))))");
+    send_keys(&harness, "m))))))))))");
     assert_int_equal(write(harness.master, "\r", 1), 1);
     assert_int_equal(end_of(&harness), 0);
     if (tcgetattr(harness.master, &after) == 0)
