@@ -277,6 +277,7 @@ static void work_free(struct work *w)
     free(w->ring_object);
     free(w->boxes);
     free(w->lines);
+    layout_index_free(&w->panel_index);
     free(w->chords);
     free(w->box_index);
     free(w->panels);

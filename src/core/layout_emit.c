@@ -31,12 +31,28 @@ bool layout_joint_add(struct layout *out, size_t *room, const struct layout_join
 
 static int panel_at(const struct work *w, int64_t x, int64_t y)
 {
-    for (size_t i = 0; i < w->panel_count; i++) {
-        const struct rect_panel *p = &w->panels[i];
+    const size_t *list;
+    const size_t n = layout_index_at(&w->panel_index, (double)x, (double)y, &list);
+    for (size_t i = 0; i < n; i++) {
+        const struct rect_panel *p = &w->panels[list[i]];
         if (p->x0 < x && x < p->x1 && p->y0 < y && y < p->y1)
-            return (int)i;
+            return (int)list[i];
     }
     return -1;
+}
+
+static bool index_panels(struct work *w)
+{
+    struct layout_extent *e = calloc(w->panel_count + 1, sizeof *e);
+    if (!e)
+        return false;
+    for (size_t i = 0; i < w->panel_count; i++) {
+        const struct rect_panel *p = &w->panels[i];
+        e[i] = (struct layout_extent){(double)p->x0, (double)p->y0, (double)p->x1, (double)p->y1};
+    }
+    const bool fine = layout_index_make(&w->panel_index, e, w->panel_count);
+    free(e);
+    return fine;
 }
 
 static int compare_stop(const void *a, const void *b)
@@ -362,7 +378,8 @@ enum status layout_emit(struct work *w)
     if (!status) {
         w->out->panels = calloc(w->panel_count + 1, sizeof *w->out->panels);
         e.sides = calloc(w->input->object_count + 1, sizeof *e.sides);
-        bool fine = w->out->panels && e.sides && sort_panels(w) && drop_clashes(w);
+        bool fine =
+            w->out->panels && e.sides && sort_panels(w) && index_panels(w) && drop_clashes(w);
         fine = fine && emit_lines(&e);
         w->out->panel_count = fine ? w->panel_count : 0;
         for (size_t i = 0; fine && i < w->panel_count; i++)

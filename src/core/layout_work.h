@@ -2,6 +2,7 @@
 #ifndef SLABGAP_CORE_LAYOUT_WORK_H
 #define SLABGAP_CORE_LAYOUT_WORK_H
 
+#include "core/layout_index.h"
 #include "core/layout_rect.h"
 
 struct work_ring { /* points in the slab's own frame, units of 1/80 mm */
@@ -45,8 +46,9 @@ struct work {
     size_t chord_count;
     struct rect_panel *panels; /* in plan order after the emit */
     size_t panel_count;
-    size_t cut_count; /* construction joints the program put in */
-    double cost;      /* metres and penalties of the zones */
+    struct layout_index panel_index; /* of the panels in plan order */
+    size_t cut_count;                /* construction joints the program put in */
+    double cost;                     /* metres and penalties of the zones */
     size_t broken;
 };
 
@@ -59,6 +61,8 @@ bool layout_reason_add(struct layout_reason **list, size_t *count, struct layout
 enum status layout_emit(struct work *w);
 /* Sizes, broken rules and their reasons of every panel; counts the violations. */
 enum status layout_check_panels(struct work *w);
+/* Ends of joints, neighbours, pours, objects, tiling; called by the above. */
+enum status layout_check_joints(struct work *w);
 /* A convex outline with slanting sides: lines right across it. */
 enum status layout_convex(struct work *w);
 /* Copies the rings and the sides into the result. */
