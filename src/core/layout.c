@@ -200,7 +200,7 @@ static enum status solve_rectilinear(struct work *w)
     size_t count[2] = {0, 0};
     set_rules(w);
     enum status status = STATUS_NO_MEMORY;
-    if (collect_edges(w, edges, count) && place_boxes(w) && place_lines(w) && place_expansion(w) &&
+    if (collect_edges(w, edges, count) && place_boxes(w) && place_bans(w) && place_lines(w) && place_expansion(w) &&
         place_matches(w))
         status = variant_solve(w, edges, count);
     if (!status)
@@ -278,6 +278,7 @@ static void work_free(struct work *w)
     free(w->boxes);
     free(w->lines);
     layout_index_free(&w->panel_index);
+    free(w->bans);
     free(w->chords);
     free(w->box_index);
     free(w->panels);
@@ -288,10 +289,10 @@ enum status layout_solve(const struct layout_input *input, struct layout *layout
 {
     struct layout out = {0};
     struct work w = {.input = input, .out = &out, .cosine = 1};
-    if (input->outline.count < 3 || !(input->max_side_x > 0) || !(input->max_side_y > 0))
+    if (input->outline.count < 2 || !(input->max_side_x > 0) || !(input->max_side_y > 0))
         return STATUS_REFUSED;
     enum status status = layout_copy_rings(&w);
-    if (!status && crosses_itself(&out))
+    if (!status && (out.outline_count < 3 || crosses_itself(&out)))
         status = STATUS_REFUSED;
     const bool too_large = !status && is_too_large(&w);
     if (too_large)

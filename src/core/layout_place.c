@@ -450,6 +450,18 @@ bool place_lines(struct work *w)
     return true;
 }
 
+bool place_bans(struct work *w)
+{
+    const struct layout_input *in = w->input;
+    w->bans = calloc(in->drawn_count + 1, sizeof *w->bans);
+    for (size_t i = 0; w->bans && i < in->drawn_count; i++) {
+        struct work_line l = {0};
+        if (!in->drawn[i].keep && to_line(w, &in->drawn[i].at, &l))
+            w->bans[w->ban_count++] = (struct rect_ban){l.axis, l.u, l.v0, l.v1};
+    }
+    return w->bans != NULL;
+}
+
 /* Expansion joints across the long direction, equally far apart, none further than asked. */
 bool place_expansion(struct work *w)
 {

@@ -7,6 +7,8 @@
 bool place_is_rectangle(const struct work *w, const struct layout_object *o);
 bool place_boxes(struct work *w);
 bool place_lines(struct work *w);
+/* Where the user wants no joint. */
+bool place_bans(struct work *w);
 bool place_expansion(struct work *w);
 bool place_matches(struct work *w);
 /* Moves the boxes onto common lines within the tolerance, or onto the slab edge. */

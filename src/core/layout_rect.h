@@ -53,6 +53,10 @@ struct rect_box { /* a box about (x, y): its tips west, east, south, north */
     int64_t x, y, tip[4];
     size_t number;
 };
+struct rect_ban { /* no free chord of the axis may run along it */
+    int axis;
+    int64_t u, v0, v1;
+};
 struct rect_slab {
     struct rect_family family[2];
     struct rect_corner *corners;
@@ -62,6 +66,8 @@ struct rect_slab {
     bool fine;                                 /* places at every 0.1 m too */
     struct rect_box *boxes;                    /* sorted by x, then y */
     size_t box_count;
+    const struct rect_ban *bans;
+    size_t ban_count;
     double cost; /* of the solved slab: metres and penalties */
     size_t broken;
 };

@@ -195,6 +195,39 @@ static bool divide(struct places *list, const struct rect_slab *slab, const stru
     return true;
 }
 
+static bool is_forced(const struct rect_arc *a, int64_t u)
+{
+    for (size_t i = 0; i < a->forced_count; i++)
+        if (a->forced[i] == u)
+            return true;
+    return false;
+}
+
+static bool is_banned(const struct rect_slab *slab, int axis, const struct rect_arc *a, int64_t u)
+{
+    for (size_t i = 0; i < slab->ban_count; i++) {
+        const struct rect_ban *b = &slab->bans[i];
+        if (b->axis == axis && b->u == u && b->v0 < a->v1 && b->v1 > a->v0)
+            return true;
+    }
+    return false;
+}
+
+/* Free places the user forbade go; 0.1 m beside them is offered instead. */
+static bool lift_bans(const struct rect_slab *slab, int axis, const struct rect_arc *a,
+                      struct places *list)
+{
+    for (size_t i = 0; i < list->count; i++) {
+        const int64_t u = list->at[i];
+        if (!is_banned(slab, axis, a, u) || is_forced(a, u))
+            continue;
+        list->at[i] = u - 8000 > a->u0 ? u - 8000 : u + 8000;
+        if (u + 8000 < a->u1 && !place(list, u + 8000))
+            return false;
+    }
+    return true;
+}
+
 /* Equal divisions between the anchors, the forced lines, and a raster in short arcs. */
 static bool find_places(const struct rect_slab *slab, int axis, const struct rect_arc *a,
                         const struct program *p, struct places *list)
@@ -222,6 +255,8 @@ static bool find_places(const struct rect_slab *slab, int axis, const struct rec
         for (int64_t u = a->u0 / 8000 * 8000 - 8000; u < a->u1; u += 8000)
             if (u > a->u0 && !place(list, u))
                 return false;
+    if (slab->ban_count && !lift_bans(slab, axis, a, list))
+        return false;
     qsort(list->at, list->count, sizeof *list->at, compare_int64);
     return true;
 }
@@ -534,7 +569,7 @@ static enum status take_lines(struct rect_slab *slab, int axis, const struct pla
         for (size_t k = 0; fine && k < a->forced_count; k++)
             fine = place(&own, a->forced[k]);
         for (size_t k = 0; fine && k < cut->count; k++)
-            if (a->u0 < cut->at[k] && cut->at[k] < a->u1)
+            if (a->u0 < cut->at[k] && cut->at[k] < a->u1 && !is_banned(slab, axis, a, cut->at[k]))
                 fine = place(&own, cut->at[k]);
         if (!fine) {
             free(own.at);

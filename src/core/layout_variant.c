@@ -79,7 +79,7 @@ static enum status try_all_alike(struct variants *v, bool *keep_off, bool *stay,
     enum status status = STATUS_OK;
     bool gained;
     for (int k = 0; !status && k < 4 && v->broken; k++) {
-        if (k && v->w->slab.evaluations > v->allowed)
+        if (k && (v->w->slab.evaluations > v->allowed || !zone_go_on(v->w)))
             break;
         memset(keep_off, k & 1, v->w->box_count * sizeof *keep_off);
         memset(stay, k >> 1, v->w->box_count * sizeof *stay);
@@ -95,7 +95,7 @@ static enum status try_one_by_one(struct variants *v, bool *keep_off, bool *stay
     for (bool gained = true; !status && gained && v->broken;) {
         gained = false;
         for (size_t i = 0; !status && i < 2 * v->w->box_count && v->broken; i++) {
-            if (v->w->slab.evaluations > v->allowed)
+            if (v->w->slab.evaluations > v->allowed || !zone_go_on(v->w))
                 return status;
             memcpy(keep_off, v->keep_off, v->w->box_count * sizeof *keep_off);
             memcpy(stay, v->stay, v->w->box_count * sizeof *stay);

@@ -41,6 +41,8 @@ struct work {
     size_t box_count;
     struct work_line *lines;
     size_t line_count, line_room;
+    struct rect_ban *bans; /* joints drawn with keep = no */
+    size_t ban_count;
     struct rect_slab slab;
     struct rect_chord *chords; /* of all zones */
     size_t chord_count;
@@ -48,6 +50,7 @@ struct work {
     size_t panel_count;
     struct layout_index panel_index; /* of the panels in plan order */
     size_t cut_count;                /* construction joints the program put in */
+    bool stopped;                    /* the caller wants the best so far */
     double cost;                     /* metres and penalties of the zones */
     size_t broken;
 };

@@ -85,6 +85,8 @@ enum status zone_build(struct work *w, struct rect_edge *const edges[2], const s
 {
     slab->rules = w->slab.rules;
     slab->allowed = w->slab.allowed;
+    slab->bans = w->bans;
+    slab->ban_count = w->ban_count;
     enum status status = rect_build(slab, edges, count);
     if (status)
         return status;
@@ -442,6 +444,15 @@ static void rank_cuts(const struct search *s, const struct zone *z, struct cuts 
     c->count = c->count < most ? c->count : most;
 }
 
+bool zone_go_on(struct work *w)
+{
+    const struct layout_input *in = w->input;
+    const double share = (double)w->slab.evaluations / (double)w->slab.allowed;
+    if (!w->stopped && in->go_on && !in->go_on(in->context, fmin(share, 1)))
+        w->stopped = true;
+    return !w->stopped;
+}
+
 static enum status best_split(struct search *s, const struct zone *z, struct parts *best)
 {
     struct cuts c = {0};
@@ -449,6 +460,8 @@ static enum status best_split(struct search *s, const struct zone *z, struct par
     if (c.count)
         rank_cuts(s, z, &c);
     for (size_t i = 0; !status && i < c.count && s->used < s->allowed; i++) {
+        if (!zone_go_on(s->w))
+            break;
         struct parts p;
         status = split(s, z, c.list[i], &p);
         if (status)
@@ -471,7 +484,7 @@ static enum status solve_zone(struct search *s, struct zone *z, int depth)
     enum status status = STATUS_OK;
     if (z->slab.broken && depth < DEEPEST && s->used < s->allowed)
         status = best_split(s, z, &best);
-    if (!status && !best.count && z->slab.broken) {
+    if (!status && !best.count && z->slab.broken && zone_go_on(s->w)) {
         z->slab.evaluations = 0;
         z->slab.allowed = share_of(s);
         status = rect_solve(&z->slab, RECT_FINE);
