@@ -19,6 +19,14 @@ static const struct command commands[] = {
      command_why},
     {"year", "year FILE [--csv]",
      "slab temperature, width and strain of the joint through the year", command_year},
+    {"seal",
+     "seal FILE --slab T [--surface T --hour H] [--width W] [--air T --humidity H]\n"
+     "          [--trend rising|steady|falling] [--dry yes|no] [--clean yes|no] [--date D]",
+     "go or not now, for a joint measured now", command_seal},
+    {"buy",
+     "buy FILE | buy --length 300m --width 10mm --depth 10mm\n"
+     "          [--pack 600ml] [--waste 10%] [--box 20] [--sealant silicone]",
+     "what to order", command_buy},
 };
 enum { COMMANDS = sizeof commands / sizeof *commands };
 

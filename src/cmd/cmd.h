@@ -36,5 +36,7 @@ int command_set(int count, char **words);
 int command_fields(int count, char **words);
 int command_why(int count, char **words);
 int command_year(int count, char **words);
+int command_seal(int count, char **words);
+int command_buy(int count, char **words);
 
 #endif

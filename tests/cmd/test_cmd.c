@@ -111,6 +111,16 @@ static void test_wrong_arguments(void **state)
         {{NULL}, 2, "", "terminal"},
         {{E1}, 2, "", "terminal"},
         {{"measure"}, 2, "", "unknown command 'measure'"},
+        {{"seal", E1}, 2, "", "slab's temperature"},
+        {{"seal", E1, "--slab", "15", "--trend", "up"}, 2, "", "rising, steady, falling"},
+        {{"seal", E1, "--slab", "abc"}, 2, "", "is no value"},
+        {{"seal", E1, "--slab", "15", "--hour", "25"}, 2, "", "no clock time"},
+        {{"seal", E1, "--slab", "15", "--date", "2027-02-30"}, 2, "", "no date"},
+        {{"seal", E1, "--slab"}, 2, "", "needs a value"},
+        {{"buy"}, 2, "", "--length 300m"},
+        {{"buy", "--length"}, 2, "", "needs a value"},
+        {{"buy", "--length", "300m", "--pack", "0 ml"}, 2, "", "takeoff.packages"},
+        {{"buy", "--price", "3"}, 2, "", "no option"},
         {{"saw", E1}, 2, "", "unknown command 'saw'"}, /* not built yet: no stub */
         {{"--loud"}, 2, "", "'--loud'"},
         {{"report"}, 2, "", "FILE"},
@@ -329,8 +339,9 @@ static void test_twice_the_same(void **state)
 static void test_help_lists_what_there_is(void **state)
 {
     (void)state;
-    static const char *const built[] = {"report", "draw", "check", "set", "fields", "why", "year"};
-    static const char *const later[] = {"saw", "buy", "paper", "compare", "study", "fit"};
+    static const char *const built[] = {"report", "draw", "check", "set", "fields",
+                                        "why",    "year", "seal",  "buy"};
+    static const char *const later[] = {"saw", "paper", "compare", "study", "fit"};
     struct run run;
     char line[32];
 
