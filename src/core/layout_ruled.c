@@ -17,6 +17,7 @@ struct strip {
     struct knot knot[MOST_KNOTS];
     size_t count;
     int rows;
+    bool closed; /* a ring: the end is the beginning */
     double place[MOST_PLACES];
     size_t place_count;
     bool must[MOST_PLACES];
@@ -80,12 +81,12 @@ static double panel_fault(const struct layout_input *in, const struct layout_poi
 
 /* The angles at the four corners of the panel: those at the strip's own ends are given. */
 static double angle_fault(const struct layout_input *in, const struct layout_point q[4], bool first,
-                          bool last)
+                          bool last, bool given)
 {
     double fault = 0;
     for (int i = 0; i < 4; i++) {
         const struct layout_point a = q[(i + 3) % 4], b = q[i], c = q[(i + 1) % 4];
-        if ((first && (i == 0 || i == 3)) || (last && (i == 1 || i == 2)))
+        if (given && ((first && (i == 0 || i == 3)) || (last && (i == 1 || i == 2))))
             continue;
         const double turn = atan2((b.x - a.x) * (c.y - b.y) - (b.y - a.y) * (c.x - b.x),
                                   (b.x - a.x) * (c.x - b.x) + (b.y - a.y) * (c.y - b.y));
@@ -120,7 +121,7 @@ static double cost_between(const struct strip *s, double from, double to, bool f
                 ring[n++] = s->knot[k].b;
         ring[n++] = quad[3];
         cost += panel_fault(s->trials->w->input, ring, n) +
-                angle_fault(s->trials->w->input, quad, first, last) +
+                angle_fault(s->trials->w->input, quad, first, last, !s->closed) +
                 (j ? far(quad[0], quad[1]) : 0);
     }
     return cost + (last ? 0 : far(a1, b1));
@@ -212,7 +213,7 @@ static enum status emit_strip(const struct strip *s, const size_t *from)
             fine = add_across(&plane, j, between(a0, b0, f), between(a1, b1, f));
         }
         line++;
-        if (from[q] > 0)
+        if (from[q] > 0 || s->closed)
             fine = fine && add_across(&plane, s->rows + line, a0, b0);
         last_t = t;
     }
@@ -373,6 +374,7 @@ static enum status try_strip(struct strip *s)
     return status;
 }
 
+/* Nothing stands on the slab or crosses it that a strip would have to heed. */
 static bool is_free(const struct work *w)
 {
     const struct layout_input *in = w->input;
@@ -383,20 +385,62 @@ static bool is_free(const struct work *w)
         if (in->edges[i].kind == LAYOUT_EDGE_EXISTING && !in->edges[i].isolate &&
             in->edges[i].joint_count)
             return false;
-    return !w->out->opening_count && !in->object_count && !in->has_pours &&
-           in->expansion_every <= 0 && w->out->outline_count < MOST_KNOTS;
+    return !in->object_count && !in->has_pours && in->expansion_every <= 0 &&
+           w->out->outline_count < MOST_KNOTS;
+}
+
+/* A closed chain from the point nearest to `start`, anticlockwise. */
+static void ring_make(struct chain *c, const struct layout_point *ring, size_t n,
+                      struct layout_point start)
+{
+    double area = 0, least = INFINITY;
+    size_t from = 0;
+    for (size_t i = 0; i < n; i++) {
+        area += ring[i].x * ring[(i + 1) % n].y - ring[(i + 1) % n].x * ring[i].y;
+        if (far(ring[i], start) < least - 1e-9) {
+            least = far(ring[i], start);
+            from = i;
+        }
+    }
+    c->count = 0;
+    for (size_t i = 0; i <= n; i++) {
+        const size_t k = i % n;
+        c->at[c->count++] = ring[area < 0 ? (from + n - k) % n : (from + k) % n];
+    }
+    c->length[0] = 0;
+    for (size_t i = 1; i < c->count; i++)
+        c->length[i] = c->length[i - 1] + far(c->at[i - 1], c->at[i]);
+}
+
+/* Round one opening: circles of joints and radii, if neither ring has sharp corners. */
+static enum status ring_solve(struct trials *t, struct strip *s, struct chain *a, struct chain *b)
+{
+    const struct layout *out = t->w->out;
+    if (out->openings[0].count + 2 > MOST_KNOTS || out->outline_count + 2 > MOST_KNOTS)
+        return STATUS_OK;
+    ring_make(a, out->outline, out->outline_count, out->outline[0]);
+    ring_make(b, out->openings[0].points, out->openings[0].count, out->outline[0]);
+    s->trials = t;
+    s->closed = true;
+    match_chains(s, a, b, a->count == b->count ? 0 : 2);
+    for (size_t i = 0; i < s->count; i++)
+        if (s->knot[i].corner)
+            return STATUS_OK;
+    return s->count > 2 ? try_strip(s) : STATUS_OK;
 }
 
 enum status shape_ruled(struct trials *t)
 {
     const struct layout *out = t->w->out;
     const size_t n = out->outline_count;
-    if (!is_free(t->w))
+    if (!is_free(t->w) || out->opening_count > 1)
         return STATUS_OK;
     struct strip *s = calloc(1, sizeof *s);
     struct chain *a = calloc(1, sizeof *a), *b = calloc(1, sizeof *b);
     enum status status = s && a && b ? STATUS_OK : STATUS_NO_MEMORY;
-    for (size_t i = 0; !status && i < n; i++)
+    if (!status && out->opening_count)
+        status = ring_solve(t, s, a, b);
+    for (size_t i = 0; !status && !out->opening_count && i < n; i++)
         for (size_t k = i + 1; !status && k < n; k++) {
             if (!is_cap(out, i) || !is_cap(out, k) || k == i + 1 || (i == 0 && k == n - 1))
                 continue;
