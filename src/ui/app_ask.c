@@ -21,7 +21,7 @@ void app_ask_replace(struct app *app, const struct request *request)
 bool ask_has_text(enum ask ask)
 {
     return ask == ASK_OPEN || ask == ASK_SAVE || ask == ASK_FIND || ask == ASK_ADD_SIZE ||
-           ask == ASK_MOVE || ask == ASK_CRACK || ask == ASK_CROSS;
+           ask == ASK_MOVE || ask == ASK_CRACK || ask == ASK_MEASURED || ask == ASK_CROSS;
 }
 
 void ask_words(const struct app *app, struct text *out)
@@ -66,6 +66,9 @@ void ask_words(const struct app *app, struct text *out)
         break;
     case ASK_CRACK:
         text_add(out, "Crack from the cross to (east north, east north): ");
+        break;
+    case ASK_MEASURED:
+        text_add(out, "Measured: ");
         break;
     case ASK_CROSS:
         text_add(out, "Cross to (east, north): ");
@@ -196,6 +199,9 @@ static void answer(struct app *app)
         break;
     case ASK_CRACK:
         plan_add_crack(app);
+        break;
+    case ASK_MEASURED:
+        seal_take_measured(app);
         break;
     case ASK_CROSS:
         plan_cross_to(app);

@@ -35,6 +35,10 @@ bool plan_take_line(struct app *app);       /* false: there is no line under the
 bool plan_move_words(const struct app *app, struct text *out); /* false: no line to move */
 void plan_move_line(struct app *app);
 
+/* page_seal_now.c */
+void seal_take_measured(struct app *app);
+bool seal_draw_now(const struct app *app, struct canvas *canvas, int at, int rows);
+
 /* page_year.c */
 void year_fill(struct app *app);
 

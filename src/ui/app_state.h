@@ -68,6 +68,7 @@ enum ask {
     ASK_ADD_SIZE,
     ASK_MOVE,
     ASK_CRACK,
+    ASK_MEASURED,
     ASK_CROSS
 };
 
@@ -120,9 +121,10 @@ struct app {
     char why_path[64];
     struct buy_row buy[BUY_MOST];
     size_t buy_count;
-    struct year *year; /* of the plan; NULL: none */
-    bool year_done;    /* tried for this plan */
-    int year_day;      /* the mark, a day of it */
+    char measured[EDITOR_MOST]; /* at the joint, as typed; not of the job */
+    struct year *year;          /* of the plan; NULL: none */
+    bool year_done;             /* tried for this plan */
+    int year_day;               /* the mark, a day of it */
     struct own own;
 };
 

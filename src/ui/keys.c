@@ -32,6 +32,8 @@ const struct key_row key_table[] = {
     {'k', ACTION_KEEP, PLACE_PLAN, "k", NULL,
      "Plan: keeps the line under the cross, or lets it go."},
     {'v', ACTION_MOVE, PLACE_PLAN, "v", NULL, "Plan: moves the line under the cross."},
+    {'g', ACTION_MEASURED, PLACE_SEAL, "g", NULL,
+     "Seal: go or not, from what is measured at the joint."},
     {'z', ACTION_NEARER, PLACE_PLAN, "z", NULL, "Plan: nearer."},
     {'x', ACTION_FARTHER, PLACE_PLAN, "x", NULL, "Plan: farther."},
 };

@@ -51,10 +51,11 @@ enum action {
     ACTION_TAKE_AWAY,
     ACTION_KEEP,
     ACTION_MOVE,
+    ACTION_MEASURED,
     ACTION_NEARER,
     ACTION_FARTHER
 };
-enum key_place { PLACE_EVERYWHERE, PLACE_PLAN };
+enum key_place { PLACE_EVERYWHERE, PLACE_PLAN, PLACE_SEAL };
 
 struct key_row {
     uint32_t key;

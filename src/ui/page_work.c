@@ -255,9 +255,14 @@ static void seal_draw(const struct app *app, struct canvas *canvas)
     int body = app->rows - (app_roomy(app) ? 4 : 3) - 10, sketch;
 
     draw_title(app, canvas, false);
-    draw_answers(app, canvas, 1, 2, 3, 2);
-    canvas_words(canvas, 3, 0, app->columns, STYLE_BOLD,
-                 "NOT MEASURED HERE: dew, dryness, age, rising or falling. Wet paper: wait.");
+    draw_answers(app, canvas, 1, 2, app->measured[0] != '\0' && !app_roomy(app) ? 2 : 3, 2);
+    if (app->ask == ASK_MEASURED)
+        canvas_words(
+            canvas, 3, 0, app->columns, STYLE_BOLD,
+            "Slab, width, air, damp %; rising, falling, dry, wet, clean: 15 10 12 70 ris dry");
+    else if (!seal_draw_now(app, canvas, app_roomy(app) ? 3 : 2, app_roomy(app) ? 1 : 2))
+        canvas_words(canvas, 3, 0, app->columns, STYLE_BOLD,
+                     "NOW     g: go or not, from slab, width, air and damp measured at the joint.");
     canvas_rule(canvas, 4);
     draw_rows(app, canvas, 6, 18, 9);
     canvas_words(canvas, 5, 1, 32, STYLE_BOLD, "IN THIS TABLE");
@@ -277,7 +282,15 @@ static void seal_draw(const struct app *app, struct canvas *canvas)
     text_free(&words);
 }
 
-const struct page page_seal = {"seal", seal_count, seal_row, seal_draw, no_key};
+static bool seal_key(struct app *app, uint32_t pressed)
+{
+    if (key_action(pressed, PLACE_SEAL) != ACTION_MEASURED)
+        return false;
+    app_ask(app, ASK_MEASURED, app->measured);
+    return true;
+}
+
+const struct page page_seal = {"seal", seal_count, seal_row, seal_draw, seal_key};
 
 /* ---- buy ---- */
 

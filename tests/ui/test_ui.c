@@ -311,6 +311,24 @@ static void test_bare_numbers_us(void **state)
     app_free(app);
 }
 
+/* Go or not, from one typed line. */
+static void test_measured(void **state)
+{
+    struct app *app = open_example(false);
+
+    (void)state;
+    press(app, "sg15 10 12 70 rising dry clean~");
+    assert_true(shows(app, "YES, NOW. It will stretch 13.8 %"));
+    press(app, "g");
+    for (int i = 0; i < 40; i++)
+        press(app, "\b");
+    press(app, "15 5.1 12 70 rising~");
+    assert_true(shows(app, "NOT THIS JOINT: this joint is 5.1 mm"));
+    press(app, "g nonsense~");
+    assert_true(shows(app, "the words are rising, steady"));
+    app_free(app);
+}
+
 /* Keep a line, move it, let it go; draw a cut where the solver had none; forbid one. */
 static void test_hand_on_lines(void **state)
 {
@@ -566,6 +584,7 @@ int main(void)
         cmocka_unit_test(test_choice),
         cmocka_unit_test(test_example_never_leaks),
         cmocka_unit_test(test_bare_numbers_us),
+        cmocka_unit_test(test_measured),
         cmocka_unit_test(test_hand_on_lines),
         cmocka_unit_test(test_new_file),
         cmocka_unit_test(test_new_user),
