@@ -60,23 +60,70 @@ static void align(const struct work *w, bool second)
                 }
 }
 
-/* A rectangle round a long thin object, run on to the slab edge where the rest would be too narrow.
- */
-static bool ring_object(struct work *w, int index)
+struct reach {
+    int64_t x0, y0, x1, y1;
+};
+
+/* The object's extents along the slab's axes, with 50 mm round it. */
+static struct reach reach_of(const struct work *w, int index)
 {
     const struct layout_object *o = &w->input->objects[index];
     const double a = o->angle_deg * pi / 180, c = cos(a), s = sin(a), clear = 0.05;
-    int64_t x0 = INT64_MAX, x1 = INT64_MIN, y0 = INT64_MAX, y1 = INT64_MIN;
+    struct reach r = {INT64_MAX, INT64_MAX, INT64_MIN, INT64_MIN};
     for (int k = 0; k < 4; k++) {
         const double dx = (k & 1 ? 0.5 : -0.5) * (o->w + 2 * clear);
         const double dy = (k & 2 ? 0.5 : -0.5) * (o->d + 2 * clear);
         int64_t x, y;
         work_frame(w, o->x + dx * c - dy * s, o->y + dx * s + dy * c, &x, &y);
-        x0 = x < x0 ? x : x0;
-        x1 = x > x1 ? x : x1;
-        y0 = y < y0 ? y : y0;
-        y1 = y > y1 ? y : y1;
+        r.x0 = x < r.x0 ? x : r.x0;
+        r.x1 = x > r.x1 ? x : r.x1;
+        r.y0 = y < r.y0 ? y : r.y0;
+        r.y1 = y > r.y1 ? y : r.y1;
     }
+    return r;
+}
+
+static bool is_boxed(const struct layout_object *o)
+{
+    return o->isolate && !o->box_at_given && !o->box_half_given;
+}
+
+/* Boxes with less than 1 m between their objects would leave a sliver: one box for both. Gives back
+ * the extents of all objects that hang together with the first; true: more than one. */
+static bool merge_objects(const struct work *w, int index, struct reach *all)
+{
+    const int64_t gap = llround(0.9 * LAYOUT_UNIT);
+    const int64_t most = llround(1.4 * LAYOUT_UNIT);
+    bool more = false;
+    *all = reach_of(w, index);
+    for (bool again = true; again;) {
+        again = false;
+        for (size_t i = 0; i < w->input->object_count; i++) {
+            if (w->merged[i] || (int)i == index || !is_boxed(&w->input->objects[i]))
+                continue;
+            const struct reach r = reach_of(w, (int)i), own = reach_of(w, index);
+            const struct reach u = {
+                r.x0 < all->x0 ? r.x0 : all->x0, r.y0 < all->y0 ? r.y0 : all->y0,
+                r.x1 > all->x1 ? r.x1 : all->x1, r.y1 > all->y1 ? r.y1 : all->y1};
+            if (r.x0 > all->x1 + gap || r.x1 < all->x0 - gap || r.y0 > all->y1 + gap ||
+                r.y1 < all->y0 - gap || own.x0 - u.x0 > most || u.x1 - own.x1 > most ||
+                own.y0 - u.y0 > most || u.y1 - own.y1 > most || r.x0 - u.x0 > most ||
+                u.x1 - r.x1 > most || r.y0 - u.y0 > most || u.y1 - r.y1 > most)
+                continue;
+            *all = u;
+            w->merged[i] = more = again = true;
+        }
+    }
+    if (more)
+        w->merged[index] = true;
+    return more;
+}
+
+/* A rectangle round a long thin object or several near ones, run on to the slab edge where the rest
+ * would be too narrow. */
+static bool ring_object(struct work *w, int index, struct reach box)
+{
+    int64_t x0 = box.x0, x1 = box.x1, y0 = box.y0, y1 = box.y1;
     const int64_t near = llround(w->input->min_side * LAYOUT_UNIT), mx = x0 + (x1 - x0) / 2,
                   my = y0 + (y1 - y0) / 2;
     const struct work_ring *g = &w->rings[0];
@@ -107,17 +154,28 @@ static bool make_rings(struct work *w)
     const size_t room = w->input->opening_count + w->input->object_count + 2;
     w->rings = calloc(room, sizeof *w->rings);
     w->ring_object = calloc(room, sizeof *w->ring_object);
-    if (!w->rings || !w->ring_object || !ring_make(w, w->out->outline, w->out->outline_count, -1))
+    w->merged = calloc(room, sizeof *w->merged);
+    if (!w->rings || !w->merged || !w->ring_object ||
+        !ring_make(w, w->out->outline, w->out->outline_count, -1))
         return false;
     for (size_t i = 0; i < w->out->opening_count; i++)
         if (!ring_make(w, w->out->openings[i].points, w->out->openings[i].count, -1))
             return false;
     align(w, false);
     align(w, true);
-    for (size_t i = 0; i < w->input->object_count; i++)
-        if (w->input->objects[i].isolate && place_is_rectangle(w, &w->input->objects[i]) &&
-            !ring_object(w, (int)i))
+    for (size_t i = 0; i < w->input->object_count; i++) {
+        const struct layout_object *o = &w->input->objects[i];
+        struct reach box;
+        if (!o->isolate || w->merged[i])
+            continue;
+        const bool alone = !is_boxed(o) || !merge_objects(w, (int)i, &box);
+        if (alone && !place_is_rectangle(w, o))
+            continue;
+        if (alone)
+            box = reach_of(w, (int)i);
+        if (!ring_object(w, (int)i, box))
             return false;
+    }
     return true;
 }
 
@@ -200,8 +258,8 @@ static enum status solve_rectilinear(struct work *w)
     size_t count[2] = {0, 0};
     set_rules(w);
     enum status status = STATUS_NO_MEMORY;
-    if (collect_edges(w, edges, count) && place_boxes(w) && place_bans(w) && place_lines(w) && place_expansion(w) &&
-        place_matches(w))
+    if (collect_edges(w, edges, count) && place_boxes(w) && place_bans(w) && place_lines(w) &&
+        place_expansion(w) && place_matches(w))
         status = variant_solve(w, edges, count);
     if (!status)
         status = zone_build(w, edges, count, &w->slab);
@@ -275,6 +333,7 @@ static void work_free(struct work *w)
     }
     free(w->rings);
     free(w->ring_object);
+    free(w->merged);
     free(w->boxes);
     free(w->lines);
     layout_index_free(&w->panel_index);

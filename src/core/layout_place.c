@@ -97,7 +97,7 @@ bool place_boxes(struct work *w)
         return false;
     for (size_t i = 0; i < in->object_count; i++) {
         const struct layout_object *o = &in->objects[i];
-        if (!o->isolate || place_is_rectangle(w, o))
+        if (!o->isolate || w->merged[i] || place_is_rectangle(w, o))
             continue;
         struct work_box *b = &w->boxes[w->box_count++];
         *b = (struct work_box){.object = (int)i, .half = UNITS(half_of(w, o))};

@@ -356,6 +356,20 @@ void rect_sort_chords(struct rect_chord *chords, size_t count)
         qsort(chords, count, sizeof *chords, compare_chord);
 }
 
+const struct rect_chord *rect_chord_from(const struct rect_chord *chords, size_t count,
+                                         const struct rect_chord *key)
+{
+    size_t low = 0, high = count;
+    while (low < high) {
+        const size_t mid = (low + high) / 2;
+        if (compare_chord(&chords[mid], key) < 0)
+            low = mid + 1;
+        else
+            high = mid;
+    }
+    return chords + low;
+}
+
 enum status rect_chords(const struct rect_slab *slab, struct rect_chord **chords, size_t *count)
 {
     size_t n = 0;

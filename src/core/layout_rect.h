@@ -90,6 +90,9 @@ enum rect_depth { RECT_QUICK, RECT_FULL, RECT_FINE };
 enum status rect_solve(struct rect_slab *slab, enum rect_depth depth);
 enum status rect_chords(const struct rect_slab *slab, struct rect_chord **chords, size_t *count);
 void rect_sort_chords(struct rect_chord *chords, size_t count);
+/* The first of the sorted chords that is not before the key. */
+const struct rect_chord *rect_chord_from(const struct rect_chord *chords, size_t count,
+                                         const struct rect_chord *key);
 enum status rect_panels(const struct rect_slab *slab, struct rect_panel **panels, size_t *count);
 /* Metres of joint and penalties (design page 2): the broken rules weigh more than any length. */
 double rect_penalty(const struct rect_rules *rules, int64_t along, int64_t across, int axis);

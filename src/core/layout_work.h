@@ -25,6 +25,7 @@ struct work_line { /* a line with a name: what forces it, and what kind the join
     int64_t u, v0, v1;
     enum layout_joint_kind kind;
     bool expansion, along_pour, labels;
+    bool program;  /* a zone's end the program put in */
     bool at_point; /* forces only the chord through (u, point) */
     int64_t point;
     char name[64];
@@ -36,6 +37,7 @@ struct work {
     struct work_ring *rings; /* outline, openings, rectangular boxes */
     int *ring_object;        /* object of a rectangular box, -1 */
     size_t ring_count;
+    bool *merged; /* objects that share a rectangular box */
     struct work_box *boxes;
     struct rect_box *box_index; /* the same, sorted, to find the box at a panel's corner */
     size_t box_count;

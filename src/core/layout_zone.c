@@ -263,8 +263,20 @@ static bool is_clear(const struct zone *z, int axis, int64_t u)
     return true;
 }
 
-static void add_cut(const struct zone *z, struct cuts *c, struct cut cut)
+/* A joint of contraction the user drew stays one: no zone ends there. */
+static bool is_kept(const struct work *w, struct cut cut)
 {
+    for (size_t i = 0; i < w->line_count; i++)
+        if (w->lines[i].labels && w->lines[i].axis == cut.axis && w->lines[i].u == cut.u &&
+            w->lines[i].kind == LAYOUT_CONTRACTION)
+            return true;
+    return false;
+}
+
+static void add_cut(const struct search *s, const struct zone *z, struct cuts *c, struct cut cut)
+{
+    if (is_kept(s->w, cut))
+        return;
     if (cut_length(&z->slab.family[cut.axis], cut.u) <= 0 || !is_clear(z, cut.axis, cut.u))
         return;
     for (size_t i = 0; i < c->count; i++)
@@ -307,7 +319,7 @@ static enum status find_cuts(const struct search *s, const struct zone *z, struc
             if (l->axis != axis)
                 continue;
             if (l->labels && l->kind != LAYOUT_CONTRACTION && runs_across(z, l))
-                add_cut(z, c, (struct cut){axis, l->u, true, 0});
+                add_cut(s, z, c, (struct cut){axis, l->u, true, 0});
             at[n++] = l->u;
         }
         for (size_t i = 0; i < z->slab.box_count; i++)
@@ -318,11 +330,11 @@ static enum status find_cuts(const struct search *s, const struct zone *z, struc
         }
         qsort(at, n, sizeof *at, compare_int64);
         for (size_t i = 0; i < n; i++)
-            add_cut(z, c, (struct cut){axis, at[i], false, 0});
+            add_cut(s, z, c, (struct cut){axis, at[i], false, 0});
         for (size_t i = 0; i + 1 < n; i++) {
             const int64_t middle = at[i] + (at[i + 1] - at[i]) / 2 / 80 * 80;
             if ((double)(at[i + 1] - at[i]) > 3 * z->slab.rules.least)
-                add_cut(z, c, (struct cut){axis, middle, false, 0});
+                add_cut(s, z, c, (struct cut){axis, middle, false, 0});
         }
         free(at);
     }
@@ -395,6 +407,7 @@ static enum status take_cut(struct search *s, const struct zone *z, struct cut c
                                        .v1 = c.v1,
                                        .kind = LAYOUT_CONSTRUCTION,
                                        .labels = true,
+                                       .program = true,
                                        .name = "a construction joint the program put in"};
         if (!status && !cut.given)
             status = work_line_add(s->w, line) ? STATUS_OK : STATUS_NO_MEMORY;
@@ -514,6 +527,40 @@ static enum status solve_zone(struct search *s, struct zone *z, int depth)
     return status;
 }
 
+/* Does a chord square to the line end on it at v, coming from the low or from the high side? */
+static bool comes_from(const struct work *w, const struct work_line *l, int64_t v, bool low)
+{
+    const struct rect_chord key = {.axis = 1 - l->axis, .u = v, .v0 = INT64_MIN};
+    const struct rect_chord *at = rect_chord_from(w->chords, w->chord_count, &key);
+    for (; at < w->chords + w->chord_count && at->axis == key.axis && at->u == v; at++)
+        if ((low ? at->v1 : at->v0) == l->u)
+            return true;
+    return false;
+}
+
+/* Where every joint goes on across a zone's end, it may be a joint of contraction as well. */
+static void relabel_cuts(struct work *w)
+{
+    rect_sort_chords(w->chords, w->chord_count);
+    for (size_t i = 0; i < w->line_count; i++) {
+        struct work_line *l = &w->lines[i];
+        bool goes_on = l->program && l->labels;
+        for (size_t k = 0; goes_on && k < w->chord_count; k++) {
+            const struct rect_chord *c = &w->chords[k];
+            if (c->axis == l->axis || c->u <= l->v0 || c->u >= l->v1)
+                continue;
+            if (c->v1 == l->u)
+                goes_on = comes_from(w, l, c->u, false);
+            else if (c->v0 == l->u)
+                goes_on = comes_from(w, l, c->u, true);
+        }
+        if (goes_on) {
+            l->labels = false;
+            w->cut_count--;
+        }
+    }
+}
+
 /* Quadrants of a box that lie in the slab. */
 static size_t quadrants_of(const struct work_box *b)
 {
@@ -576,7 +623,9 @@ enum status zone_solve(struct work *w, struct rect_edge *const edges[2], const s
         status = solve_zone(&s, &p.zones[i], 0);
     w->slab.evaluations += s.used;
     parts_free(&p);
-    if (!status)
+    if (!status) {
+        relabel_cuts(w);
         w->broken += zone_mark_faults(w);
+    }
     return status;
 }
