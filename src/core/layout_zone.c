@@ -307,7 +307,7 @@ static enum status find_cuts(const struct search *s, const struct zone *z, struc
         const struct rect_family *f = &z->slab.family[axis];
         const size_t room = z->slab.box_count + 3 * f->arc_count + f->gate_count + w->line_count;
         int64_t *at = calloc(room + 1, sizeof *at);
-        struct cut *more = realloc(c->list, (c->count + 4 * room + 1) * sizeof *more);
+        struct cut *more = realloc(c->list, (c->count + 5 * room + 1) * sizeof *more);
         c->list = more ? more : c->list;
         if (!at || !more) {
             free(at);
@@ -335,6 +335,11 @@ static enum status find_cuts(const struct search *s, const struct zone *z, struc
             const int64_t middle = at[i] + (at[i + 1] - at[i]) / 2 / 80 * 80;
             if ((double)(at[i + 1] - at[i]) > 3 * z->slab.rules.least)
                 add_cut(s, z, c, (struct cut){axis, middle, false, 0});
+            const int64_t third = (at[i + 1] - at[i]) / 3 / 80 * 80;
+            if ((double)(at[i + 1] - at[i]) > 1.2 * z->slab.rules.side[axis]) {
+                add_cut(s, z, c, (struct cut){axis, at[i] + third, false, 0});
+                add_cut(s, z, c, (struct cut){axis, at[i + 1] - third, false, 0});
+            }
         }
         free(at);
     }
@@ -491,12 +496,59 @@ static enum status best_split(struct search *s, const struct zone *z, struct par
     return status;
 }
 
+/* What a split costs when each part that breaks a rule is split once more. */
+static enum status cost_of_pair(struct search *s, const struct parts *p, double *cost)
+{
+    enum status status = STATUS_OK;
+    *cost = p->cost;
+    for (size_t i = 0; !status && i < p->count; i++) {
+        struct parts more = {0};
+        if (!p->zones[i].slab.broken)
+            continue;
+        status = best_split(s, &p->zones[i], &more);
+        if (more.count)
+            *cost += more.cost - p->zones[i].slab.cost;
+        parts_free(&more);
+    }
+    return status;
+}
+
+/* No single split helps: the first of two that do together. */
+static enum status best_pair(struct search *s, const struct zone *z, struct parts *best)
+{
+    struct cuts c = {0};
+    double least = z->slab.cost;
+    enum status status = find_cuts(s, z, &c);
+    if (c.count)
+        rank_cuts(s, z, &c);
+    for (size_t i = 0; !status && i < c.count && s->used < s->allowed && zone_go_on(s->w); i++) {
+        struct parts p;
+        double cost = INFINITY;
+        status = split(s, z, c.list[i], &p);
+        if (status)
+            break;
+        if (p.count > 1)
+            status = cost_of_pair(s, &p, &cost);
+        if (!status && cost < least - 1e-6) {
+            least = cost;
+            parts_free(best);
+            *best = p;
+        } else {
+            parts_free(&p);
+        }
+    }
+    free(c.list);
+    return status;
+}
+
 static enum status solve_zone(struct search *s, struct zone *z, int depth)
 {
     struct parts best = {0};
     enum status status = STATUS_OK;
     if (z->slab.broken && depth < DEEPEST && s->used < s->allowed)
         status = best_split(s, z, &best);
+    if (!status && !best.count && z->slab.broken && depth < DEEPEST && s->used < s->allowed)
+        status = best_pair(s, z, &best);
     if (!status && !best.count && z->slab.broken && zone_go_on(s->w)) {
         z->slab.evaluations = 0;
         z->slab.allowed = share_of(s);
