@@ -280,18 +280,43 @@ static int orient(struct layout_point a, struct layout_point b, struct layout_po
     return (d > 1e-12) - (d < -1e-12);
 }
 
+/* Whether `p`, which lies on the line through a and b, lies between them. */
+static bool between(struct layout_point a, struct layout_point b, struct layout_point p)
+{
+    return p.x >= fmin(a.x, b.x) - 1e-9 && p.x <= fmax(a.x, b.x) + 1e-9 &&
+           p.y >= fmin(a.y, b.y) - 1e-9 && p.y <= fmax(a.y, b.y) + 1e-9;
+}
+
+/* Two sides that are no neighbours have a point in common. */
+static bool meet(struct layout_point a, struct layout_point b, struct layout_point c,
+                 struct layout_point d)
+{
+    const int abc = orient(a, b, c), abd = orient(a, b, d);
+    const int cda = orient(c, d, a), cdb = orient(c, d, b);
+    if (abc * abd < 0 && cda * cdb < 0)
+        return true;
+    return (abc == 0 && between(a, b, c)) || (abd == 0 && between(a, b, d)) ||
+           (cda == 0 && between(c, d, a)) || (cdb == 0 && between(c, d, b));
+}
+
+/* The next side goes back over this one. */
+static bool folds_back(struct layout_point a, struct layout_point b, struct layout_point c)
+{
+    return orient(a, b, c) == 0 && (b.x - a.x) * (c.x - b.x) + (b.y - a.y) * (c.y - b.y) < 0;
+}
+
+/* Crosses or touches itself: no slab. */
 static bool crosses_itself(const struct layout *out)
 {
     const size_t n = out->outline_count;
-    for (size_t i = 0; i < n; i++)
-        for (size_t k = i + 2; k < n; k++) {
-            if (i == 0 && k == n - 1)
-                continue;
-            const struct layout_point a = out->outline[i], b = out->outline[i + 1];
-            const struct layout_point c = out->outline[k], d = out->outline[(k + 1) % n];
-            if (orient(a, b, c) * orient(a, b, d) < 0 && orient(c, d, a) * orient(c, d, b) < 0)
+    for (size_t i = 0; i < n; i++) {
+        const struct layout_point a = out->outline[i], b = out->outline[(i + 1) % n];
+        if (folds_back(a, b, out->outline[(i + 2) % n]))
+            return true;
+        for (size_t k = i + 2; k < n; k++)
+            if (!(i == 0 && k == n - 1) && meet(a, b, out->outline[k], out->outline[(k + 1) % n]))
                 return true;
-        }
+    }
     return false;
 }
 
