@@ -63,6 +63,7 @@ struct rect_slab {
     size_t corner_count, group_count;
     struct rect_rules rules;
     uint64_t evaluations, allowed, start_cost; /* start_cost: what the starts took */
+    int extra; /* rows assumed beyond the least number while the other family is unknown */
     bool fine;                                 /* places at every 0.1 m too */
     struct rect_box *boxes;                    /* sorted by x, then y */
     size_t box_count;

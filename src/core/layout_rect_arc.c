@@ -152,6 +152,8 @@ static enum status find_rows(const struct rect_slab *slab, int axis, size_t arc,
         if (blind)
             rows = ceil(((double)height - SLACK) / slab->rules.side[1 - axis]);
         rows = rows < 1 ? 1 : rows;
+        if (blind && (double)height / (rows + slab->extra) > slab->rules.least)
+            rows += slab->extra;
         height = (int64_t)((double)height / rows);
         p->rows[p->row_count++] =
             (struct row){height, walk(f, arc, mid, false), walk(f, arc, mid, true), rows};

@@ -273,6 +273,11 @@ static enum status starts(struct rect_slab *slab, struct kept *best)
             break;
     }
     set_start(slab, pick);
+    for (int extra = 1; !status && extra < 4 && slab->broken; extra++) { /* closer rows first */
+        slab->extra = extra;
+        status = descend_all(slab, false, best);
+    }
+    slab->extra = 0;
     return status;
 }
 
