@@ -1,5 +1,6 @@
 /* Random outlines, rectilinear or not, with an opening and objects: no crash, no leak, and the
- * panels never cover more than the outline's own area. */
+ * panels never cover more than the outline's own area (with objects, which the job refuses off the
+ * slab, only the first two). */
 #include "core/layout.h"
 #include <math.h>
 #include <stdlib.h>
@@ -44,7 +45,8 @@ int LLVMFuzzerTestOneInput(const uint8_t *data, size_t size)
                                        .min_angle_deg = 60,
                                        .effort = 0.02};
     struct layout layout = {0};
-    if (layout_solve(&input, &layout) == STATUS_OK && layout.area > fabs(area) / 2 + 1e-3)
+    if (layout_solve(&input, &layout) == STATUS_OK && input.object_count == 0 &&
+        layout.area > fabs(area) / 2 + 1e-3)
         abort();
     layout_free(&layout);
     return 0;
