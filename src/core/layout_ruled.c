@@ -429,6 +429,56 @@ static enum status ring_solve(struct trials *t, struct strip *s, struct chain *a
     return s->count > 2 ? try_strip(s) : STATUS_OK;
 }
 
+struct pair { /* two ends of a strip and how the chains between them are matched */
+    size_t first, second;
+    int way;
+    double wide;
+};
+
+static int compare_pair(const void *a, const void *b)
+{
+    const struct pair *p = a, *q = b;
+    if (p->wide < q->wide - 1e-9 || p->wide > q->wide + 1e-9)
+        return p->wide < q->wide ? -1 : 1;
+    if (p->first != q->first)
+        return p->first < q->first ? -1 : 1;
+    if (p->second != q->second)
+        return p->second < q->second ? -1 : 1;
+    return p->way - q->way;
+}
+
+static void match_pair(struct trials *t, struct strip *s, struct chain *a, struct chain *b,
+                       const struct pair *p)
+{
+    const struct layout *out = t->w->out;
+    const size_t n = out->outline_count;
+    s->trials = t;
+    chain_make(a, out, (p->first + 1) % n, p->second, false);
+    chain_make(b, out, (p->second + 1) % n, p->first, true);
+    match_chains(s, a, b, p->way);
+}
+
+/* All pairs of ends, the narrowest strip first: it is the one that runs along the slab. */
+static size_t find_pairs(struct trials *t, struct strip *s, struct chain *a, struct chain *b,
+                         struct pair *pairs)
+{
+    const struct layout *out = t->w->out;
+    const size_t n = out->outline_count;
+    size_t count = 0;
+    for (size_t i = 0; i < n; i++)
+        for (size_t k = i + 2; k < n; k++)
+            for (int way = 0; way < 3; way++) {
+                if (!is_cap(out, i) || !is_cap(out, k) || (i == 0 && k == n - 1))
+                    break;
+                pairs[count] = (struct pair){i, k, way, 0};
+                match_pair(t, s, a, b, &pairs[count]);
+                pairs[count].wide = widest(s);
+                count += s->count >= 2 && s->knot[s->count - 1].t > 0.5 * pairs[count].wide;
+            }
+    qsort(pairs, count, sizeof *pairs, compare_pair);
+    return count;
+}
+
 enum status shape_ruled(struct trials *t)
 {
     const struct layout *out = t->w->out;
@@ -440,19 +490,19 @@ enum status shape_ruled(struct trials *t)
     enum status status = s && a && b ? STATUS_OK : STATUS_NO_MEMORY;
     if (!status && out->opening_count)
         status = ring_solve(t, s, a, b);
-    for (size_t i = 0; !status && !out->opening_count && i < n; i++)
-        for (size_t k = i + 1; !status && k < n; k++) {
-            if (!is_cap(out, i) || !is_cap(out, k) || k == i + 1 || (i == 0 && k == n - 1))
-                continue;
-            chain_make(a, out, (i + 1) % n, k, false);
-            chain_make(b, out, (k + 1) % n, i, true);
-            for (int way = 0; !status && way < 3; way++) {
-                s->trials = t;
-                match_chains(s, a, b, way);
-                if (s->count >= 2 && trials_go_on(t) && (!t->any || t->best.violations))
-                    status = try_strip(s);
-            }
-        }
+    struct pair *pairs = calloc(3 * n * n + 1, sizeof *pairs);
+    size_t count = 0;
+    if (!pairs)
+        status = STATUS_NO_MEMORY;
+    else if (!status && !out->opening_count)
+        count = find_pairs(t, s, a, b, pairs);
+    for (size_t i = 0; !status && i < count && trials_go_on(t); i++) {
+        if (t->any && !t->best.violations)
+            break;
+        match_pair(t, s, a, b, &pairs[i]);
+        status = try_strip(s);
+    }
+    free(pairs);
     free(s);
     free(a);
     free(b);
