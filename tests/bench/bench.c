@@ -157,6 +157,7 @@ static void bench_keystroke(const char *name, const char *path)
     GEOSContextHandle_t geos = GEOS_init_r();
     double chain[RUNS], reference[RUNS];
     struct job job;
+    struct plan_cache cache = {0}; /* as the form keeps it */
     int panels = 0;
     char what[64];
 
@@ -167,7 +168,7 @@ static void bench_keystroke(const char *name, const char *path)
         double begin = now_ms();
         struct plan plan;
         for (int k = 0; k < REPEATS; k++) {
-            plan_make(&job, NULL, NULL, &plan);
+            plan_make(&job, &cache, NULL, &plan);
             if (k + 1 < REPEATS)
                 plan_free(&plan);
         }
@@ -179,6 +180,58 @@ static void bench_keystroke(const char *name, const char *path)
     row(what, median(chain, RUNS), "GEOS polygonise", median(reference, RUNS));
     job_free(&job);
     GEOS_finish_r(geos);
+}
+
+/* ---- the slab's year ---- */
+
+/* The simulated year with its warm-up, against a general tridiagonal solver doing the same number
+ * of solves of the same size (LAPACK is not wanted for one figure: the reference factors anew each
+ * time, as a library call does). */
+static double general_solves_ms(int nodes, long solves)
+{
+    double lower[64], diagonal[64], upper[64], x[64], sum = 0, begin = now_ms();
+
+    for (long s = 0; s < solves; s++) {
+        for (int i = 0; i < nodes; i++) {
+            lower[i] = upper[i] = -1 - 1e-9 * (double)s;
+            diagonal[i] = 3;
+            x[i] = 1;
+        }
+        for (int i = 1; i < nodes; i++) {
+            double m = lower[i] / diagonal[i - 1];
+            diagonal[i] -= m * upper[i - 1];
+            x[i] -= m * x[i - 1];
+        }
+        x[nodes - 1] /= diagonal[nodes - 1];
+        for (int i = nodes - 2; i >= 0; i--)
+            x[i] = (x[i] - upper[i] * x[i + 1]) / diagonal[i];
+        sum += x[0];
+    }
+    return sum > 0 ? now_ms() - begin : 0;
+}
+
+static void bench_year(void)
+{
+    struct climate_range range = {-12, 33, 8, 12, 2, 0.5, 0.7, 52, 1};
+    struct climate_hour *hours = malloc(CLIMATE_HOURS * sizeof *hours);
+    struct conduction_year *year = malloc(sizeof *year);
+    struct conduction_slab slab;
+    struct conduction_column column;
+    double ours[RUNS], reference[RUNS];
+
+    conduction_slab_default(0.2, &slab);
+    conduction_column_make(&slab, 8, 3600, 19, &column);
+    for (int i = 0; i < RUNS; i++) {
+        double begin = now_ms();
+        climate_make(&range, hours);
+        conduction_year_make(&slab, hours, year);
+        ours[i] = now_ms() - begin;
+        reference[i] = general_solves_ms(column.count, 4L * CLIMATE_HOURS);
+    }
+    row("the slab's year, warm-up and all", median(ours, RUNS), "solves of one year",
+        median(reference, RUNS));
+    free(hours);
+    free(year);
 }
 
 /* ---- large slabs: the layout alone ---- */
@@ -220,6 +273,7 @@ static void bench_large(double length_m, double width_m, int columns, int rows)
     enum { LARGE_RUNS = 5 };
     double chain[LARGE_RUNS], reference[LARGE_RUNS];
     struct job job;
+    struct plan_cache cache = {0};
     size_t panels = 0;
     int polygons = 0;
     char what[64];
@@ -231,7 +285,7 @@ static void bench_large(double length_m, double width_m, int columns, int rows)
         read_text(text, &job);
         free(text);
         begin = now_ms();
-        plan_make(&job, NULL, NULL, &plan);
+        plan_make(&job, &cache, NULL, &plan);
         chain[i] = now_ms() - begin;
         panels = plan.layout.panel_count;
         reference[i] = polygonise_ms(geos, &plan.layout, &polygons);
@@ -251,6 +305,7 @@ int main(void)
     bench_keystroke("E1", "share/examples/e1-service-yard.slab");
     bench_keystroke("E2", "share/examples/e2-store-floor.slab");
     bench_keystroke("E3", "share/examples/e3-two-lane-road.slab");
+    bench_year();
     bench_large(150, 130, 6, 5);
     bench_large(480, 400, 10, 10);
     bench_large(1050, 900, 20, 19);
