@@ -249,6 +249,26 @@ static void board_sentence(const struct plan *plan, const struct plan_isolation 
                  PERCENT(row->extension), whole_percent(plan->job.sealant_extension).words);
 }
 
+/* One joint in n typed above 1 decides: say so instead of the uniform value. */
+static bool working_fails(const struct plan *plan, char *word, size_t word_size, char *sentence,
+                          size_t size)
+{
+    int typed = (int)lround(plan->job.sealing_working);
+
+    for (size_t i = 0; typed > 1 && i < plan->working_count; i++) {
+        const struct plan_working *row = &plan->working[i];
+        if (row->n != typed || row->verdict != VERDICT_FAILS)
+            continue;
+        snprintf(word, word_size, "FAILS");
+        snprintf(sentence, size,
+                 "with 1 cut in %d working: stretches %s, squeezed %s; good for %s.", typed,
+                 PERCENT(row->extension), PERCENT(row->compression),
+                 whole_percent(plan->seal.extension_capacity).words);
+        return true;
+    }
+    return false;
+}
+
 static void answer_holds(const struct plan *plan, char *word, size_t word_size, char *sentence,
                          size_t size, char *more, size_t more_size)
 {
@@ -280,6 +300,8 @@ static void answer_holds(const struct plan *plan, char *word, size_t word_size, 
                      : "no sealant to judge.");
         return;
     }
+    if (working_fails(plan, word, word_size, sentence, size))
+        return;
     snprintf(word, word_size, "%s", verdict_screen_word(plan->seal.verdict));
     if (plan->seal.verdict == VERDICT_FAILS)
         seal_remedy(plan, remedy, sizeof remedy);

@@ -137,6 +137,18 @@ static void check_order(const struct job *job, struct finding_list *findings, en
     text_free(&hot);
 }
 
+/* Typed, but no answer of this version leans on it: said, never silent. */
+static void note_unused(struct job *job, struct finding_list *findings)
+{
+    if (job->given[FIELD_climate_file])
+        say(job, findings, SEVERITY_WARNING, FIELD_climate_file,
+            "weather files are not read by this version; the slab's year is made from the coldest "
+            "and hottest air. Type slab-coldest and slab-hottest if the file knows better.");
+    if (job->given[FIELD_takeoff_loss_per_day])
+        say(job, findings, SEVERITY_NOTE, FIELD_takeoff_loss_per_day,
+            "not counted by this version; put it into the waste.");
+}
+
 static void settle_climate(struct job *job, struct finding_list *findings)
 {
     bool both = job->given[FIELD_climate_slab_coldest] && job->given[FIELD_climate_slab_hottest];
@@ -249,6 +261,7 @@ void job_settle(struct job *job, struct finding_list *findings)
     settle_expansion(job, findings);
     settle_shrinkage(job, findings);
     settle_climate(job, findings);
+    note_unused(job, findings);
     settle_sealing_temperature(job, findings);
     check_dates(job, findings);
     settle_sealant(job, findings);
