@@ -136,6 +136,8 @@ enum status shape_solve(struct work *w)
     }
     const bool user_lines = is_plain(w) && has_kept(w->input);
     if (!status && !user_lines && (!t.any || t.best.violations))
+        status = shape_kerb(&t);
+    if (!status && !user_lines && (!t.any || t.best.violations))
         status = shape_ruled(&t);
     if (!status && !user_lines && (!t.any || t.best.violations))
         status = shape_grid(&t);

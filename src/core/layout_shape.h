@@ -20,6 +20,8 @@ bool trials_go_on(const struct trials *t);
 enum status shape_grid(struct trials *t);
 /* A strip between two chains of sides: joints across it and rows along it. */
 enum status shape_ruled(struct trials *t);
+/* Quarter circles at inside corners, the rest as it is without them. */
+enum status shape_kerb(struct trials *t);
 /* A slab that is not rectilinear: fills the result, already checked. */
 enum status shape_solve(struct work *w);
 

@@ -192,6 +192,11 @@ static void check_joint_ends(struct checker *c)
             const double vx = o->x2 - o->x1, vy = o->y2 - o->y1;
             const double bend = fabs(atan2(ux * vy - uy * vx, ux * vx + uy * vy));
             good = o->kind != LAYOUT_CONTRACTION || bend < 0.533 || bend > 2.61;
+            /* a dog-leg: a short piece turned by 60 degrees at most that ends on the edge, along
+             * the radius of a kerb return (pavement guides, "joint layout") */
+            if (hypot(vx, vy) < fmax(1.5, 0.35 * c->in->max_side_x) &&
+                (bend < 1.056 || bend > 2.085))
+                good |= on_rings(out, o->x1, o->y1) || on_rings(out, o->x2, o->y2);
         }
         if (!good)
             fault(c, "joint ends in a panel's side", i / 2, x);
