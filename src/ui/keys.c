@@ -23,7 +23,7 @@ const struct key_row key_table[] = {
     {PRESS_BACK, ACTION_BACK, PLACE_EVERYWHERE, "Esc", NULL,
      "Gives the old value back; else one step back."},
     {PRESS_UP, ACTION_UP, PLACE_EVERYWHERE, "up", NULL,
-     "The row above; on the plan 0.5 m (2 ft) north."},
+     "The row above; on the plan one step north."},
     {PRESS_DOWN, ACTION_DOWN, PLACE_EVERYWHERE, "down", NULL,
      "The row below; keeps an opened row first."},
     {'a', ACTION_ADD, PLACE_PLAN, "a", NULL, "Plan: adds a column, manhole, hole, wall ... here."},

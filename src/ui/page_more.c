@@ -150,23 +150,39 @@ static bool no_key(struct app *app, uint32_t pressed)
     return false;
 }
 
+/* One key a line; up and down scroll where they do not all fit. */
+static int help_window(const struct app *app)
+{
+    return app->rows - (app_roomy(app) ? 6 : 5);
+}
+
 static void help_draw(const struct app *app, struct canvas *canvas)
 {
-    int rows = app->rows - 5, line = 0;
+    int window = help_window(app), first = app->at[PAGE_HELP];
 
     draw_title(app, canvas, false);
     canvas_words(canvas, 1, 0, app->columns, STYLE_BOLD,
                  "KEYS    nothing needs Shift, Ctrl or Alt");
-    for (size_t i = 0; i < key_count; i++, line++) {
-        int half = app->columns / 2, column = line < rows ? 0 : half;
-        int most = app->rows >= 28 ? app->columns : half;
-        if (line >= 2 * rows)
-            break;
-        canvas_words(canvas, 2 + line % rows, column, 9, STYLE_BOLD, key_table[i].name);
-        canvas_words(canvas, 2 + line % rows, column + 9, most - 10, STYLE_PLAIN,
-                     key_table[i].help);
+    for (int i = 0; i < window && first + i < (int)key_count; i++) {
+        const struct key_row *row = &key_table[first + i];
+        canvas_words(canvas, 2 + i, 0, 9, STYLE_BOLD, row->name);
+        canvas_words(canvas, 2 + i, 9, app->columns - 10, STYLE_PLAIN, row->help);
     }
-    draw_foot(app, canvas, "Esc goes back.");
+    draw_foot(app, canvas, "Up and down show the others. Esc goes back.");
+}
+
+static bool help_key(struct app *app, uint32_t pressed)
+{
+    int most = (int)key_count - help_window(app);
+
+    if (pressed != PRESS_UP && pressed != PRESS_DOWN)
+        return false;
+    app->at[PAGE_HELP] += pressed == PRESS_UP ? -1 : 1;
+    if (app->at[PAGE_HELP] > most)
+        app->at[PAGE_HELP] = most;
+    if (app->at[PAGE_HELP] < 0)
+        app->at[PAGE_HELP] = 0;
+    return true;
 }
 
 static void cautions_draw(const struct app *app, struct canvas *canvas)
@@ -188,5 +204,5 @@ static void cautions_draw(const struct app *app, struct canvas *canvas)
     draw_foot(app, canvas, "Esc goes back.");
 }
 
-const struct page page_help = {"keys", none, no_row, help_draw, no_key};
+const struct page page_help = {"keys", none, no_row, help_draw, help_key};
 const struct page page_cautions = {"cautions", none, no_row, cautions_draw, no_key};
