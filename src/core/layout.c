@@ -1,5 +1,6 @@
 /* Lays out a slab: its own frame, rings, forced lines, engine, joints and panels, checks. */
 #include "core/layout.h"
+#include "core/layout_neighbour.h"
 #include "core/layout_place.h"
 #include "core/layout_shape.h"
 #include "core/layout_variant.h"
@@ -252,6 +253,19 @@ static void find_bounds(struct work *w)
     }
 }
 
+/* The zones' ends are said: no rule is broken by them. */
+static bool note_zones(struct work *w)
+{
+    struct layout_reason note = {.code = "ZONE", .rule = "note", .value = (double)w->cut_count};
+    snprintf(note.cause, sizeof note.cause,
+             "%zu construction joints were put in: lines that run on over the whole slab would "
+             "break a rule.",
+             w->cut_count);
+    snprintf(note.remedy, sizeof note.remedy,
+             "Cast the parts on either side apart, or move the objects onto common lines.");
+    return layout_reason_add(&w->out->reasons, &w->out->reason_count, note);
+}
+
 static enum status solve_rectilinear(struct work *w)
 {
     struct rect_edge *edges[2] = {NULL, NULL};
@@ -267,6 +281,8 @@ static enum status solve_rectilinear(struct work *w)
         status = STATUS_REFUSED; /* no area at all */
     if (!status)
         status = layout_emit(w);
+    if (!status && w->cut_count && !note_zones(w))
+        status = STATUS_NO_MEMORY;
     if (!status)
         find_bounds(w);
     free(edges[0]);
@@ -369,7 +385,7 @@ static void work_free(struct work *w)
     rect_free(&w->slab);
 }
 
-enum status layout_solve(const struct layout_input *input, struct layout *layout)
+enum status layout_solve_once(const struct layout_input *input, struct layout *layout)
 {
     struct layout out = {0};
     struct work w = {.input = input, .out = &out, .cosine = 1};
@@ -391,6 +407,19 @@ enum status layout_solve(const struct layout_input *input, struct layout *layout
         status = layout_check_panels(&w);
     out.evaluations = w.slab.evaluations;
     work_free(&w);
+    if (status)
+        layout_free(&out);
+    else
+        *layout = out;
+    return status;
+}
+
+enum status layout_solve(const struct layout_input *input, struct layout *layout)
+{
+    struct layout out = {0};
+    enum status status = layout_solve_once(input, &out);
+    if (!status)
+        status = neighbour_choose(input, &out);
     if (status)
         layout_free(&out);
     else

@@ -6,14 +6,23 @@
 #include <stdlib.h>
 #include <string.h>
 
-enum { MOST_KNOTS = 400, MOST_PLACES = 1200 };
+enum { MOST_KNOTS = 400, MOST_PLACES = 1200, MOST_FIXED = 64 };
 struct knot {
     double t; /* mean length along the two chains, m */
     struct layout_point a, b;
     bool corner; /* the sides turn here: a cross joint must stand here */
 };
+struct fixed { /* an object on a row, or a pour line that is one */
+    double t, f;
+    int object; /* -1: a line */
+    struct layout_segment line;
+    int row;
+};
 struct strip {
     struct trials *trials;
+    struct fixed fixed[MOST_FIXED];
+    size_t fixed_count;
+    double expansion; /* between expansion joints, 0 = none */
     struct knot knot[MOST_KNOTS];
     size_t count;
     int rows;
@@ -42,6 +51,57 @@ static void at_t(const struct strip *s, double t, struct layout_point *a, struct
     const double f = q->t > p->t ? (t - p->t) / (q->t - p->t) : 0;
     *a = between(p->a, q->a, f < 0 ? 0 : f > 1 ? 1 : f);
     *b = between(p->b, q->b, f < 0 ? 0 : f > 1 ? 1 : f);
+}
+
+/* The share of the way from a to b where the line crosses. */
+static double share_of_line(const struct layout_segment *l, struct layout_point a,
+                            struct layout_point b)
+{
+    const double dx = l->x2 - l->x1, dy = l->y2 - l->y1;
+    const double p = (a.x - l->x1) * dy - (a.y - l->y1) * dx;
+    const double q = (b.x - l->x1) * dy - (b.y - l->y1) * dx;
+    return p < q || p > q ? p / (p - q) : 0.5;
+}
+
+/* The share at t of a row that a line or objects hold: straight between the objects. */
+static bool held_share(const struct strip *s, int row, double t, double *share)
+{
+    const struct fixed *before = NULL, *after = NULL;
+    for (size_t i = 0; i < s->fixed_count; i++) {
+        const struct fixed *f = &s->fixed[i];
+        if (f->row != row)
+            continue;
+        if (f->object < 0) {
+            struct layout_point a, b;
+            at_t(s, t, &a, &b);
+            *share = share_of_line(&f->line, a, b);
+            return true;
+        }
+        if (f->t <= t && (!before || f->t > before->t))
+            before = f;
+        if (f->t >= t && (!after || f->t < after->t))
+            after = f;
+    }
+    if (!before && !after)
+        return false;
+    *share = !before ? after->f : before->f;
+    if (before && after && after->t > before->t + 1e-9)
+        *share += (after->f - before->f) * (t - before->t) / (after->t - before->t);
+    return true;
+}
+
+/* Where row line `row` stands at t: between the nearest held rows in equal parts. */
+static double share_of(const struct strip *s, int row, double t)
+{
+    int low = row, high = row;
+    double a = 0, b = 1;
+    while (low > 0 && !held_share(s, low, t, &a))
+        low--;
+    while (high < s->rows && !held_share(s, high, t, &b))
+        high++;
+    a = low == 0 ? 0 : a;
+    b = high == s->rows ? 1 : b;
+    return low == high ? a : a + (b - a) * (row - low) / (high - low);
 }
 
 /* Longer side, shorter side of the smallest rectangle, and what is wrong with a panel. */
@@ -106,9 +166,9 @@ static double cost_between(const struct strip *s, double from, double to, bool f
     at_t(s, to, &a1, &b1);
     s->trials->w->slab.evaluations += 4;
     for (int j = 0; j < s->rows; j++) {
-        const double f = (double)j / s->rows, g = (double)(j + 1) / s->rows;
-        const struct layout_point quad[4] = {between(a0, b0, f), between(a1, b1, f),
-                                             between(a1, b1, g), between(a0, b0, g)};
+        const struct layout_point quad[4] = {
+            between(a0, b0, share_of(s, j, from)), between(a1, b1, share_of(s, j, to)),
+            between(a1, b1, share_of(s, j + 1, to)), between(a0, b0, share_of(s, j + 1, from))};
         size_t n = 0;
         ring[n++] = quad[0];
         for (size_t k = 0; j == 0 && k < s->count; k++)
@@ -133,6 +193,16 @@ static int compare_double(const void *a, const void *b)
     return (p > q) - (p < q);
 }
 
+static bool is_expansion(const struct strip *s, double t)
+{
+    const double end = s->knot[s->count - 1].t;
+    const int joints = s->expansion > 0 ? (int)ceil(end / s->expansion - 1e-6) : 0;
+    for (int i = 1; i < joints; i++)
+        if (fabs(end * i / joints - t) < 2e-3)
+            return true;
+    return false;
+}
+
 /* Equal divisions between corners, a raster of a quarter metre, and the corners themselves. */
 static void find_places(struct strip *s)
 {
@@ -152,6 +222,12 @@ static void find_places(struct strip *s)
             s->place[n++] = b;
         from = k;
     }
+    for (size_t i = 0; i < s->fixed_count; i++)
+        if (s->fixed[i].object >= 0 && n + 2 < MOST_PLACES)
+            s->place[n++] = s->fixed[i].t;
+    const int joints = s->expansion > 0 ? (int)ceil(end / s->expansion - 1e-6) : 0;
+    for (int i = 1; i < joints && n + 2 < MOST_PLACES; i++)
+        s->place[n++] = end * i / joints;
     const double step = fmax(0.25, end / 400);
     for (double t = step; t < end - step / 2 && n + 1 < MOST_PLACES; t += step)
         s->place[n++] = t;
@@ -165,6 +241,9 @@ static void find_places(struct strip *s)
         s->must[i] = false;
         for (size_t k = 1; k + 1 < s->count; k++)
             s->must[i] |= s->knot[k].corner && fabs(s->knot[k].t - s->place[i]) < 2e-3;
+        for (size_t k = 0; k < s->fixed_count; k++)
+            s->must[i] |= s->fixed[k].object >= 0 && fabs(s->fixed[k].t - s->place[i]) < 2e-3;
+        s->must[i] |= is_expansion(s, s->place[i]);
     }
 }
 
@@ -192,33 +271,105 @@ static double best_places(const struct strip *s, size_t *from)
     return best[s->place_count - 1];
 }
 
-static bool add_across(struct plane *plane, int line, struct layout_point a, struct layout_point b)
+static bool add_across(struct plane *plane, struct plane_line line, struct layout_point a,
+                       struct layout_point b)
 {
-    return plane_add(plane, (struct plane_line){.at = {a.x, a.y, b.x, b.y}, .line = line});
+    line.at = (struct layout_segment){a.x, a.y, b.x, b.y};
+    return plane_add(plane, line);
+}
+
+static bool is_pour_row(const struct strip *s, int row)
+{
+    for (size_t i = 0; i < s->fixed_count; i++)
+        if (s->fixed[i].row == row && s->fixed[i].object < 0)
+            return true;
+    return false;
+}
+
+static struct layout_point row_point(const struct strip *s, int row, double t)
+{
+    struct layout_point a, b;
+    at_t(s, t, &a, &b);
+    return between(a, b, share_of(s, row, t));
+}
+
+static struct layout_point towards(struct layout_point from, struct layout_point to, double length)
+{
+    const double l = far(from, to);
+    return between(from, to, l > 0 ? length / l : 0);
+}
+
+/* The tips of a box lie on the four joints that meet at its middle. */
+static bool add_boxes(const struct strip *s, struct plane *plane, const double *at, size_t count)
+{
+    plane->boxes = calloc(s->fixed_count + 1, sizeof *plane->boxes);
+    for (size_t i = 0; plane->boxes && i < s->fixed_count; i++) {
+        const struct fixed *f = &s->fixed[i];
+        size_t k = 1;
+        if (f->object < 0)
+            continue;
+        while (k + 1 < count && fabs(at[k] - f->t) > 2e-3)
+            k++;
+        if (k + 1 >= count)
+            continue;
+        const struct layout_object *o = &s->trials->w->input->objects[f->object];
+        struct layout_point a, b;
+        at_t(s, at[k], &a, &b);
+        const struct layout_point c = row_point(s, f->row, at[k]),
+                                  next = row_point(s, f->row, at[k + 1]),
+                                  last = row_point(s, f->row, at[k - 1]);
+        const double square = fabs((next.x - c.x) * (b.y - a.y) - (next.y - c.y) * (b.x - a.x)) /
+                              (far(c, next) * far(a, b));
+        double half = o->round ? o->w / sqrt(2) + 0.15 : hypot(o->w, o->d) / sqrt(2) + 0.1;
+        half = o->box_half_given ? o->box_half : half / fmax(square, 0.5);
+        struct plane_box *box = &plane->boxes[plane->box_count++];
+        *box = (struct plane_box){.object = f->object, .centre = c, .half = half};
+        box->tip[0] = towards(c, last, half);
+        box->tip[1] = towards(c, a, half);
+        box->tip[2] = towards(c, next, half);
+        box->tip[3] = towards(c, b, half);
+    }
+    return plane->boxes != NULL;
 }
 
 static enum status emit_strip(const struct strip *s, const size_t *from)
 {
     struct plane plane = {0};
-    bool fine = true;
-    int line = 0;
-    double last_t = s->knot[s->count - 1].t;
-    for (size_t q = s->place_count - 1; fine && q > 0; q = from[q]) {
-        struct layout_point a0, b0, a1, b1;
-        const double t = s->place[from[q]];
-        at_t(s, t, &a0, &b0);
-        at_t(s, last_t, &a1, &b1);
-        for (int j = 1; fine && j < s->rows; j++) {
-            const double f = (double)j / s->rows;
-            fine = add_across(&plane, j, between(a0, b0, f), between(a1, b1, f));
-        }
-        line++;
-        if (from[q] > 0 || s->closed)
-            fine = fine && add_across(&plane, s->rows + line, a0, b0);
-        last_t = t;
+    double *at = calloc(s->place_count + 1, sizeof *at);
+    size_t count = 0;
+    bool fine = at != NULL;
+    for (size_t q = s->place_count - 1; fine; q = from[q]) {
+        at[count++] = s->place[q];
+        if (q == 0)
+            break;
     }
+    for (size_t i = 0; fine && i < count / 2; i++) {
+        const double t = at[i];
+        at[i] = at[count - 1 - i];
+        at[count - 1 - i] = t;
+    }
+    for (size_t i = 0; fine && i + 1 < count; i++) {
+        for (int j = 1; fine && j < s->rows; j++) {
+            const bool pour = is_pour_row(s, j);
+            const struct plane_line line = {.line = j,
+                                            .kind = pour ? LAYOUT_CONSTRUCTION : LAYOUT_CONTRACTION,
+                                            .along_pour = pour};
+            fine = add_across(&plane, line, row_point(s, j, at[i]), row_point(s, j, at[i + 1]));
+        }
+        if (i == 0 && !s->closed)
+            continue;
+        struct layout_point a, b;
+        at_t(s, at[i], &a, &b);
+        const bool expansion = is_expansion(s, at[i]);
+        const struct plane_line line = {.line = s->rows + (int)i,
+                                        .kind = expansion ? LAYOUT_ISOLATION : LAYOUT_CONTRACTION,
+                                        .expansion = expansion};
+        fine = fine && add_across(&plane, line, a, b);
+    }
+    fine = fine && add_boxes(s, &plane, at, count);
     const enum status status = fine ? trials_run(s->trials, &plane) : STATUS_NO_MEMORY;
     plane_free(&plane);
+    free(at);
     return status;
 }
 
@@ -349,6 +500,78 @@ static double widest(const struct strip *s)
     return wide;
 }
 
+/* The parameter of the ruling through p, and p's share of it. */
+static bool locate(const struct strip *s, struct layout_point p, double *t, double *f)
+{
+    struct layout_point a, b;
+    for (size_t i = 0; i + 1 < s->count; i++) {
+        double low = s->knot[i].t, high = s->knot[i + 1].t, side[2];
+        for (int k = 0; k < 2; k++) {
+            const struct knot *n = &s->knot[i + (size_t)k];
+            side[k] = (n->b.x - n->a.x) * (p.y - n->a.y) - (n->b.y - n->a.y) * (p.x - n->a.x);
+        }
+        if (side[0] * side[1] > 0)
+            continue;
+        for (int k = 0; k < 60; k++) {
+            const double mid = (low + high) / 2;
+            at_t(s, mid, &a, &b);
+            const double here = (b.x - a.x) * (p.y - a.y) - (b.y - a.y) * (p.x - a.x);
+            if ((here < 0) == (side[0] < 0))
+                low = mid;
+            else
+                high = mid;
+        }
+        at_t(s, low, &a, &b);
+        *t = low;
+        *f = ((p.x - a.x) * (b.x - a.x) + (p.y - a.y) * (b.y - a.y)) / (far(a, b) * far(a, b));
+        if (*f > 0 && *f < 1)
+            return true;
+    }
+    return false;
+}
+
+/* Objects and pour lines on the strip; false: one of them does not suit it. */
+static bool find_fixed(struct strip *s)
+{
+    const struct layout_input *in = s->trials->w->input;
+    const size_t pours = in->has_pours ? in->pour_line_count : 0;
+    s->fixed_count = 0;
+    s->expansion = in->expansion_every;
+    if (in->object_count + pours > MOST_FIXED)
+        return false;
+    for (size_t i = 0; i < in->object_count; i++) {
+        const struct layout_object *o = &in->objects[i];
+        struct fixed f = {.object = (int)i};
+        if (!o->isolate)
+            continue;
+        const struct layout_point p = {o->box_at_given ? o->box_x : o->x,
+                                       o->box_at_given ? o->box_y : o->y};
+        if (!locate(s, p, &f.t, &f.f))
+            return false;
+        s->fixed[s->fixed_count++] = f;
+    }
+    for (size_t i = 0; i < pours; i++) {
+        struct fixed f = {.object = -1, .line = in->pour_lines[i]};
+        const double first = share_of_line(&f.line, s->knot[0].a, s->knot[0].b);
+        const double last =
+            share_of_line(&f.line, s->knot[s->count - 1].a, s->knot[s->count - 1].b);
+        f.f = (first + last) / 2;
+        if (first < 0.02 || first > 0.98 || last < 0.02 || last > 0.98)
+            return false;
+        s->fixed[s->fixed_count++] = f;
+    }
+    return true;
+}
+
+/* Each object and line takes the row line nearest to it. */
+static void assign_rows(struct strip *s)
+{
+    for (size_t i = 0; i < s->fixed_count; i++) {
+        const int row = (int)floor(s->fixed[i].f * s->rows + 0.5);
+        s->fixed[i].row = row < 1 ? 1 : row > s->rows - 1 ? s->rows - 1 : row;
+    }
+}
+
 static enum status try_strip(struct strip *s)
 {
     const struct layout_input *in = s->trials->w->input;
@@ -357,15 +580,21 @@ static enum status try_strip(struct strip *s)
     size_t *from = calloc(MOST_PLACES, sizeof *from);
     enum status status = from ? STATUS_OK : STATUS_NO_MEMORY;
     double best = INFINITY;
+    if (!find_fixed(s)) {
+        free(from);
+        return status;
+    }
     find_places(s);
-    for (int rows = least < 1 ? 1 : least; !status && rows <= least + 2; rows++) {
+    const int first = least < 1 ? 1 : least;
+    for (int rows = s->fixed_count && first < 2 ? 2 : first; !status && rows <= least + 2; rows++) {
         if (!trials_go_on(s->trials))
             break;
         s->rows = rows;
+        assign_rows(s);
         const double cost = best_places(s, from);
-        if (cost >= best)
+        if (cost >= best && !s->fixed_count)
             break;
-        best = cost;
+        best = fmin(best, cost);
         status = emit_strip(s, from);
         if (cost < 1e3)
             break;
@@ -385,8 +614,7 @@ static bool is_free(const struct work *w)
         if (in->edges[i].kind == LAYOUT_EDGE_EXISTING && !in->edges[i].isolate &&
             in->edges[i].joint_count)
             return false;
-    return !in->object_count && !in->has_pours && in->expansion_every <= 0 &&
-           w->out->outline_count < MOST_KNOTS;
+    return !(in->has_pours && in->pour_width > 0) && w->out->outline_count < MOST_KNOTS;
 }
 
 /* A closed chain from the point nearest to `start`, anticlockwise. */

@@ -68,6 +68,8 @@ enum status layout_emit(struct work *w);
 enum status layout_check_panels(struct work *w);
 /* Ends of joints, neighbours, pours, objects, tiling; called by the above. */
 enum status layout_check_joints(struct work *w);
+/* Lays out once, with the sides as they are given. */
+enum status layout_solve_once(const struct layout_input *input, struct layout *layout);
 /* A convex outline with slanting sides: lines right across it. */
 enum status layout_convex(struct work *w);
 /* Copies the rings and the sides into the result. */
