@@ -366,6 +366,16 @@ static void add_joints(struct text *out, const struct plan *plan)
     add_list(out, plan, "joints", keys, JOINTS_MOST);
 }
 
+static void add_pours(struct text *out, const struct plan *plan)
+{
+    static const char *const keys[] = {"number", "panels", "area_m2", "volume_m3", "turn", NULL};
+
+    if (plan->pour_count < 2)
+        return;
+    heading(out, "POURS (turn 1 first, turn 2 between them when those have hardened)");
+    add_list(out, plan, "pours", keys, JOINTS_MOST);
+}
+
 static void add_cracks(struct text *out, const struct plan *plan)
 {
     static const char *const keys[] = {"number", "length_m",   "panels",
@@ -467,13 +477,21 @@ static const struct part {
     const char *key;
     void (*add)(struct text *out, const struct plan *plan);
 } parts[] = {
-    {"answers", add_answers},         {"job", add_job},
-    {"findings", add_findings},       {"spacing", add_spacing},
-    {"temperature", add_temperature}, {"seal", add_seal},
-    {"sealing_table", add_table},     {"isolation", add_isolation},
-    {"checks", add_checks},           {"quantities", add_quantities},
-    {"joints", add_joints},           {"layout", add_layout},
-    {"cracks", add_cracks},           {"cautions", add_cautions},
+    {"answers", add_answers},
+    {"job", add_job},
+    {"findings", add_findings},
+    {"spacing", add_spacing},
+    {"temperature", add_temperature},
+    {"seal", add_seal},
+    {"sealing_table", add_table},
+    {"isolation", add_isolation},
+    {"checks", add_checks},
+    {"quantities", add_quantities},
+    {"joints", add_joints},
+    {"layout", add_layout},
+    {"pours", add_pours},
+    {"cracks", add_cracks},
+    {"cautions", add_cautions},
 };
 /* Keys of the JSON that stand inside another part of the text. */
 static const char *const inside[][2] = {

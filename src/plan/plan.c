@@ -85,7 +85,9 @@ static enum status run_chain(struct plan *plan, struct plan_cache *cache,
     plan_set_restraint(plan);
     plan_set_steel(plan);
     plan_set_quantities(plan);
-    status = plan_set_cracks(plan);
+    status = plan->has_outline ? plan_set_pours(plan) : STATUS_OK;
+    if (status == STATUS_OK)
+        status = plan_set_cracks(plan);
     if (status != STATUS_OK)
         return status;
     return plan_set_checks(plan);
@@ -126,6 +128,9 @@ void plan_free(struct plan *plan)
     free(plan->checks);
     free(plan->joints);
     free(plan->cracks);
+    free(plan->pours);
+    plan->pours = NULL;
+    plan->pour_count = 0;
     plan->cracks = NULL;
     plan->crack_count = 0;
     plan->isolation = NULL;

@@ -59,6 +59,11 @@ struct plan_rod {
     double diameter_m, length_m;
 };
 
+struct plan_pour { /* what is placed at once */
+    int number, panels;
+    int turn; /* 1: placed first, 2: the strips between */
+    double area_m2, volume_m3, x, y;
+};
 enum { CRACK_PANELS = 16 };
 struct plan_crack_panel {
     int panel;
@@ -166,6 +171,8 @@ struct plan {
         double locked_pa, locked_both_pa; /* locked slab at hottest - zero stress */
         double lift_off_hinge_k, lift_off_continuous_k, rise_left_k; /* blow-up */
     } restraint;
+    struct plan_pour *pours; /* one when nothing parts the slab */
+    size_t pour_count;
     struct plan_crack *cracks;
     size_t crack_count;
     struct plan_joint *joints; /* layout.joint_count of them */

@@ -18,6 +18,7 @@ enum status plan_set_isolation(struct plan *plan);
 void plan_set_restraint(struct plan *plan);
 void plan_set_steel(struct plan *plan);
 void plan_set_quantities(struct plan *plan);
+enum status plan_set_pours(struct plan *plan);
 enum status plan_set_cracks(struct plan *plan);
 enum status plan_set_checks(struct plan *plan);
 

@@ -185,6 +185,13 @@ static const struct column check_columns[] = {
     CTEXT(plan_check, "source", "source", source),
     CTEXT(plan_check, "remedy", "what to do", remedy),
 };
+static const struct column pour_columns[] = {
+    CINT(plan_pour, "number", "pour", number),
+    CINT(plan_pour, "panels", "panels", panels),
+    CNUM(plan_pour, "area_m2", "area, m2", QUANTITY_NONE, area_m2),
+    CNUM(plan_pour, "volume_m3", "concrete, m3", QUANTITY_NONE, volume_m3),
+    CINT(plan_pour, "turn", "turn", turn),
+};
 static const struct column crack_columns[] = {
     CINT(plan_crack, "number", "crack", number),
     CNUM(plan_crack, "length_m", "length", METRES, length_m),
@@ -234,6 +241,7 @@ ROWS(working_rows, working, working_count)
 ROWS(table_rows, table, table_count)
 ROWS(isolation_rows, isolation, isolation_count)
 ROWS(check_rows, checks, check_count)
+ROWS(pour_rows, pours, pour_count)
 ROWS(crack_rows, cracks, crack_count)
 ROWS(package_rows, quantities.packages, quantities.package_count)
 ROWS(rod_rows, quantities.rods, quantities.rod_count)
@@ -255,6 +263,7 @@ const struct list list_table[] = {
     LIST("sealing_table", table_columns, plan_table_row, table_rows),
     LIST("isolation", isolation_columns, plan_isolation, isolation_rows),
     LIST("checks", check_columns, plan_check, check_rows),
+    LIST("pours", pour_columns, plan_pour, pour_rows),
     LIST("cracks", crack_columns, plan_crack, crack_rows),
     LIST("quantities.packages", package_columns, plan_package, package_rows),
     LIST("quantities.rod_m", rod_columns, plan_rod, rod_rows),

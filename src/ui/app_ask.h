@@ -16,6 +16,7 @@ void plan_add_kind(struct app *app);
 void plan_add(struct app *app);
 void plan_cross_to(struct app *app);
 void plan_point_words(double x, double y, char *out, size_t size);
+const struct object *plan_object_under(const struct app *app);
 bool plan_on_slab(const struct app *app);   /* whether the cross is */
 int plan_line_under(const struct app *app); /* joint line under the cross, 0 = none */
 double plan_reach(const struct app *app);   /* how near the cross counts as on it, m */
@@ -32,6 +33,8 @@ void plan_draw_line(struct app *app, const char *kind, bool level);
 void plan_keep_line(struct app *app);       /* or lets a kept or drawn one go */
 bool plan_line_kept(const struct app *app); /* a [joint] is under the cross */
 bool plan_take_line(struct app *app);       /* false: there is no line under the cross */
+void plan_keep_box(struct app *app, const struct object *object); /* or lets it go */
+void plan_move_box(struct app *app, const struct object *object);
 bool plan_move_words(const struct app *app, struct text *out); /* false: no line to move */
 void plan_move_line(struct app *app);
 

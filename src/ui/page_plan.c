@@ -108,7 +108,7 @@ static int nearest_side(const struct app *app, double *along, double *distance)
     return best;
 }
 
-static const struct object *object_under(const struct app *app)
+const struct object *plan_object_under(const struct app *app)
 {
     for (size_t i = 0; i < app->job.object_count; i++) {
         const struct object *object = &app->job.objects[i];
@@ -197,7 +197,7 @@ bool plan_on_slab(const struct app *app)
 
 static void under_words(const struct app *app, struct text *out)
 {
-    const struct object *object = object_under(app);
+    const struct object *object = plan_object_under(app);
     const struct opening *opening = opening_under(app);
     const struct layout_panel *panel = panel_under(app);
     char name[2 * LINE_NAME_MOST], kind[CHOICE_MOST];
@@ -209,7 +209,8 @@ static void under_words(const struct app *app, struct text *out)
         field_choice_word(field_find("object", "kind"), (int)object->kind, kind, sizeof kind);
         text_format(out, "%s %s, ", kind, object->name);
         add_size(app, out, object->w, object->d);
-        text_add(out, "; the joints meet its box. d takes it away.");
+        text_add(out, object->box_at_given ? "; its box is kept. k lets it go, v moves it."
+                                           : "; the joints meet its box. k keeps it, v moves it.");
     } else if (opening != NULL) {
         text_format(out, "hole %s. d takes it away.", opening->name);
     } else if (joint_line_find(&app->plan.layout, plan_line_under(app), &line)) {
@@ -411,7 +412,7 @@ void plan_cross_to(struct app *app)
 
 static void take_away(struct app *app)
 {
-    const struct object *object = object_under(app);
+    const struct object *object = plan_object_under(app);
     const struct opening *opening = opening_under(app);
     struct change_item item = {0};
     char path[64], words[WORDS_MOST];
@@ -564,10 +565,13 @@ static bool key(struct app *app, uint32_t pressed)
         take_away(app);
         return true;
     case ACTION_KEEP:
-        plan_keep_line(app);
+        if (plan_object_under(app) != NULL)
+            plan_keep_box(app, plan_object_under(app));
+        else
+            plan_keep_line(app);
         return true;
     case ACTION_MOVE:
-        if (plan_line_under(app) > 0)
+        if (plan_line_under(app) > 0 || plan_object_under(app) != NULL)
             app_ask(app, ASK_MOVE, "");
         else
             app_tell(app, "No joint under the cross: move it onto a line first.");

@@ -191,6 +191,10 @@ bool plan_move_words(const struct app *app, struct text *out)
     struct joint_line line;
     bool level;
 
+    if (plan_object_under(app) != NULL) {
+        text_format(out, "Move the box of %s by (east north): ", plan_object_under(app)->name);
+        return true;
+    }
     if (!joint_line_find(&app->plan.layout, plan_line_under(app), &line))
         return false;
     level = fabs(line.y2 - line.y1) < fabs(line.x2 - line.x1);
@@ -210,6 +214,10 @@ void plan_move_line(struct app *app)
     struct change_item items[2];
     bool level;
 
+    if (plan_object_under(app) != NULL) {
+        plan_move_box(app, plan_object_under(app));
+        return;
+    }
     if (by.problem != NULL || fabs(by.si) > 1e4 ||
         !joint_line_find(&app->plan.layout, plan_line_under(app), &line)) {
         app_tell(app, "Type a length, such as 0.3 or -0.3 m.");
@@ -305,4 +313,64 @@ bool plan_take_crack(struct app *app)
     snprintf(item.path, sizeof item.path, "crack.%zu", number);
     edit_change(app, &item, 1, "crack taken away");
     return true;
+}
+
+/* ---- boxes ---- */
+
+static const struct layout_box *box_of(const struct app *app, const struct object *object)
+{
+    size_t index = (size_t)(object - app->job.objects);
+
+    for (size_t i = 0; i < app->plan.layout.box_count; i++)
+        if ((size_t)app->plan.layout.boxes[i].object == index)
+            return &app->plan.layout.boxes[i];
+    return NULL;
+}
+
+static void put_box(struct change_item *item, const struct object *object, const char *key,
+                    const char *value)
+{
+    *item = (struct change_item){0};
+    snprintf(item->path, sizeof item->path, "object.%.40s.%s", object->name, key);
+    snprintf(item->value, sizeof item->value, "%s", value);
+}
+
+void plan_keep_box(struct app *app, const struct object *object)
+{
+    const struct layout_box *box = box_of(app, object);
+    struct change_item items[2];
+    char words[WORDS_MOST], at[64];
+    struct text half = {0};
+
+    if (box == NULL) {
+        app_tell(app, "%s has no box of its own.", object->name);
+        return;
+    }
+    plan_point_words(box->x, box->y, at, sizeof at);
+    unit_write(&half, box->half, QUANTITY_LENGTH, UNITS_METRIC);
+    put_box(&items[0], object, "box-at", object->box_at_given ? "" : at);
+    put_box(&items[1], object, "box-half", object->box_at_given ? "" : text_string(&half));
+    snprintf(words, sizeof words,
+             object->box_at_given ? "box of %.40s let go" : "box of %.40s kept", object->name);
+    edit_change(app, items, 2, words);
+    text_free(&half);
+}
+
+void plan_move_box(struct app *app, const struct object *object)
+{
+    const char *typed = app->editor.bytes, *bare = unit_name(QUANTITY_LENGTH, app_units(app));
+    const struct layout_box *box = box_of(app, object);
+    struct change_item item;
+    char words[WORDS_MOST], at[64];
+    double x, y;
+
+    if (box == NULL || !plan_read_coordinate(&typed, bare, &x) ||
+        !plan_read_coordinate(&typed, bare, &y)) {
+        app_tell(app, "Type how far east and north, such as 0.1 -0.1.");
+        return;
+    }
+    plan_point_words(box->x + x, box->y + y, at, sizeof at);
+    put_box(&item, object, "box-at", at);
+    snprintf(words, sizeof words, "box of %.40s moved", object->name);
+    edit_change(app, &item, 1, words);
 }

@@ -1,0 +1,134 @@
+/* What is placed at once: panels that no construction or isolation joint parts, with area, volume
+ * and the turn in which to place them. */
+#include "plan/contact.h"
+#include "plan/plan_steps.h"
+#include <float.h>
+#include <math.h>
+#include <stdlib.h>
+
+/* ---- groups of panels (union-find) ---- */
+
+static size_t root_of(size_t *group, size_t panel)
+{
+    while (group[panel] != panel) {
+        group[panel] = group[group[panel]];
+        panel = group[panel];
+    }
+    return panel;
+}
+
+static void join(size_t *group, size_t a, size_t b)
+{
+    size_t x = root_of(group, a), y = root_of(group, b);
+
+    if (x < y)
+        group[y] = x;
+    else
+        group[x] = y;
+}
+
+/* Two panels face each other across a stretch of the joint. */
+static bool opposite(const struct contact *a, const struct contact *b)
+{
+    return a->side != b->side && fmin(a->to, b->to) - fmax(a->from, b->from) > 1e-3;
+}
+
+/* Panels on both sides of a sawn joint are one pour. */
+static void join_across(const struct layout *layout, const struct contact_list *list, size_t *group)
+{
+    for (size_t j = 0; j < layout->joint_count; j++) {
+        if (layout->joints[j].kind != LAYOUT_CONTRACTION)
+            continue;
+        for (size_t i = list->first[j]; i < list->first[j + 1]; i++)
+            for (size_t k = i + 1; k < list->first[j + 1]; k++)
+                if (opposite(&list->items[i], &list->items[k]))
+                    join(group, list->items[i].panel, list->items[k].panel);
+    }
+}
+
+/* ---- one row a pour ---- */
+
+struct centre {
+    double x, y;
+};
+
+static struct centre centre_of(const struct layout_panel *panel)
+{
+    struct centre centre = {0, 0};
+
+    for (size_t i = 0; i < panel->count; i++) {
+        centre.x += panel->ring[i].x / (double)panel->count;
+        centre.y += panel->ring[i].y / (double)panel->count;
+    }
+    return centre;
+}
+
+static void add_panel(struct plan_pour *pour, const struct layout_panel *panel)
+{
+    struct centre centre = centre_of(panel);
+
+    pour->area_m2 += panel->area;
+    pour->panels++;
+    pour->x += (centre.x - pour->x) / pour->panels;
+    pour->y += (centre.y - pour->y) / pour->panels;
+}
+
+/* Strips side by side are placed every other one first: turn 1, then the ones between; a strip's
+ * place is counted square to the strips. */
+static void set_turns(struct plan *plan)
+{
+    double angle = plan->job.pours_direction * 3.14159265358979323846 / 180;
+
+    for (size_t i = 0; i < plan->pour_count; i++) {
+        struct plan_pour *pour = &plan->pours[i];
+        double at = -pour->x * sin(angle) + pour->y * cos(angle);
+        int below = 0;
+        for (size_t k = 0; k < plan->pour_count; k++) {
+            const struct plan_pour *other = &plan->pours[k];
+            double place = -other->x * sin(angle) + other->y * cos(angle);
+            bool first_of_its_row = true;
+            for (size_t m = 0; m < k; m++) {
+                double same = -plan->pours[m].x * sin(angle) + plan->pours[m].y * cos(angle);
+                first_of_its_row = first_of_its_row && fabs(same - place) > 0.05;
+            }
+            below += first_of_its_row && place < at - 0.05;
+        }
+        pour->turn = 1 + below % 2;
+    }
+}
+
+enum status plan_set_pours(struct plan *plan)
+{
+    enum { POURS_MOST = 500 }; /* more are no plan for placing */
+    const struct layout *layout = &plan->layout;
+    struct contact_list list = {0};
+    size_t *group = calloc(layout->panel_count + 1, sizeof *group);
+    size_t *row = calloc(layout->panel_count + 1, sizeof *row);
+    enum status status = STATUS_NO_MEMORY;
+
+    plan->pours = calloc(POURS_MOST, sizeof *plan->pours);
+    if (group != NULL && row != NULL && plan->pours != NULL)
+        status = contact_list_make(layout, &list);
+    for (size_t p = 0; status == STATUS_OK && p < layout->panel_count; p++)
+        group[p] = p;
+    if (status == STATUS_OK)
+        join_across(layout, &list, group);
+    for (size_t p = 0; status == STATUS_OK && p < layout->panel_count; p++) {
+        size_t root = root_of(group, p);
+        if (root == p) {
+            if (plan->pour_count >= POURS_MOST)
+                break;
+            row[p] = plan->pour_count;
+            plan->pours[plan->pour_count++] = (struct plan_pour){.number = (int)row[p] + 1};
+        }
+        add_panel(&plan->pours[row[root]], &layout->panels[p]);
+    }
+    for (size_t i = 0; i < plan->pour_count; i++)
+        plan->pours[i].volume_m3 = plan->pours[i].area_m2 * plan->job.slab_thickness;
+    if (status == STATUS_OK)
+        set_turns(plan);
+    contact_list_free(&list);
+    free(group);
+    free(row);
+    return status;
+}
