@@ -119,7 +119,7 @@ static void file_line(struct layout_file *f, size_t *used, const char *line)
 }
 
 /* NULL when the file cannot be read; free() it. */
-static struct layout_file *layout_file_read(const char *path)
+static inline struct layout_file *layout_file_read(const char *path)
 {
     FILE *in = fopen(path, "r");
     struct layout_file *f = in ? calloc(1, sizeof *f) : NULL;
