@@ -387,14 +387,92 @@ static void add_cracks(struct text *out, const struct plan *plan)
     add_list(out, plan, "cracks", keys, JOINTS_MOST);
 }
 
-static void add_reasons(struct text *out, const char *name, const struct layout_reason *reasons,
-                        size_t count)
+/* ---- reasons, those of one cause together ---- */
+
+enum { REASONS_MOST = 40, NAMES_MOST = 6 };
+
+static bool same_cause(const struct layout_reason *a, const struct layout_reason *b)
 {
-    for (size_t i = 0; i < count; i++) {
-        char words[400];
-        snprintf(words, sizeof words, "%s %s", reasons[i].cause, reasons[i].remedy);
-        wrap_add(out, name, 8, words, REPORT_COLUMNS);
+    return strcmp(a->cause, b->cause) == 0 && strcmp(a->remedy, b->remedy) == 0;
+}
+
+/* Whether a panel before this one, or this one before reason `index`, has said it already. */
+static bool said_before(const struct layout *layout, size_t panel, size_t index)
+{
+    const struct layout_reason *reason = &layout->panels[panel].reasons[index];
+
+    for (size_t p = 0; p <= panel; p++) {
+        size_t count = p < panel ? layout->panels[p].reason_count : index;
+        for (size_t i = 0; i < count; i++)
+            if (same_cause(&layout->panels[p].reasons[i], reason))
+                return true;
     }
+    return false;
+}
+
+/* "6A, 7A: " of all panels with this cause. */
+static void add_names(struct text *out, const struct layout *layout, size_t from,
+                      const struct layout_reason *reason)
+{
+    size_t count = 0;
+
+    for (size_t p = from; p < layout->panel_count; p++) {
+        char name[2 * LINE_NAME_MOST];
+        bool has = false;
+        for (size_t i = 0; i < layout->panels[p].reason_count; i++)
+            has = has || same_cause(&layout->panels[p].reasons[i], reason);
+        if (!has || ++count > NAMES_MOST)
+            continue;
+        name_panel(layout, &layout->panels[p], name);
+        text_format(out, "%s%s", count > 1 ? ", " : "", name);
+    }
+    if (count > NAMES_MOST)
+        text_format(out, " and %zu more", count - NAMES_MOST);
+}
+
+/* "panel.aspect 6.67, limit 1.5" of every rule that this cause breaks in the panel. */
+static void add_rules(struct text *out, const struct layout_panel *panel,
+                      const struct layout_reason *reason)
+{
+    bool first = true;
+
+    for (size_t i = 0; i < panel->reason_count; i++) {
+        const struct layout_reason *other = &panel->reasons[i];
+        if (!same_cause(other, reason))
+            continue;
+        text_format(out, "%s%s", first ? "" : "; ", other->rule);
+        if (isfinite(other->value) && isfinite(other->limit))
+            text_format(out, " %.3g, limit %.3g", other->value, other->limit);
+        first = false;
+    }
+}
+
+static void add_panel_reasons(struct text *out, const struct layout *layout)
+{
+    size_t printed = 0, left = 0;
+    struct text words = {0};
+
+    for (size_t p = 0; p < layout->panel_count; p++)
+        for (size_t i = 0; i < layout->panels[p].reason_count; i++) {
+            const struct layout_reason *reason = &layout->panels[p].reasons[i];
+            if (printed >= REASONS_MOST) {
+                left++;
+                continue;
+            }
+            if (said_before(layout, p, i))
+                continue;
+            printed++;
+            text_clear(&words);
+            add_names(&words, layout, p, reason);
+            text_add(&words, ": ");
+            add_rules(&words, &layout->panels[p], reason);
+            text_format(&words, ". %s %s", reason->cause, reason->remedy);
+            wrap_add(out, "  !", 4, text_string(&words), REPORT_COLUMNS);
+        }
+    if (left > 0)
+        text_format(out, "  + %zu more (--json)\n", left);
+    out->failed = out->failed || words.failed;
+    text_free(&words);
 }
 
 static void add_layout(struct text *out, const struct plan *plan)
@@ -404,19 +482,21 @@ static void add_layout(struct text *out, const struct plan *plan)
     if (!plan->has_outline)
         return;
     heading(out, "LAYOUT");
-    text_format(out,
-                "  %zu panels (at least %d are needed), %zu pieces of joint, %d broken rule%s\n",
-                layout->panel_count, layout->bound_panels, layout->joint_count, layout->violations,
-                layout->violations == 1 ? "" : "s");
+    text_format(out, "  %zu panels", layout->panel_count);
+    if (layout->bound_panels > 0)
+        text_format(out, " (at least %d are needed)", layout->bound_panels);
+    text_format(out, ", %zu pieces of joint, %d broken rule%s\n", layout->joint_count,
+                layout->violations, layout->violations == 1 ? "" : "s");
     for (size_t i = 0; i < layout->box_count; i++)
         if (layout->boxes[i].words[0] != '\0')
             text_format(out, "  %s\n", layout->boxes[i].words);
-    add_reasons(out, "  slab", layout->reasons, layout->reason_count);
-    for (size_t i = 0; i < layout->panel_count; i++) {
-        char name[2 * LINE_NAME_MOST + 2] = "  ";
-        name_panel(layout, &layout->panels[i], name + 2);
-        add_reasons(out, name, layout->panels[i].reasons, layout->panels[i].reason_count);
+    for (size_t i = 0; i < layout->reason_count; i++) {
+        char words[400];
+        snprintf(words, sizeof words, "the slab: %s %s", layout->reasons[i].cause,
+                 layout->reasons[i].remedy);
+        wrap_add(out, "  !", 4, words, REPORT_COLUMNS);
     }
+    add_panel_reasons(out, layout);
 }
 
 const char *report_caution(size_t index)
