@@ -213,6 +213,18 @@ static bool collect_edges(const struct work *w, struct rect_edge *edges[2], size
     return edges[0] && edges[1];
 }
 
+/* A larger slab may be searched longer: by its panels in 300, four times at most. */
+static double size_factor(const struct work *w)
+{
+    double area = 0;
+    for (size_t i = 0; i < w->out->outline_count; i++) {
+        const struct layout_point a = w->out->outline[i],
+                                  b = w->out->outline[(i + 1) % w->out->outline_count];
+        area += (a.x * b.y - b.x * a.y) / 2;
+    }
+    return fmin(4, fmax(1, fabs(area) / (w->input->max_side_x * w->input->max_side_y) / 300));
+}
+
 static void set_rules(struct work *w)
 {
     const struct layout_input *in = w->input;
@@ -226,7 +238,7 @@ static void set_rules(struct work *w)
     w->slab.rules.raster = in->us_units ? 127 : 80;
     if (in->round_to > 0)
         w->slab.rules.raster = llround(in->round_to * LAYOUT_UNIT);
-    w->slab.allowed = (uint64_t)(1e8 * (in->effort > 0 ? in->effort : 1));
+    w->slab.allowed = (uint64_t)(1e8 * size_factor(w) * (in->effort > 0 ? in->effort : 1));
 }
 
 /* Panels meet a scan line in one piece: at least so many across, at least so much joint (design 5).
@@ -266,6 +278,16 @@ static bool note_zones(struct work *w)
     return layout_reason_add(&w->out->reasons, &w->out->reason_count, note);
 }
 
+static bool note_effort(struct work *w)
+{
+    struct layout_reason note = {.code = "EFFORT_LIMIT", .rule = "note"};
+    snprintf(note.cause, sizeof note.cause,
+             "The search ended at its limit with rules still broken; not all was tried.");
+    snprintf(note.remedy, sizeof note.remedy,
+             "Raise rules.effort, or draw construction joints that part the slab.");
+    return layout_reason_add(&w->out->reasons, &w->out->reason_count, note);
+}
+
 static enum status solve_rectilinear(struct work *w)
 {
     struct rect_edge *edges[2] = {NULL, NULL};
@@ -281,6 +303,8 @@ static enum status solve_rectilinear(struct work *w)
         status = STATUS_REFUSED; /* no area at all */
     if (!status)
         status = layout_emit(w);
+    if (!status && w->broken && w->slab.evaluations > w->slab.allowed / 2 && !note_effort(w))
+        status = STATUS_NO_MEMORY;
     if (!status && w->cut_count && !note_zones(w))
         status = STATUS_NO_MEMORY;
     if (!status)
