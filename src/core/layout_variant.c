@@ -7,6 +7,14 @@
 #include <stdlib.h>
 #include <string.h>
 
+struct kept { /* the best plan so far */
+    struct work_box *boxes;
+    struct rect_box *box_index;
+    struct work_line *lines;
+    struct rect_chord *chords;
+    struct rect_panel *panels;
+    size_t line_count, chord_count, panel_count, cut_count;
+};
 struct variants {
     struct work *w;
     struct rect_edge *const *edges;
@@ -20,7 +28,67 @@ struct variants {
     bool placed_once, same;
     size_t broken;
     double cost;
+    struct kept kept;
 };
+
+static void kept_free(struct kept *k)
+{
+    free(k->boxes);
+    free(k->box_index);
+    free(k->lines);
+    free(k->chords);
+    free(k->panels);
+    *k = (struct kept){0};
+}
+
+static void *copy_of(const void *list, size_t count, size_t size)
+{
+    void *copy = calloc(count + 1, size);
+    if (copy && count)
+        memcpy(copy, list, count * size);
+    return copy;
+}
+
+static bool keep(struct variants *v)
+{
+    const struct work *w = v->w;
+    kept_free(&v->kept);
+    v->kept = (struct kept){.boxes = copy_of(w->boxes, w->box_count, sizeof *w->boxes),
+                            .box_index = copy_of(w->box_index, w->box_count, sizeof *w->box_index),
+                            .lines = copy_of(w->lines, w->line_count, sizeof *w->lines),
+                            .chords = copy_of(w->chords, w->chord_count, sizeof *w->chords),
+                            .panels = copy_of(w->panels, w->panel_count, sizeof *w->panels),
+                            .line_count = w->line_count,
+                            .chord_count = w->chord_count,
+                            .panel_count = w->panel_count,
+                            .cut_count = w->cut_count};
+    return v->kept.boxes && v->kept.box_index && v->kept.lines && v->kept.chords && v->kept.panels;
+}
+
+/* The best plan goes back into the work. */
+static void give_back(struct variants *v)
+{
+    struct work *w = v->w;
+    struct kept *k = &v->kept;
+    free(w->boxes);
+    free(w->box_index);
+    free(w->lines);
+    free(w->chords);
+    free(w->panels);
+    w->boxes = k->boxes;
+    w->box_index = k->box_index;
+    w->lines = k->lines;
+    w->line_count = k->line_count;
+    w->line_room = k->line_count + 1;
+    w->chords = k->chords;
+    w->chord_count = k->chord_count;
+    w->panels = k->panels;
+    w->panel_count = k->panel_count;
+    w->cut_count = k->cut_count;
+    w->broken = v->broken;
+    w->cost = v->cost;
+    *k = (struct kept){0};
+}
 
 static bool same_places(const struct variants *v)
 {
@@ -70,6 +138,8 @@ static enum status compare(struct variants *v, const bool *keep_off, const bool 
         v->broken = v->w->broken;
         v->cost = v->w->cost;
         *gained = true;
+        if (v->w->box_count && !keep(v))
+            return STATUS_NO_MEMORY;
     }
     return status;
 }
@@ -132,9 +202,9 @@ enum status variant_solve(struct work *w, struct rect_edge *const edges[2], cons
     }
     if (!status && n)
         status = try_one_by_one(&v, keep_off, stay, &last);
-    v.placed_once = false;
-    if (!status && !last)
-        status = try_variant(&v, v.keep_off, v.stay);
+    if (!status && !last && v.kept.boxes)
+        give_back(&v);
+    kept_free(&v.kept);
     free(v.origin);
     free(v.placed);
     free(v.keep_off);

@@ -471,12 +471,23 @@ bool zone_go_on(struct work *w)
     return !w->stopped;
 }
 
+/* A zone of so many panels that trying every cut would take too long: the first two do. */
+static bool is_vast(const struct zone *z)
+{
+    const struct rect_family *f = &z->slab.family[0];
+    double area = 0;
+    for (size_t i = 0; i < f->arc_count; i++)
+        area += (double)(f->arcs[i].u1 - f->arcs[i].u0) * (double)(f->arcs[i].v1 - f->arcs[i].v0);
+    return area > 1500 * z->slab.rules.side[0] * z->slab.rules.side[1];
+}
+
 static enum status best_split(struct search *s, const struct zone *z, struct parts *best)
 {
     struct cuts c = {0};
     enum status status = find_cuts(s, z, &c);
     if (c.count)
         rank_cuts(s, z, &c);
+    c.count = is_vast(z) && c.count > 2 ? 2 : c.count;
     for (size_t i = 0; !status && i < c.count && s->used < s->allowed; i++) {
         if (!zone_go_on(s->w))
             break;
