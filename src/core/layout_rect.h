@@ -64,13 +64,14 @@ struct rect_slab {
     struct rect_rules rules;
     uint64_t evaluations, allowed, start_cost; /* start_cost: what the starts took */
     int extra; /* rows assumed beyond the least number while the other family is unknown */
-    bool fine;                                 /* places at every 0.1 m too */
-    struct rect_box *boxes;                    /* sorted by x, then y */
+    bool fine; /* places at every 0.1 m too */
+    struct rect_box *boxes; /* sorted by x, then y */
     size_t box_count;
     const struct rect_ban *bans;
     size_t ban_count;
     double cost; /* of the solved slab: metres and penalties */
     size_t broken;
+    bool solved; /* a plan is there already: a further search starts from it */
 };
 struct rect_chord {
     int axis; /* 0: parallel to y at u = x */

@@ -284,8 +284,11 @@ static enum status starts(struct rect_slab *slab, struct kept *best)
 enum status rect_solve(struct rect_slab *slab, enum rect_depth depth)
 {
     struct kept best = {0};
-    slab->cost = INFINITY;
     enum status status = kept_make(&best, slab) ? STATUS_OK : STATUS_NO_MEMORY;
+    if (!slab->solved)
+        slab->cost = INFINITY;
+    else if (!status && !keep(&best, slab))
+        status = STATUS_NO_MEMORY;
     if (!status)
         status = starts(slab, &best);
     slab->start_cost = slab->evaluations;
@@ -304,8 +307,10 @@ enum status rect_solve(struct rect_slab *slab, enum rect_depth depth)
             status = flips(slab, &best);
         slab->fine = false;
     }
-    if (!status && isfinite(slab->cost))
+    if (!status && isfinite(slab->cost)) {
         give_back(&best, slab);
+        slab->solved = true;
+    }
     kept_free(&best, slab);
     return status;
 }
