@@ -31,6 +31,10 @@ struct shrinkage_slab;
 void plan_shrinkage_slab(const struct plan *plan, struct shrinkage_slab *slab);
 /* Whether the slab's temperatures come from it. */
 bool plan_simulated(const struct plan *plan);
+/* The steady year: extremes and gradients into *out, from the cache while nothing that enters it
+ * changes. */
+enum status plan_simulate(const struct plan *plan, struct plan_cache *cache,
+                          struct plan_cache *out);
 /* Movement of one joint between bars of lengths l1 and l2 (0 = no bar on that side) for a free
  * strain e >= 0: C (l1 + l2)/2 e with the factor; with friction the sum of both end movements, low
  * mu; bars over 15 m move freely. m. */
