@@ -65,7 +65,7 @@ static int print_plan(const struct plan *plan)
     struct text out = {0};
     int code;
 
-    if (plan->quantities.package_count == 0)
+    if (plan->quantities.package_count == 0 && isnan(plan->quantities.strip_m))
         return command_refuse("buy: nothing to order: there is no sealant, or no joint. Type "
                               "--length 300m, or draw the slab.");
     buy_report(&out, plan);

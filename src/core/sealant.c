@@ -2,7 +2,6 @@
 
 #include <math.h>
 
-static const double SHUT_STRAIN = 10; /* of a joint that is shut: more than any class */
 static const double LEAST = 1e-9;
 
 static double share_of(double value, double capacity)
@@ -27,10 +26,24 @@ double sealant_least_mean_width(double open_m, double close_m, double factor)
     return total / fmax(factor, 1e-6) + total;
 }
 
-struct sealant_strain sealant_strains(double open_m, double close_m, double width_m)
+static double strain_of(double movement_m, double width_m)
 {
-    double width = fmax(width_m, LEAST);
-    return (struct sealant_strain){fmax(open_m, 0) / width, fmax(close_m, 0) / width};
+    double movement = fmax(movement_m, 0);
+
+    if (movement <= 0)
+        return 0;
+    return width_m > movement / SEALANT_SHUT ? movement / width_m : SEALANT_SHUT;
+}
+
+struct sealant_strain sealant_strains(enum sealant_basis basis, double open_m, double close_m,
+                                      double width_m)
+{
+    double open = fmax(open_m, 0), close = fmax(close_m, 0), both;
+
+    if (basis == SEALANT_OF_WIDTH)
+        return (struct sealant_strain){strain_of(open, width_m), strain_of(close, width_m)};
+    both = strain_of(open + close, width_m - open - close);
+    return (struct sealant_strain){both, both};
 }
 
 double sealant_demand(struct sealant_strain strain, struct sealant_capacity capacity)
@@ -81,38 +94,35 @@ static double move(const struct sealant_joint *joint, double strain)
 }
 
 /* The reservoir is cut to W at Tc; at slab temperature T its gap is W + move(a (Tc - T)); shrinkage
- * between cut and sealing is neglected. Sealed at T: extension = move(a (T - Tmin) + eps)/gap,
- * compression = move(a (Tmax - T))/gap: strains of the width at sealing (ASTM C920, C1472). */
+ * between cut and sealing is neglected. Sealed at T it opens by move(a (T - Tmin) + eps) and closes
+ * by move(a (Tmax - T)): strains of the gap (ASTM C920, C1472). */
 struct sealant_moment sealant_row_at(const struct sealant_joint *joint, double slab_c)
 {
     double colder = joint->cut_c - slab_c;
     double opened = colder >= 0 ? move(joint, joint->expansion * colder)
                                 : -move(joint, joint->expansion * -colder);
-    struct sealant_moment row = {.slab_c = slab_c, .gap_m = joint->width_m + opened};
-    double open = move(joint, joint->expansion * (slab_c - joint->coldest_c) + joint->shrinkage);
-    double close = move(joint, joint->expansion * (joint->hottest_c - slab_c));
-    row.open_gap = row.gap_m > LEAST;
-    row.gap_m = fmax(row.gap_m, 0);
-    row.extension = row.open_gap ? fmin(open / row.gap_m, SHUT_STRAIN) : SHUT_STRAIN;
-    row.compression = row.open_gap ? fmin(close / row.gap_m, SHUT_STRAIN) : SHUT_STRAIN;
+    struct sealant_moment row = {.slab_c = slab_c, .gap_m = fmax(joint->width_m + opened, 0)};
+    struct sealant_strain strain;
+
+    row.open_m = move(joint, joint->expansion * (slab_c - joint->coldest_c) + joint->shrinkage);
+    row.close_m = move(joint, joint->expansion * (joint->hottest_c - slab_c));
+    strain = sealant_strains(joint->basis, row.open_m, row.close_m, row.gap_m);
+    row.extension = strain.extension;
+    row.compression = strain.compression;
+    strain = sealant_strains(joint->basis, row.open_m, row.close_m, row.gap_m - joint->tolerance_m);
+    row.demand = sealant_demand(strain, joint->capacity);
+    if (row.gap_m - joint->tolerance_m <= LEAST) /* shut: nothing can be put in */
+        row.demand = fmax(row.demand, SEALANT_SHUT);
     return row;
 }
 
-static bool extension_holds(const struct sealant_joint *joint, double slab_c)
+static bool holds(const struct sealant_joint *joint, double slab_c)
 {
-    struct sealant_moment row = sealant_row_at(joint, slab_c);
-    return row.extension <= joint->capacity.extension * (1 + 1e-9);
+    return sealant_row_at(joint, slab_c).demand <= 1 + 1e-9;
 }
 
-static bool compression_holds(const struct sealant_joint *joint, double slab_c)
-{
-    struct sealant_moment row = sealant_row_at(joint, slab_c);
-    return row.compression <= joint->capacity.compression * (1 + 1e-9);
-}
-
-/* The place between a temperature where it holds and one where it does not. */
-static double edge_of(const struct sealant_joint *joint,
-                      bool (*holds)(const struct sealant_joint *, double), double good, double bad)
+/* The last temperature, from `good` on towards `bad`, at which it holds. */
+static double edge_of(const struct sealant_joint *joint, double good, double bad)
 {
     for (int i = 0; i < 60 && fabs(bad - good) > 1e-7; i++) {
         double middle = (good + bad) / 2;
@@ -124,37 +134,31 @@ static double edge_of(const struct sealant_joint *joint,
     return good;
 }
 
-/* Extension grows and compression falls with the temperature of sealing (while the gap is open at
- * the hottest), so each has one edge. */
 bool sealant_window(const struct sealant_joint *joint, double *coldest_c, double *hottest_c)
 {
-    double low = joint->coldest_c, high = joint->hottest_c;
-    if (!(low <= high) || !extension_holds(joint, low) || !compression_holds(joint, high))
-        return false;
-    double top = extension_holds(joint, high) ? high : edge_of(joint, extension_holds, low, high);
-    double bottom =
-        compression_holds(joint, low) ? low : edge_of(joint, compression_holds, high, low);
-    if (bottom > top)
-        return false;
-    *coldest_c = bottom;
-    *hottest_c = top;
-    return true;
-}
+    double low = joint->coldest_c, step = (joint->hottest_c - low) / SEALANT_STEPS;
+    int longest = 0, run = 0, first = 0;
 
-int sealant_choose_width(const double *widths_m, size_t count, double least_m, double most_m,
-                         double open_m, double close_m, struct sealant_capacity capacity,
-                         double tolerance_m)
-{
-    int best = -1;
-    for (size_t i = 0; i < count; i++) {
-        double width = widths_m[i] - fmax(tolerance_m, 0);
-        if (width <= 0 || widths_m[i] < least_m * (1 - 1e-9) || widths_m[i] > most_m * (1 + 1e-9))
-            continue;
-        double demand = sealant_demand(sealant_strains(open_m, close_m, width), capacity);
-        if (demand <= SEALANT_TIGHT * (1 + 1e-9) && (best < 0 || widths_m[i] < widths_m[best]))
-            best = (int)i;
+    if (!(step >= 0))
+        return false;
+    for (int k = 0; k <= SEALANT_STEPS; k++) {
+        run = holds(joint, low + k * step) ? run + 1 : 0;
+        if (run > longest) {
+            longest = run;
+            first = k - run + 1;
+        }
     }
-    return best;
+    if (longest == 0)
+        return false;
+    *coldest_c = low + first * step;
+    *hottest_c = low + (first + longest - 1) * step;
+    if (first > 0)
+        *coldest_c = edge_of(joint, *coldest_c, *coldest_c - step);
+    if (first + longest <= SEALANT_STEPS)
+        *hottest_c = edge_of(joint, *hottest_c, *hottest_c + step);
+    else
+        *hottest_c = joint->hottest_c;
+    return true;
 }
 
 /* ---- compression seals ---- */
@@ -191,6 +195,24 @@ struct sealant_seal_ends sealant_seal_check(const struct sealant_seal *seal, dou
                                      .hot = (own - slot_m + close_m) / own};
     ends.holds = ends.cold >= seal->least - 1e-9 && ends.hot <= seal->most + 1e-9;
     return ends;
+}
+
+struct sealant_follow sealant_seal_follow(const struct sealant_seal *seal, double slot_m,
+                                          double tolerance_m)
+{
+    double tolerance = fmax(tolerance_m, 0);
+
+    return (struct sealant_follow){
+        .open_m = (1 - seal->least) * seal->seal_m - slot_m - tolerance,
+        .close_m = slot_m - tolerance - (1 - seal->most) * seal->seal_m,
+    };
+}
+
+double sealant_seal_demand(struct sealant_follow follow, double open_m, double close_m)
+{
+    if (follow.open_m < 0 || follow.close_m < 0)
+        return SEALANT_SHUT;
+    return fmax(strain_of(open_m, follow.open_m), strain_of(close_m, follow.close_m));
 }
 
 bool sealant_seal_slots(const struct sealant_seal *seal, double open_m, double close_m,

@@ -1,5 +1,5 @@
 /* A sealed joint: least width, strains, bead shape, gap against slab temperature, sealing window,
- * compression seals, choice of a blade. m, degC, ratios of the width at sealing. */
+ * compression seals. m, degC, ratios of the width at sealing. */
 #ifndef SLABGAP_CORE_SEALANT_H
 #define SLABGAP_CORE_SEALANT_H
 
@@ -12,16 +12,21 @@ struct sealant_capacity {
 struct sealant_strain {
     double extension, compression; /* >= 0 */
 };
-#define SEALANT_TIGHT 0.9 /* above this share of the capacity a joint only just holds */
 
 /* max(open/S_ext, close/S_comp) + tolerance. */
 double sealant_least_width(double open_m, double close_m, struct sealant_capacity capacity,
                            double tolerance_m);
 /* Basis of the mean width (movement accommodation factor, BS 6093 from memory). */
 double sealant_least_mean_width(double open_m, double close_m, double factor);
-/* Strains of a joint this wide at sealing. */
-struct sealant_strain sealant_strains(double open_m, double close_m, double width_m);
-/* The worse of both as a share of the capacity: <= 0.9 holds, <= 1 just holds. */
+/* What the strains are ratios of: the width at sealing (ASTM C920, C719), or, for a sealant given
+ * by a movement accommodation factor, the whole movement on the width less the movement (BS 6093,
+ * from memory). */
+enum sealant_basis { SEALANT_OF_WIDTH, SEALANT_OF_REST };
+/* Strains of a joint this wide at sealing, at most SEALANT_SHUT: a joint of no width. */
+#define SEALANT_SHUT 10.0
+struct sealant_strain sealant_strains(enum sealant_basis basis, double open_m, double close_m,
+                                      double width_m);
+/* The worse of both as a share of the capacity. */
 double sealant_demand(struct sealant_strain strain, struct sealant_capacity capacity);
 
 /* Edge strain of the bead's face (Tons 1959): width at rest, depth, width opened to. Information.
@@ -39,6 +44,8 @@ double sealant_depth(double width_m, double ratio, double least_m, double most_m
 /* A joint at its place, for the sealing table and the window. `move` gives the movement of the
  * joint for a free strain >= 0; NULL: length_m x strain. */
 struct sealant_joint {
+    enum sealant_basis basis;
+    double tolerance_m;    /* demand is at the gap less this, strains at the gap itself */
     double width_m, cut_c; /* cut to this width at this slab temperature */
     double coldest_c, hottest_c;
     double expansion; /* 1/K */
@@ -49,19 +56,16 @@ struct sealant_joint {
     struct sealant_capacity capacity;
 };
 struct sealant_moment {
-    double slab_c, gap_m, extension, compression;
-    bool open_gap; /* false: the joint is shut, both strains are 10 */
+    double slab_c, gap_m, open_m, close_m; /* to the coldest, to the hottest */
+    double extension, compression;
+    double demand; /* worse share of the capacity, tolerance in; above 1 it fails */
 };
 struct sealant_moment sealant_row_at(const struct sealant_joint *joint, double slab_c);
-/* Slab temperatures between coldest and hottest at which the joint may be sealed (both strains
- * within capacity, within 1e-6 K). False: none. */
+/* Slab temperatures between coldest and hottest at which the joint may be sealed (demand at most 1,
+ * within 1e-6 K): the longest unbroken stretch. False: none as long as a step, (hottest - coldest)
+ * / SEALANT_STEPS. */
+enum { SEALANT_STEPS = 128 };
 bool sealant_window(const struct sealant_joint *joint, double *coldest_c, double *hottest_c);
-
-/* Narrowest stock width that holds (demand <= 0.9 at width less tolerance) within least..most; -1
- * when none does. Widths in any order. */
-int sealant_choose_width(const double *widths_m, size_t count, double least_m, double most_m,
-                         double open_m, double close_m, struct sealant_capacity capacity,
-                         double tolerance_m);
 
 /* Preformed compression seal (ASTM D2628; FHWA). Compressions are ratios of the seal's own width.
  */
@@ -82,6 +86,15 @@ struct sealant_seal_ends {
 };
 struct sealant_seal_ends sealant_seal_check(const struct sealant_seal *seal, double slot_m,
                                             double open_m, double close_m);
+/* How far the seal can follow from a slot that may be wider or narrower by the tolerance, m; below
+ * 0: it is out of its range before anything moves. */
+struct sealant_follow {
+    double open_m, close_m;
+};
+struct sealant_follow sealant_seal_follow(const struct sealant_seal *seal, double slot_m,
+                                          double tolerance_m);
+/* Worse share of what it can follow; above 1 it fails, SEALANT_SHUT when it can follow nothing. */
+double sealant_seal_demand(struct sealant_follow follow, double open_m, double close_m);
 /* Slots that hold; false when there are none. */
 bool sealant_seal_slots(const struct sealant_seal *seal, double open_m, double close_m,
                         double *least_m, double *most_m);

@@ -187,6 +187,24 @@ static void answer_cut(const struct plan *plan, char *sentence, size_t size, cha
              SMALL(plan->cut.set_m));
 }
 
+/* The cut width holds in the window; the specification wants the slab no colder than its own limit.
+ */
+static void window_sentence(const struct plan *plan, char *out, size_t size)
+{
+    double least = plan->job.sealing_least_temperature, from = plan->seal.window_coldest_c;
+    double to = plan->seal.window_hottest_c;
+    bool cold = isfinite(least) && least > from;
+
+    if (isnan(from))
+        snprintf(out, size, "As cut there is no slab temperature at which it may be sealed.");
+    else if (cold && least > to)
+        snprintf(out, size, "As cut it holds only when sealed below %s; %s is the least allowed.",
+                 TEMP(to), TEMP(least));
+    else
+        snprintf(out, size, "As cut it may be sealed with the slab from %s%s to %s.",
+                 TEMP(cold ? least : from), cold ? " (the least allowed)" : "", TEMP(to));
+}
+
 static void answer_seal(const struct plan *plan, char *sentence, size_t size, char *more,
                         size_t more_size)
 {
@@ -214,9 +232,7 @@ static void answer_seal(const struct plan *plan, char *sentence, size_t size, ch
     snprintf(sentence, size, "at slab %s: %s wide, %s deep, %s rod, top %s low.",
              TEMP(plan->temperature.sealing_c), SMALL(plan->seal.width_m),
              SMALL(plan->seal.depth_m), SMALL(plan->seal.rod_m), SMALL(plan->seal.recess_m));
-    if (isfinite(plan->seal.window_coldest_c))
-        snprintf(more, more_size, "As cut it may be sealed with the slab from %s to %s.",
-                 TEMP(plan->seal.window_coldest_c), TEMP(plan->seal.window_hottest_c));
+    window_sentence(plan, more, more_size);
 }
 
 /* What would make a failing seal hold: wider, or a better sealant. */
@@ -260,10 +276,31 @@ static bool working_fails(const struct plan *plan, char *word, size_t word_size,
         if (row->n != typed || row->verdict != VERDICT_FAILS)
             continue;
         snprintf(word, word_size, "FAILS");
+        if (!plan->seal.sealed) {
+            snprintf(sentence, size, "with 1 cut in %d working it opens %s, closes %s: too far.",
+                     typed, SMALL(row->open_m), SMALL(row->close_m));
+            return true;
+        }
         snprintf(sentence, size,
                  "with 1 cut in %d working: stretches %s, squeezed %s; good for %s.", typed,
                  PERCENT(row->extension), PERCENT(row->compression),
                  whole_percent(plan->seal.extension_capacity).words);
+        return true;
+    }
+    return false;
+}
+
+/* The cold of the bond test, not the movement, decides. */
+static bool bond_fails(const struct plan *plan, char *sentence, size_t size)
+{
+    for (size_t i = 0; i < plan->check_count; i++) {
+        const struct plan_check *check = &plan->checks[i];
+        if (strcmp(check->id, "seal.bond-test") != 0 || check->verdict != VERDICT_FAILS)
+            continue;
+        snprintf(sentence, size,
+                 "the slab gets to %s, this type is tested to %s: take a colder "
+                 "type.",
+                 TEMP(check->capacity), TEMP(check->demand));
         return true;
     }
     return false;
@@ -284,9 +321,14 @@ static void answer_holds(const struct plan *plan, char *word, size_t word_size, 
         board_sentence(plan, worst, sentence, size);
         return;
     }
+    if (working_fails(plan, word, word_size, sentence, size))
+        return;
     if (isfinite(plan->seal.cold_squeeze)) {
         snprintf(word, word_size, "%s", verdict_screen_word(plan->seal.verdict));
-        snprintf(sentence, size, "squeezed %s in winter, %s in summer; it works from %s to %s.",
+        snprintf(sentence, size, "opens %s, the seal follows %s; closes %s, it follows %s.",
+                 SMALL(plan->movement.open_m), SMALL(fmax(plan->seal.follow_open_m, 0)),
+                 SMALL(plan->movement.close_m), SMALL(fmax(plan->seal.follow_close_m, 0)));
+        snprintf(more, more_size, "Squeezed %s in winter, %s in summer; it works from %s to %s.",
                  PERCENT(plan->seal.cold_squeeze), PERCENT(plan->seal.compression),
                  whole_percent(plan->job.sealant_seal_least).words,
                  whole_percent(plan->job.sealant_seal_most).words);
@@ -300,9 +342,9 @@ static void answer_holds(const struct plan *plan, char *word, size_t word_size, 
                      : "no sealant to judge.");
         return;
     }
-    if (working_fails(plan, word, word_size, sentence, size))
-        return;
     snprintf(word, word_size, "%s", verdict_screen_word(plan->seal.verdict));
+    if (bond_fails(plan, sentence, size))
+        return;
     if (plan->seal.verdict == VERDICT_FAILS)
         seal_remedy(plan, remedy, sizeof remedy);
     snprintf(sentence, size, "stretches %s, is squeezed %s; the sealant is good for %s.%s",
@@ -370,8 +412,9 @@ static void answer_but(const struct plan *plan, char *sentence, size_t size, cha
     else
         snprintf(sentence, size, "if only 1 cut in %d cracks through: %s, %s. Measure each.",
                  breaks->n, whole_percent(round(100 * breaking.ratio) / 100).words, breaking.words);
-    snprintf(more, more_size, "That joint opens by %s and closes by %s.", SMALL(breaks->open_m),
-             SMALL(breaks->close_m));
+    snprintf(more, more_size, "That joint opens by %s and closes by %s%s.", SMALL(breaks->open_m),
+             SMALL(breaks->close_m),
+             plan->job.sealing_working > 1 ? "" : "; a warning, it decides nothing");
 }
 
 /* The inputs whose likely error changes the answer most, skipping those the user typed: as many as
@@ -411,7 +454,10 @@ static void purchase(const struct plan *plan, char *out, size_t size)
                                      package->count,
                                      show(plan, package->size_m3, QUANTITY_VOLUME).words);
     }
-    if (used == 0 && !plan->has_outline)
+    if (isfinite(plan->quantities.strip_m))
+        snprintf(out, size, "%s of %s seal, and its lubricant.", LENGTH(plan->quantities.strip_m),
+                 SMALL(plan->seal.rod_m));
+    else if (used == 0 && !plan->has_outline)
         snprintf(out, size, "draw the slab or type the metres.");
     else if (used == 0)
         snprintf(out, size, "no sealant; sawing %s.", LENGTH(plan->quantities.saw_m));

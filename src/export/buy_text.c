@@ -79,16 +79,45 @@ static void add_packages(struct text *out, const struct plan *plan)
     }
 }
 
+/* What goes over the soft board is no part of the order above: it may be another colour or kind. */
+static void add_boards(struct text *out, const struct plan *plan)
+{
+    if (isnan(plan->quantities.board_order_m3))
+        return;
+    text_add_char(out, '\n', 1);
+    line(out, plan, "over soft board, besides", plan->quantities.board_m, QUANTITY_LENGTH,
+         "walls, objects, expansion joints");
+    line(out, plan, "to order for it, waste in", plan->quantities.board_order_m3, QUANTITY_VOLUME,
+         "not in the packs above");
+}
+
+static void add_strip(struct text *out, const struct plan *plan)
+{
+    line(out, plan, "slot", plan->seal.width_m, QUANTITY_SMALL_LENGTH,
+         plan->seal.chosen ? "chosen" : "typed");
+    line(out, plan, "seal, its own width", plan->seal.rod_m, QUANTITY_SMALL_LENGTH, "");
+    line(out, plan, "joint to seal", plan->quantities.sealed_m, QUANTITY_LENGTH,
+         plan->quantities.length_typed ? "typed" : "from the plan");
+    line(out, plan, "seal to order", plan->quantities.strip_m, QUANTITY_LENGTH,
+         "5 % more than the joint");
+    text_add_char(out, '\n', 1);
+    wrap_add(out, "NOT IN", 8,
+             "it: the lubricant-adhesive of the seal's maker, board. The maker's data sheet wins.",
+             78);
+}
+
 void buy_report(struct text *out, const struct plan *plan)
 {
     text_format(out, "BUY     %s\n\n", sealant_table[plan->job.sealant_kind].words);
+    if (isfinite(plan->quantities.strip_m)) {
+        add_strip(out, plan);
+        return;
+    }
     add_amounts(out, plan);
     text_add_char(out, '\n', 1);
     add_packages(out, plan);
+    add_boards(out, plan);
     text_add_char(out, '\n', 1);
-    wrap_add(
-        out, "NOT IN", 8,
-        "it: primer, board, and sealant over board at walls, objects and expansion joints. The "
-        "maker's data sheet wins.",
-        78);
+    wrap_add(out, "NOT IN", 8, "it: primer, and the board itself. The maker's data sheet wins.",
+             78);
 }

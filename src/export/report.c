@@ -86,7 +86,7 @@ static void add_fields(struct text *out, const struct plan *plan, const char *ti
 
 static void add_job(struct text *out, const struct plan *plan)
 {
-    add_fields(out, plan, "TYPED OVER A RULE", plan->overrides, plan->override_count);
+    add_fields(out, plan, "TYPED BY YOU, NOT WORKED OUT", plan->overrides, plan->override_count);
     add_fields(out, plan, "ASSUMED (nothing was typed)", plan->assumed, plan->assumed_count);
 }
 
@@ -273,10 +273,13 @@ static void add_isolation(struct text *out, const struct plan *plan)
 /* "stretch of the sealant: 13.8 %, limit 25 %. ASTM C920 ..." and, where it fails, what to do. */
 static void check_words(struct text *out, const struct plan *plan, const struct plan_check *check)
 {
-    text_format(out, "%s: ", check->label);
-    check_show(out, check->demand, check->unit, units_of(plan));
+    text_add(out, check->label);
+    if (isfinite(check->demand)) {
+        text_add(out, ": ");
+        check_show(out, check->demand, check->unit, units_of(plan));
+    }
     if (isfinite(check->capacity)) {
-        text_add(out, check->at_most ? ", at most " : ", at least ");
+        text_add(out, ", at most ");
         check_show(out, check->capacity, check->unit, units_of(plan));
     }
     text_format(out, " (%s).", check->source);
@@ -344,9 +347,8 @@ static void add_quantities(struct text *out, const struct plan *plan)
     if (plan->quantities.rod_count > 0)
         add_list(out, plan, "quantities.rod_m", rods, PACKAGE_KINDS);
     if (plan->quantities.isolation_m + plan->quantities.expansion_m > 0)
-        text_add(out,
-                 "  Sealant counts cut joints and pour ends; what goes over the soft board is\n"
-                 "  not in it.\n");
+        text_add(out, "  The order and its packs are for cut joints and pour ends; what goes over\n"
+                      "  the soft board comes on top.\n");
     add_results(out, plan, "steel");
     add_restraint(out, plan);
 }

@@ -152,17 +152,19 @@ static void note_unused(struct job *job, struct finding_list *findings)
 static void settle_climate(struct job *job, struct finding_list *findings)
 {
     bool both = job->given[FIELD_climate_slab_coldest] && job->given[FIELD_climate_slab_hottest];
+    bool at_set = job->pour_date.year != 0 && isnan(job->pour_zero_stress_temperature);
+    const char *words = at_set ? "used for the slab at set only; the typed slab temperatures win "
+                                 "over the air."
+                               : "not used; the typed slab temperatures win over the air.";
 
     check_order(job, findings, FIELD_climate_slab_coldest, job->climate_slab_coldest,
                 job->climate_slab_hottest);
     check_order(job, findings, FIELD_climate_air_coldest, job->climate_air_coldest,
                 job->climate_air_hottest);
     if (both && job->given[FIELD_climate_air_coldest])
-        say(job, findings, SEVERITY_NOTE, FIELD_climate_air_coldest,
-            "not used; the typed slab temperatures win over the air.");
+        say(job, findings, SEVERITY_NOTE, FIELD_climate_air_coldest, words);
     if (both && job->given[FIELD_climate_air_hottest])
-        say(job, findings, SEVERITY_NOTE, FIELD_climate_air_hottest,
-            "not used; the typed slab temperatures win over the air.");
+        say(job, findings, SEVERITY_NOTE, FIELD_climate_air_hottest, words);
 }
 
 /* ---- sealing ---- */

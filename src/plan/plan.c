@@ -39,7 +39,7 @@ static void clear_results(struct plan *plan)
     plan->seal.recess_m = plan->seal.tolerance_m = NAN;
     plan->seal.extension = plan->seal.compression = plan->seal.bead_strain = NAN;
     plan->seal.extension_capacity = plan->seal.compression_capacity = NAN;
-    plan->seal.cold_squeeze = NAN;
+    plan->seal.cold_squeeze = plan->seal.follow_open_m = plan->seal.follow_close_m = NAN;
     plan->seal.rod_m = plan->seal.bulge_m = plan->seal.cut_depth_m = NAN;
     plan->seal.next_down_m = plan->seal.next_down_extension = NAN;
     plan->seal.next_down_compression = plan->seal.next_up_compression = NAN;
@@ -54,6 +54,7 @@ static void clear_results(struct plan *plan)
     plan->restraint.rise_left_k = NAN;
     plan->quantities.sealant_net_m3 = plan->quantities.sealant_cusps_m3 = NAN;
     plan->quantities.sealant_order_m3 = plan->quantities.filler_m2 = NAN;
+    plan->quantities.board_order_m3 = plan->quantities.strip_m = NAN;
     plan->quantities.area_m2 = plan->quantities.volume_m3 = NAN;
     plan->governing_joint = SIZE_MAX;
 }

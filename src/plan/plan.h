@@ -38,8 +38,8 @@ struct plan_check {
     char id[48];
     char label[96]; /* for people */
     double demand, capacity;
-    const char *unit;      /* "ratio", "m", "count" ... */
-    bool binding, at_most; /* at_most: demand <= capacity is good; else demand >= capacity */
+    const char *unit; /* "ratio", "m", "count" ... */
+    bool binding;
     enum verdict verdict;
     char source[128];
     char remedy[160];
@@ -127,8 +127,9 @@ struct plan {
     struct {
         double width_m, least_width_m, tolerance_m, depth_m, recess_m, extension, compression;
         double extension_capacity, compression_capacity, bead_strain, rod_m, bulge_m;
-        double cold_squeeze; /* compression seal: squeeze left at the coldest */
-        double cut_depth_m;  /* depth of the wide cut: recess + depth + rod */
+        double cold_squeeze;                  /* compression seal: squeeze left at the coldest */
+        double follow_open_m, follow_close_m; /* compression seal: how far it can follow */
+        double cut_depth_m;                   /* depth of the wide cut: recess + depth + rod */
         double next_down_m, next_down_extension, next_down_compression, next_up_m,
             next_up_extension, next_up_compression;
         double holds_when_n3_m; /* narrowest blade that takes n = 3, NAN none */
@@ -157,7 +158,9 @@ struct plan {
         size_t rod_count;
         bool length_typed;
         double filler_m2, area_m2, volume_m3;
-        int boxes; /* of takeoff.box packs, for the first package */
+        int boxes;                      /* of takeoff.box packs, for the first package */
+        double board_m, board_order_m3; /* sealant over soft board: its length, waste in; extra */
+        double strip_m;                 /* compression seal to order, spare in */
     } quantities;
     struct {
         double dowel_diameter_m, dowel_length_m, dowel_spacing_m;

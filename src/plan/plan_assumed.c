@@ -11,6 +11,12 @@ static bool from_air(const struct job *job)
     return isnan(job->climate_slab_coldest) || isnan(job->climate_slab_hottest);
 }
 
+/* The slab's temperatures or, on a known day, the slab at set lean on the air. */
+static bool uses_air(const struct job *job)
+{
+    return from_air(job) || (job->pour_date.year != 0 && isnan(job->pour_zero_stress_temperature));
+}
+
 static bool simulated(const struct job *job)
 {
     return from_air(job) && job->climate_exposure != EXPOSURE_INDOOR;
@@ -39,6 +45,11 @@ static bool dries_by_aci(const struct job *job)
 static bool has_class(const struct job *job)
 {
     return job->sealant_kind <= SEALANT_HOT_POUR;
+}
+
+static bool moves_with_a_seal(const struct job *job)
+{
+    return has_class(job) || job->sealant_kind == SEALANT_COMPRESSION_SEAL;
 }
 
 static bool has_sealant(const struct job *job)
@@ -130,8 +141,8 @@ static const struct {
     {FIELD_concrete_cement_content, dries_by_aci},
     {FIELD_concrete_fines, dries_by_aci},
     {FIELD_concrete_air, dries_by_aci},
-    {FIELD_climate_air_coldest, from_air},
-    {FIELD_climate_air_hottest, from_air},
+    {FIELD_climate_air_coldest, uses_air},
+    {FIELD_climate_air_hottest, uses_air},
     {FIELD_climate_exposure, from_air},
     {FIELD_climate_swing_hot, simulated},
     {FIELD_climate_wind, simulated},
@@ -139,8 +150,8 @@ static const struct {
     {FIELD_pour_placing_temperature, without_zero_stress},
     {FIELD_sealing_cut_temperature, never},
     {FIELD_sealing_factor, by_factor},
-    {FIELD_sealing_working, has_class},
-    {FIELD_sealing_tolerance, has_class},
+    {FIELD_sealing_working, moves_with_a_seal},
+    {FIELD_sealing_tolerance, moves_with_a_seal},
     {FIELD_sealing_basis, has_class},
     {FIELD_sealing_least_temperature, has_sealant},
     {FIELD_sealant_extension, never}, /* by the class, which is named */

@@ -19,7 +19,7 @@ add(struct plan *plan, const char *id, const char *label, ...)
                        sizeof *plan->checks))
         return NULL;
     check = &plan->checks[plan->check_count++];
-    *check = (struct plan_check){.unit = "", .at_most = true, .verdict = VERDICT_NONE};
+    *check = (struct plan_check){.unit = "", .verdict = VERDICT_NONE};
     snprintf(check->id, sizeof check->id, "%s", id);
     va_start(arguments, label);
     vsnprintf(check->label, sizeof check->label, label, arguments);
@@ -33,6 +33,15 @@ static void set_sides(struct plan_check *check, double demand, double capacity, 
     check->capacity = capacity;
     check->unit = unit;
     check->verdict = verdict_of(demand, capacity);
+}
+
+/* Temperatures: no share of them makes sense, so it holds or it does not. */
+static void set_degrees(struct plan_check *check, double least_c, double slab_c)
+{
+    check->demand = least_c;
+    check->capacity = slab_c;
+    check->unit = "degC";
+    check->verdict = least_c <= slab_c + 1e-9 ? VERDICT_HOLDS : VERDICT_FAILS;
 }
 
 static void set_words(struct plan_check *check, const char *source, const char *remedy)
@@ -115,13 +124,14 @@ static bool add_share(struct plan *plan, const char *id, const char *label, doub
 
 static bool add_width_check(struct plan *plan)
 {
+    double since_cut = plan_width_at_sealing(plan, plan->seal.width_m) - plan->seal.width_m;
     struct plan_check *check =
-        add(plan, "seal.width", "least width, tolerance in, against the width");
+        add(plan, "seal.width", "least width, tolerance in, against the width at sealing");
 
     if (check == NULL)
         return false;
     check->binding = true;
-    set_sides(check, plan->seal.least_width_m, plan->seal.width_m, "m");
+    set_sides(check, plan->seal.least_width_m + since_cut, plan->seal.width_m + since_cut, "m");
     set_words(check, "movement over the movement class (ASTM C1472 form)",
               "Cut wider or take a sealant of a higher class.");
     return true;
@@ -132,7 +142,7 @@ static bool add_strain_checks(struct plan *plan)
 {
     double least = plan->job.sealing_tolerance, extension = 0, compression = 0;
     double width = plan_width_at_sealing(plan, plan->seal.width_m) - least;
-    struct plan_strains strains =
+    struct sealant_strain strains =
         plan_strains(plan, plan->movement.open_m, plan->movement.close_m, width);
 
     extension = strains.extension;
@@ -150,14 +160,9 @@ static bool add_strain_checks(struct plan *plan)
                      compression, plan->seal.compression_capacity, true);
 }
 
-static bool add_bead_checks(struct plan *plan)
+static bool add_bead_check(struct plan *plan)
 {
-    static const struct {
-        const char *type;
-        double c;
-    } bond[] = {{"", NAN}, {"I", -18}, {"II", -29}, {"III", -29}, {"IV", -29}};
     struct plan_check *check = add(plan, "seal.bead", "stretch at the curved edge of the bead");
-    int type = plan->job.sealant_type;
 
     if (check == NULL)
         return false;
@@ -165,65 +170,84 @@ static bool add_bead_checks(struct plan *plan)
     check->capacity = NAN;
     check->unit = "ratio";
     set_words(check, "Tons 1959: it ranks bead shapes and decides nothing", "");
-    check = add(plan, "seal.cold", "slab at sealing against the coldest to seal");
+    return true;
+}
+
+static bool add_cold_checks(struct plan *plan)
+{
+    struct plan_check *check =
+        add(plan, "seal.cold", "coldest slab the specification seals, against the slab then");
+    double tested_c;
+
     if (check == NULL)
         return false;
-    check->at_most = false;
-    check->demand = plan->temperature.sealing_c;
-    check->capacity = plan->job.sealing_least_temperature;
-    check->unit = "degC";
-    check->verdict = check->demand >= check->capacity - 1e-9 ? VERDICT_HOLDS : VERDICT_FAILS;
+    set_degrees(check, plan->job.sealing_least_temperature, plan->temperature.sealing_c);
     set_words(check, "your specification; usual values from memory", "Wait for a warmer slab.");
-    if (type == 0 || plan->job.sealant_kind != SEALANT_HOT_POUR)
+    if (!plan_bond_test(plan, &tested_c))
         return true;
-    check = add(plan, "seal.bond-test", "coldest slab against the bond test of type %s",
-                bond[type].type);
+    check = add(plan, "seal.bond-test", "bond test of the sealant, against the coldest slab");
     if (check == NULL)
         return false;
-    check->at_most = false;
-    check->demand = plan->temperature.coldest_c;
-    check->capacity = bond[type].c;
-    check->unit = "degC";
-    check->verdict = check->demand >= check->capacity - 1e-9 ? VERDICT_HOLDS : VERDICT_FAILS;
+    check->binding = true;
+    set_degrees(check, tested_c, plan->temperature.coldest_c);
     set_words(check, "ASTM D6690: -18 degC for type I, -29 degC for II to IV",
               "Take a type tested colder.");
     return true;
 }
 
+static bool add_follow_check(struct plan *plan, const char *id, const char *label, double moves_m,
+                             double follow_m)
+{
+    struct plan_check *check = add(plan, id, "%s", label);
+
+    if (check == NULL)
+        return false;
+    check->binding = true;
+    set_sides(check, moves_m, fmax(follow_m, 0), "m");
+    set_words(check, "ASTM D2628 seals; working squeeze 20 to 50 % from memory",
+              "Take a wider seal, or another slot.");
+    return true;
+}
+
+static bool add_compression_checks(struct plan *plan)
+{
+    struct plan_worst worst = plan_worst_movement(plan);
+
+    return add_follow_check(plan, "seal.extension",
+                            "joint opens, against what the seal can follow; slab at its coldest",
+                            worst.open, plan->seal.follow_open_m) &&
+           add_follow_check(plan, "seal.compression",
+                            "joint closes, against what the seal can follow; slab at its hottest",
+                            worst.close, plan->seal.follow_close_m);
+}
+
+static bool add_floor_filler_check(struct plan *plan)
+{
+    struct plan_check *check =
+        add(plan, "floor-filler", "the filler parts by this share of its width");
+
+    if (check == NULL)
+        return false;
+    check->demand = plan->seal.extension;
+    check->capacity = NAN;
+    check->unit = "ratio";
+    set_words(check, "a semi-rigid filler has no movement class: common practice",
+              "Fill as late as can be (90 days), refill later.");
+    return true;
+}
+
 static bool add_seal_checks(struct plan *plan)
 {
-    struct plan_check *check;
-
     if (isnan(plan->seal.width_m))
         return true;
-    if (plan->job.sealant_kind == SEALANT_COMPRESSION_SEAL) {
-        check = add(plan, "seal.extension", "squeeze left in the seal, slab at its coldest");
-        if (check == NULL)
-            return false;
-        check->binding = true;
-        check->at_most = false;
-        check->demand = plan->seal.cold_squeeze;
-        check->capacity = plan->job.sealant_seal_least;
-        check->unit = "ratio";
-        check->verdict = check->demand >= check->capacity - 1e-9 ? VERDICT_HOLDS : VERDICT_FAILS;
-        set_words(check, "ASTM D2628; working range from memory", "Take a wider seal or slot.");
-        return add_share(plan, "seal.compression", "squeeze of the seal, slab at its hottest",
-                         plan->seal.compression, plan->seal.compression_capacity, true);
-    }
-    if (plan->job.sealant_kind == SEALANT_FLOOR_FILLER) {
-        check = add(plan, "floor-filler", "the filler parts by this share of its width");
-        if (check == NULL)
-            return false;
-        check->demand = plan->seal.extension;
-        check->capacity = NAN;
-        check->unit = "ratio";
-        set_words(check, "a semi-rigid filler has no movement class: common practice",
-                  "Fill as late as can be (90 days), refill later.");
-        return true;
-    }
+    if (plan->job.sealant_kind == SEALANT_COMPRESSION_SEAL)
+        return add_compression_checks(plan);
+    if (plan->job.sealant_kind == SEALANT_FLOOR_FILLER)
+        return add_floor_filler_check(plan);
     if (isnan(plan->movement.open_m))
         return true;
-    return add_width_check(plan) && add_strain_checks(plan) && add_bead_checks(plan);
+    return add_width_check(plan) && add_strain_checks(plan) && add_bead_check(plan) &&
+           add_cold_checks(plan);
 }
 
 /* ---- boards ---- */
@@ -297,6 +321,20 @@ static bool add_spacing_advice(struct plan *plan)
     return true;
 }
 
+/* Slab temperatures are typed, so no year was simulated and nothing says how top and bottom differ.
+ */
+static bool add_curling_note(struct plan *plan)
+{
+    struct plan_check *check = add(plan, "curling", "curling is not worked out");
+
+    if (check == NULL)
+        return false;
+    check->demand = check->capacity = NAN;
+    check->unit = "Pa";
+    set_words(check, "no difference of top and bottom: type slab.gradient", "");
+    return true;
+}
+
 static bool add_stress_advice(struct plan *plan)
 {
     const struct job *job = &plan->job;
@@ -308,7 +346,7 @@ static bool add_stress_advice(struct plan *plan)
     set_sides(check, drag, plan_drag_stress_allowed(plan), "Pa");
     set_words(check, "gamma mu L/2: subgrade drag theory", "Shorter panels or a sheet.");
     if (isnan(plan->restraint.edge_pa))
-        return true;
+        return add_curling_note(plan);
     check = add(plan, "curling", "curling and drag against its share of the bending strength");
     if (check == NULL)
         return false;
@@ -324,28 +362,59 @@ static bool add_stress_advice(struct plan *plan)
     return true;
 }
 
-/* One joint in n: a warning line at n = 3; a typed n above 1 decides. */
+/* One joint in n: a warning line at n = 3; a typed n above 1 decides. A compression seal: by what
+ * it can follow. */
+static void set_working_sides(const struct plan *plan, const struct plan_working *row,
+                              struct plan_check *check)
+{
+    double stretch = row->extension / plan->seal.extension_capacity;
+    double squeeze = row->compression / plan->seal.compression_capacity;
+    double opens = row->open_m / fmax(plan->seal.follow_open_m, 1e-9);
+    double closes = row->close_m / fmax(plan->seal.follow_close_m, 1e-9);
+
+    if (plan->seal.sealed && stretch >= squeeze)
+        set_sides(check, row->extension, plan->seal.extension_capacity, "ratio");
+    else if (plan->seal.sealed)
+        set_sides(check, row->compression, plan->seal.compression_capacity, "ratio");
+    else if (opens >= closes)
+        set_sides(check, row->open_m, fmax(plan->seal.follow_open_m, 0), "m");
+    else
+        set_sides(check, row->close_m, fmax(plan->seal.follow_close_m, 0), "m");
+    check->verdict = row->verdict;
+}
+
+static void set_working_words(const struct plan *plan, const struct plan_working *row,
+                              struct plan_check *check)
+{
+    double blade = plan->seal.sealed ? plan_narrowest(plan, row->open_m, row->close_m) : NAN;
+    struct text width = {0};
+
+    set_words(check, "measured openings are uneven (LTPP): one joint takes the panels' sum",
+              "Saw earlier, measure each joint before sealing, seal the wide ones wider.");
+    if (isnan(blade))
+        return;
+    unit_show(&width, blade, QUANTITY_SMALL_LENGTH, (enum unit_system)plan->job.job_units);
+    snprintf(check->remedy, sizeof check->remedy,
+             "%s would hold; or saw earlier, measure each joint, seal the wide ones wider.",
+             text_string(&width));
+    text_free(&width);
+}
+
 static bool add_working_check(struct plan *plan)
 {
     int typed = (int)lround(plan->job.sealing_working), shown = typed > 1 ? typed : 3;
 
-    for (size_t i = 0; i < plan->working_count && plan->seal.sealed; i++) {
+    for (size_t i = 0; i < plan->working_count; i++) {
         const struct plan_working *row = &plan->working[i];
         struct plan_check *check;
-        bool stretch = row->extension / plan->seal.extension_capacity >=
-                       row->compression / plan->seal.compression_capacity;
-        if (row->n != shown)
+        if (row->n != shown || row->verdict == VERDICT_NONE)
             continue;
         check = add(plan, "working", "sealant, if only 1 cut in %d works", shown);
         if (check == NULL)
             return false;
         check->binding = typed > 1;
-        set_sides(check, stretch ? row->extension : row->compression,
-                  stretch ? plan->seal.extension_capacity : plan->seal.compression_capacity,
-                  "ratio");
-        check->verdict = row->verdict;
-        set_words(check, "measured openings are uneven (LTPP): one joint takes the panels' sum",
-                  "Saw earlier, measure each joint before sealing, seal the wide ones wider.");
+        set_working_sides(plan, row, check);
+        set_working_words(plan, row, check);
     }
     return true;
 }

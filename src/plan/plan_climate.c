@@ -13,17 +13,13 @@ bool plan_simulated(const struct plan *plan)
            (isnan(job->climate_slab_coldest) || isnan(job->climate_slab_hottest));
 }
 
-bool plan_climate(const struct plan *plan, struct climate_range *range,
-                  struct conduction_slab *slab)
+struct climate_range plan_climate_range(const struct job *job)
 {
-    const struct job *job = &plan->job;
     double share = slab_exposure_share((enum slab_exposure)job->climate_exposure);
 
-    if (job->climate_exposure == EXPOSURE_INDOOR)
-        return false;
     if (isfinite(job->climate_sun)) /* kWh/m2 of the hottest clear day, typed */
         share *= job->climate_sun * 3.6e6 / slab_sun_clear_most(job->place_latitude);
-    *range = (struct climate_range){
+    return (struct climate_range){
         .air_coldest_c = job->climate_air_coldest,
         .air_hottest_c = job->climate_air_hottest,
         .swing_cold_k = job->climate_swing_cold,
@@ -34,14 +30,23 @@ bool plan_climate(const struct plan *plan, struct climate_range *range,
         .latitude_deg = job->place_latitude,
         .sun_share = share,
     };
+}
+
+bool plan_climate(const struct plan *plan, struct climate_range *range,
+                  struct conduction_slab *slab)
+{
+    const struct job *job = &plan->job;
+
+    if (job->climate_exposure == EXPOSURE_INDOOR)
+        return false;
+    *range = plan_climate_range(job);
     conduction_slab_default(job->slab_thickness, slab);
     slab->absorptivity = job->climate_absorptivity;
     return true;
 }
 
 /* The slab's steady year, remembered for as long as nothing that enters it changes. */
-enum status plan_simulate(const struct plan *plan, struct plan_cache *cache,
-                            struct plan_cache *out)
+enum status plan_simulate(const struct plan *plan, struct plan_cache *cache, struct plan_cache *out)
 {
     struct climate_hour *hours;
     struct conduction_year *year;

@@ -127,22 +127,24 @@ static double width_over(const struct plan *plan, double run_m, double filler_m)
                                        plan->temperature.sealing_c, run_m);
 }
 
-static struct plan_strains strains_over(const struct plan *plan, const struct plan_isolation *row,
-                                        double filler_m)
+static struct sealant_strain strains_over(const struct plan *plan, const struct plan_isolation *row,
+                                          double filler_m)
 {
     double close = plan_close_strain(plan) * row->run_m;
 
     return plan_strains(plan, row->opening_m, close, width_over(plan, row->run_m, filler_m));
 }
 
-/* Worst of board and seal as a share of what each stands. */
+/* Worst of board and seal as a share of what each stands, tolerance in. */
 static double demand(const struct plan *plan, const struct plan_isolation *row, double filler_m)
 {
-    double worst = row->least_filler_m / filler_m, extension, compression;
-    struct plan_strains strains = strains_over(plan, row, filler_m);
+    double worst = row->least_filler_m / filler_m;
+    struct sealant_capacity capacity;
 
-    if (plan_capacity(plan, &extension, &compression))
-        worst = fmax(worst, fmax(strains.extension / extension, strains.compression / compression));
+    if (plan_capacity(plan, &capacity.extension, &capacity.compression))
+        worst = fmax(worst,
+                     sealant_demand(strains_over(plan, row, filler_m - plan->job.sealing_tolerance),
+                                    capacity));
     return worst;
 }
 
@@ -161,7 +163,7 @@ static double choose_board(const struct plan *plan, const struct plan_isolation 
 static void finish_row(struct plan *plan, struct plan_isolation *row)
 {
     double extension, compression;
-    struct plan_strains strains;
+    struct sealant_strain strains;
 
     row->from_c = plan->temperature.zero_stress_c;
     row->expansion_m = isolation_demand(plan->concrete.expansion_k, row->from_c,
@@ -189,6 +191,15 @@ static void finish_joint(struct plan *plan, size_t j, const struct plan_isolatio
     joint->verdict = row->verdict;
 }
 
+/* The seal opens by the slab beside it; when one joint in n works, by n panels of it. */
+static double opening(const struct plan *plan, const struct plan_joint *joint)
+{
+    int n = (int)lround(plan->job.sealing_working);
+
+    return plan_working_movement(plan, n, (joint->left_m + joint->right_m) / 2,
+                                 plan_open_strain(plan), joint->open_m);
+}
+
 static void make_rows(struct plan *plan, const struct stop_list *stops)
 {
     for (size_t j = 0; j < plan->layout.joint_count; j++) {
@@ -200,7 +211,7 @@ static void make_rows(struct plan *plan, const struct stop_list *stops)
         name_row(plan, joint, where, sizeof where);
         row = row_named(plan, where);
         row->run_m = fmax(row->run_m, run_of(plan, stops, j));
-        row->opening_m = fmax(row->opening_m, plan->joints[j].open_m);
+        row->opening_m = fmax(row->opening_m, opening(plan, &plan->joints[j]));
     }
     for (size_t i = 0; i < plan->isolation_count; i++)
         finish_row(plan, &plan->isolation[i]);

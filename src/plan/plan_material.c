@@ -86,10 +86,8 @@ static void set_gradients(struct plan *plan, double day_k, double night_k)
     const struct job *job = &plan->job;
     double built_in = job->slab_built_in_gradient;
 
-    if (job->given[FIELD_slab_gradient] || !plan_simulated(plan)) {
-        plan->temperature.day_k = plan->temperature.night_k = fabs(job->slab_gradient + built_in);
-        return;
-    }
+    if (job->given[FIELD_slab_gradient] || !plan_simulated(plan))
+        day_k = night_k = fabs(job->slab_gradient);
     plan->temperature.day_k = fmax(day_k + built_in, 0);
     plan->temperature.night_k = fmax(night_k - built_in, 0);
 }
@@ -111,8 +109,7 @@ static void set_zero_stress(struct plan *plan)
 {
     const double hydration_k = 10;
     const struct job *job = &plan->job;
-    struct climate_range range;
-    struct conduction_slab slab;
+    struct climate_range range = plan_climate_range(job);
 
     plan->temperature.zero_stress_c = plan->temperature.crack_zero_c =
         job->pour_zero_stress_temperature;
@@ -120,7 +117,7 @@ static void set_zero_stress(struct plan *plan)
         return;
     plan->temperature.zero_stress_c = job->pour_placing_temperature;
     plan->temperature.crack_zero_c = job->pour_placing_temperature + hydration_k;
-    if (job->pour_date.year != 0 && plan_simulated(plan) && plan_climate(plan, &range, &slab))
+    if (job->pour_date.year != 0)
         plan->temperature.zero_stress_c =
             fmin(plan->temperature.zero_stress_c,
                  climate_day_mean(&range, date_day_of_year(job->pour_date)));
@@ -208,6 +205,8 @@ void plan_set_shrinkage(struct plan *plan)
     plan->shrinkage.before_sealing = shrinkage_at((enum shrinkage_by)model, &slab, sealing_d).total;
     plan->shrinkage.after_sealing =
         shrinkage_between((enum shrinkage_by)model, &slab, sealing_d, fmax(end_d, sealing_d));
-    if (job->sealing_kind == SEALING_RESEAL) /* nothing left to dry */
+    if (job->sealing_kind == SEALING_RESEAL) { /* an old slab: all of it is in */
+        plan->shrinkage.before_sealing += plan->shrinkage.after_sealing;
         plan->shrinkage.after_sealing = 0;
+    }
 }

@@ -162,9 +162,10 @@ enum status plan_set_movement(struct plan *plan)
 /* ---- one joint in n works ---- */
 
 /* The bar is n panels long and moves freely; the factor's value is n times the uniform one. */
-double plan_working_movement(const struct plan *plan, int n, double strain, double one_m)
+double plan_working_movement(const struct plan *plan, int n, double bar_m, double strain,
+                             double one_m)
 {
     if (n <= 1 || plan_by_factor(plan))
         return n * one_m;
-    return n * plan->movement.panel_m * strain;
+    return n * bar_m * strain;
 }

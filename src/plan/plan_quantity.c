@@ -1,5 +1,7 @@
-/* The basic take-off: metres by kind, sealant, packages, rod, board. */
+/* The basic take-off: metres by kind, sealant, packages, rod, board, compression seal. */
 #include "core/quantity.h"
+#include "core/sealant.h"
+#include "job/table.h"
 #include "plan/plan_steps.h"
 #include <math.h>
 
@@ -53,12 +55,37 @@ static void set_packages(struct plan *plan)
         plan->quantities.boxes = quantity_boxes(counts[0], (int)lround(plan->job.takeoff_box));
 }
 
+static const double spare = 1.05; /* of rod and of seal: common practice */
+
+/* A bead over the soft board, as wide as the board and as deep as the kind asks: it lies on the
+ * board, so there is no rod. */
+static void set_boards(struct plan *plan)
+{
+    const struct sealant_row *kind = &sealant_table[plan->job.sealant_kind];
+    double net = 0;
+
+    if (plan->job.sealant_kind > SEALANT_HOT_POUR)
+        return;
+    for (size_t j = 0; j < plan->layout.joint_count; j++) {
+        double width = plan->joints[j].width_m;
+        if (plan->layout.joints[j].kind != LAYOUT_ISOLATION || isnan(width))
+            continue;
+        plan->quantities.board_m += plan->joints[j].length_m;
+        net += quantity_bead(
+            plan->joints[j].length_m, width,
+            sealant_depth(width, kind->depth_ratio, kind->depth_least, kind->depth_most));
+    }
+    if (net > 0)
+        plan->quantities.board_order_m3 = quantity_order(net, plan->job.takeoff_waste);
+}
+
 static void set_sealant(struct plan *plan)
 {
-    const double rod_spare = 1.05; /* common practice */
     double sealed = plan->quantities.sealed_m, width = plan->seal.width_m;
     bool rod = plan->job.sealant_kind <= SEALANT_HOT_POUR;
 
+    if (plan->job.sealant_kind == SEALANT_COMPRESSION_SEAL && sealed > 0)
+        plan->quantities.strip_m = sealed * spare;
     if (isnan(width) || isnan(plan->seal.depth_m) || !(sealed > 0))
         return;
     plan->quantities.sealant_net_m3 = quantity_bead(sealed, width, plan->seal.depth_m);
@@ -70,7 +97,7 @@ static void set_sealant(struct plan *plan)
     set_packages(plan);
     if (rod && plan->seal.rod_m > 0) {
         plan->quantities.rods[0] =
-            (struct plan_rod){.diameter_m = plan->seal.rod_m, .length_m = sealed * rod_spare};
+            (struct plan_rod){.diameter_m = plan->seal.rod_m, .length_m = sealed * spare};
         plan->quantities.rod_count = 1;
     }
 }
@@ -89,4 +116,5 @@ void plan_set_quantities(struct plan *plan)
     if (plan->job.sealant_kind == SEALANT_NONE)
         plan->quantities.sealed_m = 0;
     set_sealant(plan);
+    set_boards(plan);
 }

@@ -23,8 +23,8 @@ static int narrower(const void *a, const void *b)
     return (x > y) - (x < y);
 }
 
-static size_t stock(const struct plan *plan, const struct size_row *table, size_t rows,
-                    double sizes[PLAN_BLADES_MOST])
+size_t plan_stock(const struct plan *plan, const struct size_row *table, size_t rows,
+                  double sizes[PLAN_BLADES_MOST])
 {
     size_t count = 0;
 
@@ -37,16 +37,15 @@ static size_t stock(const struct plan *plan, const struct size_row *table, size_
 
 size_t plan_blades(const struct plan *plan, double widths[PLAN_BLADES_MOST])
 {
-    return stock(plan, blade_table, blade_count, widths);
+    return plan_stock(plan, blade_table, blade_count, widths);
 }
 
 size_t plan_boards(const struct plan *plan, double thicknesses[PLAN_BLADES_MOST])
 {
-    return stock(plan, filler_table, filler_count, thicknesses);
+    return plan_stock(plan, filler_table, filler_count, thicknesses);
 }
 
-/* The least size of stock not below `least`; the largest when there is none. */
-static double next_size(const double *sizes, size_t count, double least)
+double plan_next_size(const double *sizes, size_t count, double least)
 {
     for (size_t i = 0; i < count; i++)
         if (sizes[i] >= least - 1e-9)
@@ -61,19 +60,26 @@ bool plan_capacity(const struct plan *plan, double *extension, double *compressi
     return plan->job.sealant_kind <= SEALANT_HOT_POUR;
 }
 
+/* ASTM D6690: -18 degC for type I, -29 degC for types II to IV. */
+bool plan_bond_test(const struct plan *plan, double *tested_c)
+{
+    static const double tested[] = {NAN, -18, -29, -29, -29};
+    int type = plan->job.sealant_type;
+
+    if (type == 0 || plan->job.sealant_kind != SEALANT_HOT_POUR)
+        return false;
+    *tested_c = tested[type];
+    return true;
+}
+
 /* ---- strains of a joint ---- */
 
-/* What the widest-moving sealed joint does: the seal must hold there too. */
-struct worst {
-    double open, close;
-};
-
-static struct worst worst_movement(const struct plan *plan)
+struct plan_worst plan_worst_movement(const struct plan *plan)
 {
-    struct worst worst = {plan->movement.open_m, plan->movement.close_m};
+    struct plan_worst worst = {plan->movement.open_m, plan->movement.close_m};
 
     if (isnan(worst.open))
-        worst = (struct worst){0, 0};
+        worst = (struct plan_worst){0, 0};
     for (size_t j = 0; plan->joints != NULL && j < plan->layout.joint_count; j++)
         if (plan->layout.joints[j].kind != LAYOUT_ISOLATION) {
             worst.open = fmax(worst.open, plan->joints[j].open_m);
@@ -96,35 +102,30 @@ double plan_width_at_sealing(const struct plan *plan, double width_m)
                               warmer);
 }
 
-/* Per cent of the width at sealing, or, with the mean width as basis, the whole movement on the
- * width less the movement. A joint of no width: 10 (no sealant takes that). */
-struct plan_strains plan_strains(const struct plan *plan, double open_m, double close_m,
-                                 double width_m)
+enum sealant_basis plan_strain_basis(const struct plan *plan)
 {
-    const double shut = 10;
-    struct plan_strains strains;
+    return plan->job.sealing_basis == SEALING_MEAN_WIDTH ? SEALANT_OF_REST : SEALANT_OF_WIDTH;
+}
 
-    if (plan->job.sealing_basis == SEALING_MEAN_WIDTH) {
-        double total = open_m + close_m, left = width_m - total;
-        strains.extension = left > total / shut ? total / left : total > 0 ? shut : 0;
-        strains.compression = strains.extension;
-        return strains;
-    }
-    strains.extension = width_m > open_m / shut ? open_m / width_m : open_m > 0 ? shut : 0;
-    strains.compression = width_m > close_m / shut ? close_m / width_m : close_m > 0 ? shut : 0;
-    return strains;
+struct sealant_strain plan_strains(const struct plan *plan, double open_m, double close_m,
+                                   double width_m)
+{
+    return sealant_strains(plan_strain_basis(plan), open_m, close_m, width_m);
 }
 
 /* Share of what the sealant is good for at the width less the tolerance. */
 static double demand_of(const struct plan *plan, double open_m, double close_m, double cut_m)
 {
-    double extension, compression;
-    struct plan_strains strains = plan_strains(
-        plan, open_m, close_m, plan_width_at_sealing(plan, cut_m) - plan->job.sealing_tolerance);
+    struct sealant_capacity capacity;
 
-    if (!plan_capacity(plan, &extension, &compression))
+    if (plan->job.sealant_kind == SEALANT_COMPRESSION_SEAL)
+        return plan_compression_demand(plan, open_m, close_m, cut_m);
+    if (!plan_capacity(plan, &capacity.extension, &capacity.compression))
         return NAN;
-    return fmax(strains.extension / extension, strains.compression / compression);
+    return sealant_demand(
+        plan_strains(plan, open_m, close_m,
+                     plan_width_at_sealing(plan, cut_m) - plan->job.sealing_tolerance),
+        capacity);
 }
 
 enum verdict plan_seal_verdict(const struct plan *plan, double open_m, double close_m, double cut_m)
@@ -134,8 +135,7 @@ enum verdict plan_seal_verdict(const struct plan *plan, double open_m, double cl
 
 /* ---- width ---- */
 
-/* Narrowest blade of the kind that holds with room; NAN: none. */
-static double narrowest(const struct plan *plan, double open_m, double close_m)
+double plan_narrowest(const struct plan *plan, double open_m, double close_m)
 {
     const struct sealant_row *kind = &sealant_table[plan->job.sealant_kind];
     double widths[PLAN_BLADES_MOST];
@@ -165,7 +165,7 @@ static double widest(const struct plan *plan)
 }
 
 /* What width the movement asks for, tolerance in, before rounding to a blade. */
-static double least_width(const struct plan *plan, struct worst worst)
+static double least_width(const struct plan *plan, struct plan_worst worst)
 {
     struct sealant_capacity capacity;
     double least;
@@ -203,12 +203,12 @@ static void warn_width(struct plan *plan)
     text_free(&most);
 }
 
-static void set_width(struct plan *plan, struct worst worst)
+static void set_width(struct plan *plan, struct plan_worst worst)
 {
     plan->seal.chosen = isnan(plan->job.sealant_width);
     plan->seal.width_m = plan->job.sealant_width;
     if (plan->seal.chosen) {
-        plan->seal.width_m = narrowest(plan, worst.open, worst.close);
+        plan->seal.width_m = plan_narrowest(plan, worst.open, worst.close);
         if (isnan(plan->seal.width_m))
             plan->seal.width_m = widest(plan); /* fails, and says so */
     }
@@ -223,7 +223,7 @@ static void set_neighbours(struct plan *plan)
     double widths[PLAN_BLADES_MOST];
     size_t count = plan_blades(plan, widths);
     double open = plan->movement.open_m, close = plan->movement.close_m;
-    struct plan_strains strains;
+    struct sealant_strain strains;
 
     for (size_t i = 0; i < count; i++) {
         if (widths[i] < plan->seal.width_m - 1e-9)
@@ -289,7 +289,7 @@ static void set_bead(struct plan *plan)
 {
     const struct sealant_row *kind = &sealant_table[plan->job.sealant_kind];
     double rods[PLAN_BLADES_MOST];
-    size_t count = stock(plan, rod_table, rod_count, rods);
+    size_t count = plan_stock(plan, rod_table, rod_count, rods);
     double open = isfinite(plan->movement.open_m) ? plan->movement.open_m : 0;
     double close = isfinite(plan->movement.close_m) ? plan->movement.close_m : 0;
 
@@ -300,7 +300,7 @@ static void set_bead(struct plan *plan)
                                            kind->depth_most);
     plan->seal.rod_m = plan->job.sealant_rod;
     if (isnan(plan->seal.rod_m))
-        plan->seal.rod_m = next_size(rods, count, 1.25 * plan->seal.width_m);
+        plan->seal.rod_m = plan_next_size(rods, count, 1.25 * plan->seal.width_m);
     plan->seal.cut_depth_m = plan->seal.recess_m + plan->seal.depth_m + plan->seal.rod_m;
     plan->seal.bead_strain =
         sealant_bead_strain(plan->seal.width_m, plan->seal.depth_m, plan->seal.width_m + open);
@@ -309,120 +309,12 @@ static void set_bead(struct plan *plan)
     warn_slot(plan);
 }
 
-/* ---- sealing table and window ---- */
-
-static double move(const void *context, double strain)
-{
-    const struct plan *plan = context;
-
-    return plan_joint_movement(plan, plan_by_factor(plan), plan->movement.left_m,
-                               plan->movement.right_m, strain);
-}
-
-static struct sealant_joint sealant_joint_of(const struct plan *plan)
-{
-    return (struct sealant_joint){
-        .width_m = plan->seal.width_m,
-        .cut_c = plan->temperature.cut_c,
-        .coldest_c = plan->temperature.coldest_c,
-        .hottest_c = plan->temperature.hottest_c,
-        .expansion = plan->concrete.expansion_k,
-        .shrinkage = plan->shrinkage.after_sealing,
-        .move = move,
-        .context = plan,
-        .capacity = {plan->seal.extension_capacity, plan->seal.compression_capacity},
-    };
-}
-
-static void add_table_row(struct plan *plan, const struct sealant_joint *joint, double slab_c)
-{
-    struct sealant_moment at = sealant_row_at(joint, slab_c);
-    struct plan_table_row *row;
-    double gap = at.gap_m - plan->job.sealing_tolerance, demand;
-
-    if (plan->table_count >= TABLE_MOST)
-        return;
-    row = &plan->table[plan->table_count++];
-    *row = (struct plan_table_row){.slab_c = slab_c,
-                                   .gap_m = fmax(at.gap_m, 0),
-                                   .extension = at.extension,
-                                   .compression = at.compression,
-                                   .too_cold = slab_c < plan->job.sealing_least_temperature};
-    demand = fmax(at.extension / plan->seal.extension_capacity,
-                  at.compression / plan->seal.compression_capacity);
-    if (!at.open_gap || gap <= 0)
-        row->verdict = VERDICT_FAILS;
-    else
-        row->verdict = verdict_of(demand * at.gap_m / gap, 1);
-}
-
-/* Coldest, whole steps, the sealing temperature at its place, hottest. */
-static void set_table(struct plan *plan)
-{
-    struct sealant_joint joint = sealant_joint_of(plan);
-    bool us = plan->job.job_units == UNITS_US;
-    double coldest = plan->temperature.coldest_c, hottest = plan->temperature.hottest_c;
-    double sealing = plan->temperature.sealing_c;
-    double step = us ? 10 / 1.8 : 5, zero = us ? -32 / 1.8 : 0;
-
-    while ((hottest - coldest) / step > TABLE_MOST - 4)
-        step *= 2;
-    add_table_row(plan, &joint, coldest);
-    for (double n = floor((coldest - zero) / step + 1e-6) + 1; zero + n * step < hottest - 1e-6;
-         n++) {
-        double at = zero + n * step;
-        if (sealing > plan->table[plan->table_count - 1].slab_c + 1e-6 && sealing < at - 1e-6)
-            add_table_row(plan, &joint, sealing);
-        add_table_row(plan, &joint, at);
-    }
-    if (sealing > plan->table[plan->table_count - 1].slab_c + 1e-6 && sealing < hottest - 1e-6)
-        add_table_row(plan, &joint, sealing);
-    if (hottest > coldest + 1e-6)
-        add_table_row(plan, &joint, hottest);
-    sealant_window(&joint, &plan->seal.window_coldest_c, &plan->seal.window_hottest_c);
-}
-
-/* ---- the working joint ---- */
-
-static void add_working(struct plan *plan, int n)
-{
-    struct plan_working *row = &plan->working[plan->working_count++];
-    struct plan_strains strains;
-
-    row->n = n;
-    row->open_m = plan_working_movement(plan, n, plan_open_strain(plan), plan->movement.open_m);
-    row->close_m = plan_working_movement(plan, n, plan_close_strain(plan), plan->movement.close_m);
-    strains = plan_strains(plan, row->open_m, row->close_m,
-                           plan_width_at_sealing(plan, plan->seal.width_m));
-    row->extension = strains.extension;
-    row->compression = strains.compression;
-    row->capacity = plan->seal.extension_capacity;
-    row->verdict = plan->seal.sealed
-                       ? plan_seal_verdict(plan, row->open_m, row->close_m, plan->seal.width_m)
-                       : VERDICT_NONE;
-}
-
-static void set_working(struct plan *plan)
-{
-    int typed = (int)lround(plan->job.sealing_working);
-
-    if (isnan(plan->movement.open_m) || isnan(plan->seal.width_m))
-        return;
-    for (int n = 1; n <= 3; n++)
-        add_working(plan, n);
-    if (typed > 3)
-        add_working(plan, typed);
-    if (plan->seal.sealed)
-        plan->seal.holds_when_n3_m =
-            narrowest(plan, plan->working[2].open_m, plan->working[2].close_m);
-}
-
 /* ---- kinds without a class ---- */
 
 /* A semi-rigid filler has no movement capacity: it fills the whole first cut, flush. */
 static void set_floor_filler(struct plan *plan)
 {
-    struct plan_strains strains;
+    struct sealant_strain strains;
 
     plan->seal.recess_m = 0;
     plan->seal.depth_m =
@@ -432,44 +324,6 @@ static void set_floor_filler(struct plan *plan)
     strains = plan_strains(plan, plan->movement.open_m, plan->movement.close_m, plan->seal.width_m);
     plan->seal.extension = strains.extension;
     plan->seal.compression = strains.compression;
-}
-
-/* Size by the movement, slot by the published formula held within what both ends of the year allow.
- * rod_m is the seal's own width. */
-static void set_compression_seal(struct plan *plan, struct worst worst)
-{
-    double sizes[PLAN_BLADES_MOST], least, most;
-    size_t count = stock(plan, seal_table, seal_count, sizes);
-    struct sealant_seal seal = {.least = plan->job.sealant_seal_least,
-                                .most = plan->job.sealant_seal_most};
-    struct sealant_seal_ends ends;
-    double raster = plan->job.job_units == UNITS_US ? 0.0254 / 32 : 0.0005;
-
-    seal.seal_m =
-        isfinite(plan->job.sealant_rod)
-            ? plan->job.sealant_rod
-            : next_size(sizes, count,
-                        sealant_seal_least(worst.open + worst.close, seal.least, seal.most));
-    plan->seal.rod_m = seal.seal_m;
-    plan->seal.recess_m = plan->job.sealant_recess;
-    plan->seal.chosen = isnan(plan->job.sealant_width);
-    plan->seal.width_m = plan->job.sealant_width;
-    if (plan->seal.chosen) {
-        double slot = sealant_seal_slot(
-            &seal, sealant_seal_setting(&seal, plan->temperature.sealing_c,
-                                        plan->temperature.coldest_c, plan->temperature.hottest_c));
-        if (sealant_seal_slots(&seal, worst.open, worst.close, &least, &most))
-            slot = fmin(fmax(slot, ceil(least / raster - 1e-6) * raster),
-                        floor(most / raster + 1e-6) * raster);
-        plan->seal.width_m = round(slot / raster) * raster;
-    }
-    ends = sealant_seal_check(&seal, plan->seal.width_m, worst.open, worst.close);
-    plan->seal.least_width_m = (1 - seal.most) * seal.seal_m + worst.close;
-    plan->seal.cold_squeeze = fmax(ends.cold, 0);
-    plan->seal.compression = fmax(ends.hot, 0);
-    plan->seal.extension_capacity = NAN;
-    plan->seal.compression_capacity = seal.most;
-    plan->seal.verdict = ends.holds ? VERDICT_HOLDS : VERDICT_FAILS;
 }
 
 /* ---- all together ---- */
@@ -490,7 +344,7 @@ static void warn_factor(struct plan *plan)
 {
     enum verdict friction = plan_seal_verdict(plan, plan->movement.friction_open_m,
                                               plan->movement.friction_close_m, plan->seal.width_m);
-    struct plan_strains strains =
+    struct sealant_strain strains =
         plan_strains(plan, plan->movement.friction_open_m, plan->movement.friction_close_m,
                      plan_width_at_sealing(plan, plan->seal.width_m));
 
@@ -514,9 +368,10 @@ static bool anything_to_seal(const struct plan *plan)
     return false;
 }
 
-static void set_sealant(struct plan *plan, struct worst worst)
+static void set_sealant(struct plan *plan, struct plan_worst worst)
 {
-    struct plan_strains strains;
+    struct sealant_strain strains;
+    double tested_c;
 
     set_bead(plan);
     set_neighbours(plan);
@@ -527,13 +382,15 @@ static void set_sealant(struct plan *plan, struct worst worst)
     plan->seal.extension = strains.extension;
     plan->seal.compression = strains.compression;
     plan->seal.verdict = plan_seal_verdict(plan, worst.open, worst.close, plan->seal.width_m);
-    set_table(plan);
+    if (plan_bond_test(plan, &tested_c) && plan->temperature.coldest_c < tested_c - 1e-9)
+        plan->seal.verdict = VERDICT_FAILS;
+    plan_set_seal_table(plan);
     warn_factor(plan);
 }
 
 void plan_set_seal(struct plan *plan)
 {
-    struct worst worst = worst_movement(plan);
+    struct plan_worst worst = plan_worst_movement(plan);
     int kind = plan->job.sealant_kind;
 
     set_cut(plan);
@@ -544,7 +401,9 @@ void plan_set_seal(struct plan *plan)
     plan->seal.sealed =
         plan_capacity(plan, &plan->seal.extension_capacity, &plan->seal.compression_capacity);
     if (kind == SEALANT_COMPRESSION_SEAL) {
-        set_compression_seal(plan, worst);
+        plan->seal.extension_capacity = NAN;
+        plan_set_compression_seal(plan);
+        plan_set_working(plan);
         return;
     }
     set_width(plan, worst);
@@ -552,23 +411,5 @@ void plan_set_seal(struct plan *plan)
         set_floor_filler(plan);
     else
         set_sealant(plan, worst);
-    set_working(plan);
-}
-
-void plan_set_joint_seals(struct plan *plan)
-{
-    for (size_t j = 0; plan->joints != NULL && j < plan->layout.joint_count; j++) {
-        struct plan_joint *joint = &plan->joints[j];
-        struct plan_strains strains;
-        if (plan->layout.joints[j].kind == LAYOUT_ISOLATION || isnan(plan->seal.width_m) ||
-            plan->job.sealant_kind == SEALANT_COMPRESSION_SEAL)
-            continue;
-        joint->width_m = plan->seal.width_m;
-        strains = plan_strains(plan, joint->open_m, joint->close_m,
-                               plan_width_at_sealing(plan, joint->width_m));
-        joint->extension = strains.extension;
-        joint->compression = strains.compression;
-        if (plan->seal.sealed)
-            joint->verdict = plan_seal_verdict(plan, joint->open_m, joint->close_m, joint->width_m);
-    }
+    plan_set_working(plan);
 }

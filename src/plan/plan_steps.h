@@ -3,6 +3,7 @@
 #ifndef SLABGAP_PLAN_PLAN_STEPS_H
 #define SLABGAP_PLAN_PLAN_STEPS_H
 
+#include "core/sealant.h"
 #include "plan/plan.h"
 
 void plan_list_assumed(struct plan *plan); /* defaults an answer leans on; overrides */
@@ -13,7 +14,10 @@ void plan_set_spacing(struct plan *plan);
 enum status plan_set_layout(struct plan *plan, const struct plan_progress *progress);
 enum status plan_set_movement(struct plan *plan); /* movement, joints, working */
 void plan_set_seal(struct plan *plan);            /* width, strains, table, window */
-void plan_set_joint_seals(struct plan *plan);     /* width and strains of every joint, working */
+void plan_set_seal_table(struct plan *plan);      /* part of plan_set_seal */
+void plan_set_compression_seal(struct plan *plan);
+void plan_set_working(struct plan *plan);
+void plan_set_joint_seals(struct plan *plan); /* width and strains of every joint */
 enum status plan_set_isolation(struct plan *plan);
 void plan_set_restraint(struct plan *plan);
 void plan_set_steel(struct plan *plan);
@@ -23,6 +27,8 @@ enum status plan_set_cracks(struct plan *plan);
 enum status plan_set_checks(struct plan *plan);
 
 /* ---- shared by the steps ---- */
+/* The air as the job gives it. */
+struct climate_range plan_climate_range(const struct job *job);
 /* The weather and the column of the simulation; false when the job needs none (indoors). */
 bool plan_climate(const struct plan *plan, struct climate_range *range,
                   struct conduction_slab *slab);
@@ -53,24 +59,44 @@ bool plan_joint_tied(const struct plan *plan, const struct layout_joint *joint);
 double plan_crack_strain(const struct plan *plan);
 /* Stress the drag of the base may cause, Pa. */
 double plan_drag_stress_allowed(const struct plan *plan);
-/* Movement of the joint that works when one in n does, m; `one_m`: at n = 1. */
-double plan_working_movement(const struct plan *plan, int n, double strain, double one_m);
+/* Movement of the joint that works when one in n does, m: `one_m` at n = 1, between bars of mean
+ * length bar_m (half of it for a joint with one neighbour). */
+double plan_working_movement(const struct plan *plan, int n, double bar_m, double strain,
+                             double one_m);
 /* Stock widths in the job's units, narrow to wide; returns how many. */
 enum { PLAN_BLADES_MOST = 32 };
 size_t plan_blades(const struct plan *plan, double widths[PLAN_BLADES_MOST]);
 /* Filler boards in stock in the job's units, thin to thick. */
 size_t plan_boards(const struct plan *plan, double thicknesses[PLAN_BLADES_MOST]);
-/* Strains of a joint this wide at sealing on the job's basis (width, mean width). */
-struct plan_strains {
-    double extension, compression;
+/* Sizes of a stock table in the job's units, narrow to wide. */
+struct size_row;
+size_t plan_stock(const struct plan *plan, const struct size_row *table, size_t rows,
+                  double sizes[PLAN_BLADES_MOST]);
+/* The least size of stock not below `least`; the largest when there is none. */
+double plan_next_size(const double *sizes, size_t count, double least);
+/* Strains of a joint this wide at sealing on the job's basis. */
+enum sealant_basis plan_strain_basis(const struct plan *plan);
+struct sealant_strain plan_strains(const struct plan *plan, double open_m, double close_m,
+                                   double width_m);
+/* What the widest-moving sealed joint does: the seal must hold there too. */
+struct plan_worst {
+    double open, close;
 };
-struct plan_strains plan_strains(const struct plan *plan, double open_m, double close_m,
-                                 double width_m);
+struct plan_worst plan_worst_movement(const struct plan *plan);
+/* The governing joint as the sealing table and `seal` see it. It points to the plan. */
+struct sealant_joint plan_sealant_joint(const struct plan *plan);
+/* Share of what a compression seal of seal.rod_m can follow from this slot; above 1 it fails. */
+double plan_compression_demand(const struct plan *plan, double open_m, double close_m,
+                               double slot_m);
+/* Narrowest blade of the kind that holds with room for these movements; NAN: none. */
+double plan_narrowest(const struct plan *plan, double open_m, double close_m);
 /* Width at sealing of a joint cut this wide at the cutting temperature. */
 double plan_width_at_sealing(const struct plan *plan, double width_m);
-/* Verdict of a joint cut this wide, at the width less the tolerance; NONE without a capacity. */
+/* Verdict of a joint cut this wide, tolerance in; NONE without a capacity. */
 enum verdict plan_seal_verdict(const struct plan *plan, double open_m, double close_m,
                                double cut_m);
+/* Temperature of the bond test of a hot-poured sealant of a typed ASTM D6690 type; false: none. */
+bool plan_bond_test(const struct plan *plan, double *tested_c);
 /* Capacities of the sealant; false when the kind has none (none, floor filler, compression seal).
  */
 bool plan_capacity(const struct plan *plan, double *extension, double *compression);

@@ -160,32 +160,46 @@ static void set_age(const struct plan *plan, const struct seal_now_input *input,
 
 /* ---- the joint ---- */
 
-static double moved(const struct plan *plan, double strain)
+/* The joint as measured; without a width what the job's cut is at this slab temperature, with its
+ * tolerance. */
+static struct sealant_moment at_slab(const struct plan *plan, const struct seal_now *now,
+                                     double slab_c, double width_m)
 {
-    return plan_joint_movement(plan, plan_by_factor(plan), plan->movement.left_m,
-                               plan->movement.right_m, fmax(strain, 0));
+    struct sealant_joint joint = plan_sealant_joint(plan);
+
+    joint.shrinkage = now->drying_left;
+    if (isfinite(width_m)) {
+        joint.width_m = width_m;
+        joint.cut_c = slab_c;
+        joint.tolerance_m = 0;
+    }
+    return sealant_row_at(&joint, slab_c);
 }
 
-/* Worst of both ends when the slab's mean is only known to lie between two values. */
-static void set_strains(const struct plan *plan, struct seal_now *now)
+/* Worse of both ends when the slab's mean is only known to lie between two values. */
+static double demand_at(const struct plan *plan, const struct seal_now *now, double width_m)
 {
-    double a = plan->concrete.expansion_k;
-    double open = moved(plan, a * (now->slab_c - plan->temperature.coldest_c) + now->drying_left);
-    double close = moved(plan, a * (plan->temperature.hottest_c - now->slab_least_c));
+    return fmax(at_slab(plan, now, now->slab_c, width_m).demand,
+                at_slab(plan, now, now->slab_least_c, width_m).demand);
+}
+
+static void set_strains(const struct plan *plan, const struct seal_now_input *input,
+                        struct seal_now *now)
+{
+    struct sealant_moment warm = at_slab(plan, now, now->slab_c, input->width_m);
+    struct sealant_moment cool = at_slab(plan, now, now->slab_least_c, input->width_m);
     double widths[PLAN_BLADES_MOST];
     size_t count = plan_blades(plan, widths);
     const struct sealant_row *kind = &sealant_table[plan->job.sealant_kind];
 
-    now->extension = open / now->width_m;
-    now->compression = close / now->width_m;
-    now->verdict = verdict_of(fmax(now->extension / plan->seal.extension_capacity,
-                                   now->compression / plan->seal.compression_capacity),
-                              1);
+    now->width_m = warm.gap_m;
+    now->extension = fmax(warm.extension, cool.extension);
+    now->compression = fmax(warm.compression, cool.compression);
+    now->verdict = verdict_of(fmax(warm.demand, cool.demand), 1);
     now->needed_m = NAN;
     for (size_t i = 0; i < count && isnan(now->needed_m); i++)
         if (widths[i] >= kind->width_least - 1e-9 && widths[i] <= kind->width_most + 1e-9 &&
-            fmax(open / widths[i] / plan->seal.extension_capacity,
-                 close / widths[i] / plan->seal.compression_capacity) <= 0.9)
+            demand_at(plan, now, widths[i]) <= 0.9)
             now->needed_m = widths[i];
 }
 
@@ -274,14 +288,13 @@ enum status seal_now_judge(const struct plan *plan, const struct seal_now_input 
     *now = (struct seal_now){.turns_hour = NAN};
     if (!plan->seal.sealed || isnan(plan->movement.open_m) || isnan(plan->seal.width_m))
         return STATUS_REFUSED;
-    now->width_m = isfinite(input->width_m) ? input->width_m : plan->seal.width_m;
     if (isnan(input->width_m))
-        unknown(now, "width (the job's is taken)");
+        unknown(now, "width (the job's cut at this slab temperature is taken)");
     year = hour_of_year(plan, input) >= 0 ? simulate(plan) : NULL;
     given = set_slab(plan, input, year, now);
     if (given) {
         set_age(plan, input, now);
-        set_strains(plan, now);
+        set_strains(plan, input, now);
         set_turn(plan, input, year, now);
         judge_joint(plan, now);
         judge_cold(plan, now);

@@ -10,7 +10,7 @@ struct seal_now_input { /* NAN = not measured */
     double slab_c;      /* mean over the depth */
     double surface_c;   /* a reading of the surface, when there is no mean */
     double hour;        /* of that reading, 0 to 24 */
-    double width_m;     /* measured, the smallest of three; NAN: the job's */
+    double width_m;     /* measured, the smallest of three; NAN: the job's cut, at this slab */
     double air_c, humidity /* ratio */;
     enum trend trend;
     int dry, clean;   /* -1 not looked at, 0 no, 1 yes */

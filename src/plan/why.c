@@ -409,9 +409,9 @@ static enum status why_check(const struct plan *plan, const char *id, struct why
                 check->binding ? "This check decides the exit status."
                                : "Advice: it never decides.",
                 check->source, why);
-        step(why, "=", "", "worked out", "what there is");
+        step(why, "=", "", "worked out", "what is asked for");
         set_check_side(why, plan, check->demand, check->unit);
-        step(why, "limit", "", "", check->at_most ? "at most" : "at least");
+        step(why, "limit", "", "", "at most");
         set_check_side(why, plan, check->capacity, check->unit);
         return STATUS_OK;
     }

@@ -210,7 +210,7 @@ static void under_words(const struct app *app, struct text *out)
         text_format(out, "%s %s, ", kind, object->name);
         add_size(app, out, object->w, object->d);
         text_add(out, object->box_at_given ? "; its box is kept. k lets it go, v moves it."
-                                           : "; the joints meet its box. k keeps it, v moves it.");
+                                           : "; joints meet its box. k keeps it, v moves it.");
     } else if (opening != NULL) {
         text_format(out, "hole %s. d takes it away.", opening->name);
     } else if (joint_line_find(&app->plan.layout, plan_line_under(app), &line)) {
