@@ -1,23 +1,8 @@
 /* Families of arcs and gates, forced positions, chords, panels. */
 #include "core/layout_rect_solve.h"
+#include "core/layout_sort.h"
 #include <stdlib.h>
 #include <string.h>
-
-static int compare_int64(const void *a, const void *b)
-{
-    const int64_t p = *(const int64_t *)a, q = *(const int64_t *)b;
-    return (p > q) - (p < q);
-}
-
-static size_t sort_unique(int64_t *list, size_t count)
-{
-    size_t kept = 0;
-    qsort(list, count, sizeof *list, compare_int64);
-    for (size_t i = 0; i < count; i++)
-        if (!kept || list[i] != list[kept - 1])
-            list[kept++] = list[i];
-    return kept;
-}
 
 /* The cross-section at u = mid/2: pairs of v, even-odd, empty ones dropped. */
 static size_t cross_section(const struct rect_edge *across, size_t count, int64_t twice_u,
@@ -27,7 +12,7 @@ static size_t cross_section(const struct rect_edge *across, size_t count, int64_
     for (size_t i = 0; i < count; i++)
         if (2 * across[i].v0 < twice_u && twice_u < 2 * across[i].v1)
             v[n++] = across[i].u;
-    qsort(v, n, sizeof *v, compare_int64);
+    sort_int64(v, n);
     for (size_t i = 0; i + 1 < n; i += 2)
         if (v[i] < v[i + 1]) {
             if (kept && v[kept - 1] == v[i]) {

@@ -1,5 +1,6 @@
 /* The dynamic programs: one arc with the other family fixed, and the lines common to all arcs. */
 #include "core/layout_rect_solve.h"
+#include "core/layout_sort.h"
 #include <math.h>
 #include <stdlib.h>
 #include <string.h>
@@ -32,12 +33,6 @@ struct program {
     size_t *from;
     size_t count;
 };
-
-static int compare_int64(const void *a, const void *b)
-{
-    const int64_t p = *(const int64_t *)a, q = *(const int64_t *)b;
-    return (p > q) - (p < q);
-}
 
 /* The nearest cut from the end `u` of an arc outward along v: a wall, a gate that is on, or the
  * last chord of the next arc; else on through it. */
@@ -83,7 +78,7 @@ static size_t crossing(const struct rect_slab *slab, int axis, const struct rect
         if (g->on && g->v0 < a->u1 && g->v1 > a->u0 && g->u > a->v0 && g->u < a->v1)
             list[n++] = g->u;
     }
-    qsort(list, n, sizeof *list, compare_int64);
+    sort_int64(list, n);
     return n;
 }
 
@@ -259,7 +254,7 @@ static bool find_places(const struct rect_slab *slab, int axis, const struct rec
                 return false;
     if (slab->ban_count && !lift_bans(slab, axis, a, list))
         return false;
-    qsort(list->at, list->count, sizeof *list->at, compare_int64);
+    sort_int64(list->at, list->count);
     return true;
 }
 
@@ -272,22 +267,25 @@ static double cramped(const struct rect_slab *slab, const struct rect_arc *a, in
     return (double)low > rest || (double)high > rest ? BROKEN : 0;
 }
 
+/* Cost of a panel column between two places; `most`: the sum may stop there, it is not taken. */
 static double gap(struct rect_slab *slab, int axis, const struct program *p, int64_t from,
-                  int64_t to, bool first, bool last)
+                  int64_t to, bool first, bool last, double most)
 {
     double cost = 0;
-    slab->evaluations += !first && !last ? p->height_count : p->row_count;
+    size_t i = 0;
     if (!first && !last) {
-        for (size_t i = 0; i < p->height_count; i++)
+        for (; i < p->height_count && cost < most; i++)
             cost += p->heights[i].count *
                     rect_penalty(&slab->rules, to - from, p->heights[i].height, axis);
+        slab->evaluations += i;
         return cost;
     }
-    for (size_t i = 0; i < p->row_count; i++)
+    for (; i < p->row_count && cost < most; i++)
         cost += p->rows[i].count *
                 rect_penalty(&slab->rules,
                              (last ? p->rows[i].after : to) - (first ? p->rows[i].before : from),
                              p->rows[i].height, axis);
+    slab->evaluations += i;
     return cost;
 }
 
@@ -316,12 +314,14 @@ static void run_program(struct rect_slab *slab, int axis, const struct rect_arc 
         p->best[q] = INFINITY;
         p->from[q] = SIZE_MAX;
         if (barrier == SIZE_MAX && ((double)(to - a->u0) <= 2 * reach || q == 0 || end))
-            p->best[q] = gap(slab, axis, p, a->u0, to, true, end) +
+            p->best[q] = gap(slab, axis, p, a->u0, to, true, end, INFINITY) +
                          cramped(slab, a, a->u0, to, low, a->end_room[0]);
         for (size_t k = q; k-- > 0;) {
             if (p->best[k] < p->best[q]) {
-                const double cost = p->best[k] + gap(slab, axis, p, p->at[k], to, false, end) +
-                                    cramped(slab, a, p->at[k], to, low, room_at(a, p->at[k], true));
+                const double cost =
+                    p->best[k] +
+                    gap(slab, axis, p, p->at[k], to, false, end, p->best[q] - p->best[k]) +
+                    cramped(slab, a, p->at[k], to, low, room_at(a, p->at[k], true));
                 if (cost < p->best[q] - 1e-9) {
                     p->best[q] = cost;
                     p->from[q] = k;
@@ -444,7 +444,7 @@ enum status rect_solve_arc(struct rect_slab *slab, int axis, size_t arc, bool bl
             size_t n = 0;
             for (size_t q = p.from[p.count]; q != SIZE_MAX; q = p.from[q])
                 cut[n++] = p.at[q];
-            qsort(cut, n, sizeof *cut, compare_int64);
+            sort_int64(cut, n);
             free(a->cut);
             a->cut = cut;
             a->cut_count = n;
@@ -508,19 +508,7 @@ static bool find_anchors(const struct rect_family *f, const struct strip *strips
 
 static void sort_places(struct places *list)
 {
-    size_t kept = 0;
-    if (list->count)
-        qsort(list->at, list->count, sizeof *list->at, compare_int64);
-    for (size_t i = 0; i < list->count; i++)
-        if (!kept || list->at[i] != list->at[kept - 1])
-            list->at[kept++] = list->at[i];
-    list->count = kept;
-}
-
-static bool holds(const struct places *list, int64_t u)
-{
-    return list->count &&
-           bsearch(&u, list->at, list->count, sizeof *list->at, compare_int64) != NULL;
+    list->count = sort_unique(list->at, list->count);
 }
 
 /* The common lines: the same program with the cost summed over the strips. Kept in `cut`. */
@@ -549,7 +537,7 @@ static enum status common_lines(struct rect_slab *slab, int axis, const struct s
                 break;
         }
         best[q] += line_length(&slab->family[axis], list->at[q]);
-        if (holds(must, list->at[q]))
+        if (sort_holds(must->at, must->count, list->at[q]))
             barrier = q;
     }
     bool fine = true;

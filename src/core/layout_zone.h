@@ -9,6 +9,8 @@ enum status zone_build(struct work *w, struct rect_edge *const edges[2], const s
                        struct rect_slab *slab);
 /* Marks the boxes that cannot be made as dropped; their number. */
 size_t zone_mark_faults(struct work *w);
+/* Where every joint goes on across a zone's end, it may be a joint of contraction as well. */
+void zone_relabel_cuts(struct work *w);
 /* False: the caller wants the best so far. */
 bool zone_go_on(struct work *w);
 /* Fills chords and panels of the work, and the lines of the joints it adds. */
