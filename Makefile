@@ -144,9 +144,10 @@ $(B)/tests/bench/%: CFLAGS += -DSLABGAP_BINARY='"$(abspath $(B))/slabgap"'
 libs_bench = export plan job core base
 
 install: all
-	install -d $(DESTDIR)$(PREFIX)/bin $(DESTDIR)$(PREFIX)/share/slabgap/examples $(DESTDIR)$(PREFIX)/share/doc/slabgap
+	install -d $(DESTDIR)$(PREFIX)/bin $(DESTDIR)$(PREFIX)/share/slabgap/examples $(DESTDIR)$(PREFIX)/share/slabgap/climate $(DESTDIR)$(PREFIX)/share/doc/slabgap
 	install -m 755 $(B)/slabgap $(DESTDIR)$(PREFIX)/bin/slabgap
 	install -m 644 share/examples/*.slab $(DESTDIR)$(PREFIX)/share/slabgap/examples
+	install -m 644 share/climate/*.csv $(DESTDIR)$(PREFIX)/share/slabgap/climate
 	install -m 644 README.md LICENSE docs/*.md $(DESTDIR)$(PREFIX)/share/doc/slabgap
 uninstall:
 	rm -rf $(DESTDIR)$(PREFIX)/bin/slabgap $(DESTDIR)$(PREFIX)/share/slabgap $(DESTDIR)$(PREFIX)/share/doc/slabgap

@@ -1,6 +1,7 @@
 #include "cmd/cmd.h"
 #include "export/report.h"
 #include "file/file.h"
+#include "file/weather_file.h"
 #include "job/document.h"
 #include <stdarg.h>
 #include <stdio.h>
@@ -108,9 +109,18 @@ static enum status read_job(const char *path, struct document **document, struct
     if (*document != NULL) {
         enum status read = document_job(*document, job, findings);
         status = status == STATUS_OK ? read : status;
+        if (status == STATUS_OK)
+            status = command_weather(path, job, findings);
     }
     text_free(&bytes);
     return status;
+}
+
+enum status command_weather(const char *path, struct job *job, struct finding_list *findings)
+{
+    if (!job_given(job, FIELD_climate_file))
+        return STATUS_OK;
+    return weather_file_read(path, job->climate_file, &job->weather, findings);
 }
 
 bool command_plan(const char *path, struct plan *plan)

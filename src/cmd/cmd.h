@@ -19,6 +19,8 @@ const struct command *command_find(const char *name);
 void command_help(struct text *out);
 
 /* ---- for the commands themselves ---- */
+/* Reads the weather file the job names, if it names one. */
+enum status command_weather(const char *path, struct job *job, struct finding_list *findings);
 /* Reads and plans a job. Findings go to standard error as FILE:line:column. Returns false when the
  * file cannot be read or a finding is an error (plan->findings then holds them). */
 bool command_plan(const char *path, struct plan *plan);

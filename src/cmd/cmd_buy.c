@@ -74,14 +74,15 @@ static int print_plan(const struct plan *plan)
     return code;
 }
 
-static int buy(const struct document *document, struct finding_list *findings)
+static int buy(const char *file, const struct document *document, struct finding_list *findings)
 {
     struct job job;
     struct plan plan = {0};
     int code = EXIT_WRONG;
 
     job_init(&job);
-    if (document_job(document, &job, findings) == STATUS_OK) {
+    if (document_job(document, &job, findings) == STATUS_OK &&
+        command_weather(file, &job, findings) == STATUS_OK) {
         enum status status = plan_make(&job, NULL, NULL, &plan);
         finding_append(findings, &plan.findings);
         if (status == STATUS_OK)
@@ -130,7 +131,7 @@ int command_buy(int count, char **words)
         return command_refuse("buy: name the job FILE, or type --length 300m --width 10mm --depth "
                               "10mm.");
     if (open_document(file, &document, &findings) && set_options(count, words, document, &findings))
-        code = buy(document, &findings);
+        code = buy(file, document, &findings);
     report_findings(&said, &findings, file);
     fputs(text_string(&said), stderr);
     text_free(&said);

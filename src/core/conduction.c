@@ -1,14 +1,10 @@
 #include "core/conduction.h"
 
 #include <math.h>
-#include <stdlib.h>
 
-static const double ZERO_K = 273.15;
 static const double STEFAN_BOLTZMANN = 5.670374419e-8; /* W/(m2 K4) */
 static const double SOIL_DEPTH_M = 5; /* zero flux there: deeper changes < 0.15 K */
-static const double SAME_YEAR_K = 0.01;
-enum { YEARS_MOST = 20, SLAB_CELLS = 8, BASE_CELLS = 3 };
-#define GAMMA 0.29289321881345254 /* 1 - 1/sqrt(2) */
+enum { BASE_CELLS = 3 };
 
 void conduction_slab_default(double thickness_m, struct conduction_slab *slab)
 {
@@ -55,117 +51,126 @@ static int add_soil(struct conduction_column *column, int at, double from_m,
     return at;
 }
 
-/* The matrix H/(g dt) + conduction + surface is the same in every stage: Thomas' elimination is
- * done once. */
+/* Weights of the slab's nodes in its mean (trapezium) and in top less bottom of the least-squares
+ * line. */
+static void set_weights(struct conduction_column *column, int cells)
+{
+    double thickness = column->depth_m[cells], square = 0;
+
+    for (int i = 0; i <= cells; i++) {
+        double arm = thickness / 2 - column->depth_m[i];
+        column->weight[i] = (i == 0 || i == cells ? 0.5 : 1.0) / cells;
+        square += column->weight[i] * arm * arm;
+    }
+    for (int i = 0; i <= cells; i++)
+        column->slope[i] =
+            column->weight[i] * (thickness / 2 - column->depth_m[i]) / square * thickness;
+}
+
+/* The matrix heat/(gamma step) + conduction is the same in every stage: Thomas' elimination is done
+ * once, from the bottom up, so that the surface is the last equation left. */
 static void factor(struct conduction_column *column)
 {
-    double above = 0;
-
-    for (int i = 0; i < column->count; i++) {
-        double diagonal = column->heat[i] / (GAMMA * column->step_s) +
-                          (i + 1 < column->count ? column->link[i] : 0) +
-                          (i > 0 ? column->link[i - 1] : column->surface);
-        column->lower[i] = i > 0 ? column->link[i - 1] * above : 0;
-        above = 1 / (diagonal - (i > 0 ? column->link[i - 1] * column->lower[i] : 0));
-        column->inverse[i] = above;
+    for (int i = column->count - 1; i >= 0; i--) {
+        double diagonal;
+        column->stored[i] = column->heat[i] / (CONDUCTION_GAMMA * column->step_s);
+        diagonal = column->stored[i];
+        if (i + 1 < column->count)
+            diagonal += column->link[i] - column->link[i] * column->up[i + 1];
+        if (i > 0)
+            diagonal += column->link[i - 1];
+        column->inverse[i] = 1 / diagonal;
+        column->up[i] = i > 0 ? column->link[i - 1] * column->inverse[i] : 0;
     }
 }
 
 void conduction_column_make(const struct conduction_slab *slab, int slab_cells, double step_s,
-                            double surface, struct conduction_column *column)
+                            struct conduction_column *column)
 {
     int at;
 
-    *column = (struct conduction_column){.step_s = step_s, .surface = surface};
+    *column = (struct conduction_column){.step_s = step_s};
     at = add_layer(column, 0, slab->thickness_m, slab_cells, &slab->concrete);
     column->slab_nodes = at + 1;
-    for (int i = 0; i <= at; i++)
-        column->weight[i] = (i == 0 || i == at ? 0.5 : 1.0) / slab_cells;
     if (slab->base_m > 0)
         at = add_layer(column, at, slab->base_m, BASE_CELLS, &slab->base);
     at = add_soil(column, at, column->depth_m[at], &slab->soil);
     column->count = at + 1;
+    set_weights(column, slab_cells);
     factor(column);
 }
 
-/* Solves the factored system in place. */
-static void solve(const struct conduction_column *column, double *x)
-{
-    for (int i = 1; i < column->count; i++)
-        x[i] += column->lower[i] * x[i - 1];
-    x[column->count - 1] *= column->inverse[column->count - 1];
-    for (int i = column->count - 2; i >= 0; i--)
-        x[i] = (x[i] + column->link[i] * x[i + 1]) * column->inverse[i];
-}
+/* ---- a step ---- */
 
-/* One stage from `base`: `guess` is the surface temperature tried first. Returns the flux taken. */
+/* One stage from `base`, the surface sought from `guess` on: top diagonal x T = rest + q(T) by two
+ * Newton steps (the first is exact for a linear flux, the second leaves less than 1e-6 K of the
+ * fourth power). Returns the flux taken, from the equation itself: the heat closes to rounding. */
 static double stage(const struct conduction_column *column, const double *base, double part,
                     double guess, conduction_flux *flux, const void *context, double *out)
 {
-    double taken = 0;
+    double diagonal = 1 / column->inverse[0], t = guess, slope;
 
+    for (int i = column->count - 1; i >= 0; i--)
+        out[i] = column->stored[i] * base[i] +
+                 (i + 1 < column->count ? column->up[i + 1] * out[i + 1] : 0);
     for (int pass = 0; pass < 2; pass++) {
-        double at_guess = flux(context, part, guess) + column->surface * guess;
-        for (int i = 0; i < column->count; i++)
-            out[i] = column->heat[i] / (GAMMA * column->step_s) * base[i];
-        out[0] += at_guess;
-        solve(column, out);
-        taken = at_guess - column->surface * out[0];
-        guess = out[0];
+        double q = flux(context, part, t, &slope);
+        t -= (diagonal * t - out[0] - q) / (diagonal - slope);
     }
-    return taken;
+    slope = diagonal * t - out[0];
+    out[0] = t;
+    for (int i = 1; i < column->count; i++)
+        out[i] = column->inverse[i] * out[i] + column->up[i] * out[i - 1];
+    return slope;
 }
 
-/* T1 = T0 + g dt K1; T = T0 + (1 - g) dt K1 + g dt K2: Alexander (1977), Diagonally implicit
- * Runge-Kutta methods for stiff ODEs, SIAM J. Numer. Anal. 14, order 2, L-stable. */
+/* T1 = T0 + g dt K1; T = T0 + (1 - g) dt K1 + g dt K2, g = 1 - 1/sqrt 2: Alexander (1977),
+ * Diagonally implicit Runge-Kutta methods for stiff ODEs, SIAM J. Numer. Anal. 14, order 2,
+ * L-stable. */
 double conduction_step(const struct conduction_column *column, double *temperature,
                        conduction_flux *flux, const void *context)
 {
+    const double g = CONDUCTION_GAMMA;
     double first[CONDUCTION_NODES_MOST], base[CONDUCTION_NODES_MOST];
-    double q1 = stage(column, temperature, GAMMA, temperature[0], flux, context, first), q2;
+    double q1 = stage(column, temperature, g, temperature[0], flux, context, first), q2;
 
     for (int i = 0; i < column->count; i++)
-        base[i] = temperature[i] + (1 - GAMMA) / GAMMA * (first[i] - temperature[i]);
+        base[i] = temperature[i] + (1 - g) / g * (first[i] - temperature[i]);
     q2 = stage(column, base, 1, first[0], flux, context, temperature);
-    return (1 - GAMMA) * q1 + GAMMA * q2;
+    return (1 - g) * q1 + g * q2;
+}
+
+/* ---- what is read off ---- */
+
+static double weighed(const double *weights, int count, const double *temperature)
+{
+    double sum = 0;
+
+    for (int i = 0; i < count; i++)
+        sum += weights[i] * temperature[i];
+    return sum;
 }
 
 double conduction_mean(const struct conduction_column *column, const double *temperature)
 {
-    double sum = 0;
-
-    for (int i = 0; i < column->slab_nodes; i++)
-        sum += column->weight[i] * temperature[i];
-    return sum;
+    return weighed(column->weight, column->slab_nodes, temperature);
 }
 
 double conduction_difference(const struct conduction_column *column, const double *temperature)
 {
-    double thickness = column->depth_m[column->slab_nodes - 1], middle = thickness / 2;
-    double moment = 0, square = 0;
-
-    for (int i = 0; i < column->slab_nodes; i++) {
-        double arm = middle - column->depth_m[i];
-        moment += column->weight[i] * arm * temperature[i];
-        square += column->weight[i] * arm * arm;
-    }
-    return moment / square * thickness;
+    return weighed(column->slope, column->slab_nodes, temperature);
 }
 
 double conduction_heat(const struct conduction_column *column, const double *temperature)
 {
-    double sum = 0;
-
-    for (int i = 0; i < column->count; i++)
-        sum += column->heat[i] * temperature[i];
-    return sum;
+    return weighed(column->heat, column->count, temperature);
 }
 
 /* ---- the surface ---- */
 
-/* hc = 5.6 + 3.95 v below 5 m/s, 7.6 v^0.78 above: McAdams as used for pavements (Barber
- * follow-ups; read in a retrieved text). */
-static double convection(double wind_m_s)
+/* hc = 5.6 + 3.95 v below 5 m/s, 7.6 v^0.78 above: McAdams as used for pavements (read in a
+ * retrieved text). */
+double conduction_film(double wind_m_s)
 {
     return wind_m_s < 5 ? 5.6 + 3.95 * wind_m_s : 7.6 * pow(wind_m_s, 0.78);
 }
@@ -182,181 +187,29 @@ static double sky_emissivity(double dew_c, double cloud)
 
 static double fourth(double celsius)
 {
-    double kelvin = celsius + ZERO_K;
+    double kelvin = celsius + CONDUCTION_ZERO_K;
 
-    return kelvin * kelvin * kelvin * kelvin;
+    return kelvin * kelvin * (kelvin * kelvin);
+}
+
+double conduction_radiation(const struct conduction_slab *slab)
+{
+    return slab->emissivity * STEFAN_BOLTZMANN;
+}
+
+/* a Q + e s e_sky Ta^4 + hc Ta. */
+double conduction_taken(const struct conduction_slab *slab, const struct climate_hour *hour)
+{
+    return slab->absorptivity * hour->sun_w_m2 +
+           conduction_radiation(slab) * sky_emissivity(hour->dew_c, hour->cloud) *
+               fourth(hour->air_c) +
+           conduction_film(hour->wind_m_s) * hour->air_c;
 }
 
 /* q = a Q + e s (Tsky^4 - Ts^4) + hc (Ta - Ts), Tsky^4 = e_sky Ta^4. */
 double conduction_surface_flux(const struct conduction_slab *slab, const struct climate_hour *hour,
                                double surface_c)
 {
-    double sky = sky_emissivity(hour->dew_c, hour->cloud) * fourth(hour->air_c);
-
-    return slab->absorptivity * hour->sun_w_m2 +
-           slab->emissivity * STEFAN_BOLTZMANN * (sky - fourth(surface_c)) +
-           convection(hour->wind_m_s) * (hour->air_c - surface_c);
-}
-
-/* ---- the year ---- */
-
-/* What a step needs of the weather, worked out once an hour: the flux is then cheap. */
-struct weather {
-    const struct conduction_slab *slab;
-    double taken[2];  /* absorbed sun + long wave from the sky + hc Ta, at both ends of the step */
-    double wind_w[2]; /* hc */
-};
-
-static void weather_end(const struct conduction_slab *slab, const struct climate_hour *hour,
-                        double *taken, double *wind_w)
-{
-    *wind_w = convection(hour->wind_m_s);
-    *taken = slab->absorptivity * hour->sun_w_m2 +
-             slab->emissivity * STEFAN_BOLTZMANN * sky_emissivity(hour->dew_c, hour->cloud) *
-                 fourth(hour->air_c) +
-             *wind_w * hour->air_c;
-}
-
-static double weather_flux(const void *context, double part, double surface_c)
-{
-    const struct weather *weather = context;
-    double taken = weather->taken[0] + part * (weather->taken[1] - weather->taken[0]);
-    double wind = weather->wind_w[0] + part * (weather->wind_w[1] - weather->wind_w[0]);
-
-    return taken - wind * surface_c -
-           weather->slab->emissivity * STEFAN_BOLTZMANN * fourth(surface_c);
-}
-
-static void note_hour(const struct conduction_column *column, const double *temperature, int hour,
-                      struct conduction_year *year)
-{
-    year->mean_c[hour] = (float)conduction_mean(column, temperature);
-    year->top_c[hour] = (float)temperature[0];
-    year->bottom_c[hour] = (float)temperature[column->slab_nodes - 1];
-    year->difference_k[hour] = (float)conduction_difference(column, temperature);
-}
-
-/* Mean of the weather's terms over the `span` hours that begin at `hour`. */
-static void weather_mean(const struct conduction_slab *slab,
-                         const struct climate_hour hours[CLIMATE_HOURS], int hour, int span,
-                         double *taken, double *wind_w)
-{
-    *taken = *wind_w = 0;
-    for (int i = 0; i < span; i++) {
-        double t, w;
-        weather_end(slab, &hours[(hour + i) % CLIMATE_HOURS], &t, &w);
-        *taken += t / span;
-        *wind_w += w / span;
-    }
-}
-
-/* One year from hour 0 in steps of `span` hours; node means over the year go to `means`. `year`
- * NULL: nothing is noted. */
-static void run_year(const struct conduction_column *column, int span,
-                     const struct conduction_slab *slab,
-                     const struct climate_hour hours[CLIMATE_HOURS], double *temperature,
-                     double *means, struct conduction_year *year)
-{
-    struct weather weather = {.slab = slab};
-
-    for (int i = 0; i < column->count; i++)
-        means[i] = 0;
-    weather_mean(slab, hours, 0, span, &weather.taken[1], &weather.wind_w[1]);
-    for (int h = 0; h < CLIMATE_HOURS; h += span) {
-        if (year != NULL)
-            note_hour(column, temperature, h, year);
-        weather.taken[0] = weather.taken[1];
-        weather.wind_w[0] = weather.wind_w[1];
-        weather_mean(slab, hours, h + span, span, &weather.taken[1], &weather.wind_w[1]);
-        conduction_step(column, temperature, weather_flux, &weather);
-        for (int i = 0; i < column->count; i++)
-            means[i] += temperature[i] * span / CLIMATE_HOURS;
-    }
-}
-
-static void find_extremes(struct conduction_year *year)
-{
-    year->coldest_c = year->day_k = -INFINITY;
-    year->hottest_c = year->night_k = -INFINITY;
-    year->coldest_c = INFINITY;
-    year->night_k = INFINITY;
-    for (int h = 0; h < CLIMATE_HOURS; h++) {
-        if (year->mean_c[h] < year->coldest_c) {
-            year->coldest_c = year->mean_c[h];
-            year->coldest_hour = h;
-        }
-        if (year->mean_c[h] > year->hottest_c) {
-            year->hottest_c = year->mean_c[h];
-            year->hottest_hour = h;
-        }
-        year->day_k = fmax(year->day_k, year->difference_k[h]);
-        year->night_k = fmin(year->night_k, year->difference_k[h]);
-    }
-}
-
-static double mean_air(const struct climate_hour hours[CLIMATE_HOURS])
-{
-    double sum = 0;
-
-    for (int h = 0; h < CLIMATE_HOURS; h++)
-        sum += hours[h].air_c;
-    return sum / CLIMATE_HOURS;
-}
-
-/* In the steady year nothing flows down on average, so the yearly means of all nodes are that of
- * the surface: between two years each node is moved there, which the ground alone would take years
- * for. */
-static void settle_ground(const struct conduction_column *column, const double *means,
-                          double *temperature)
-{
-    for (int i = column->slab_nodes; i < column->count; i++)
-        temperature[i] += means[0] - means[i];
-}
-
-/* Years in steps of six hours bring the ground near its steady year at a sixth of the cost. */
-static void warm_up(const struct conduction_slab *slab,
-                    const struct climate_hour hours[CLIMATE_HOURS], double surface,
-                    double *temperature)
-{
-    enum { SPAN = 6, YEARS = 4 };
-    double means[CONDUCTION_NODES_MOST];
-    struct conduction_column column;
-
-    conduction_column_make(slab, SLAB_CELLS, 3600.0 * SPAN, surface, &column);
-    for (int i = 0; i < column.count; i++)
-        temperature[i] = mean_air(hours);
-    for (int y = 0; y < YEARS; y++) {
-        run_year(&column, SPAN, slab, hours, temperature, means, NULL);
-        if (y + 1 < YEARS)
-            settle_ground(&column, means, temperature);
-    }
-}
-
-enum status conduction_year_make(const struct conduction_slab *slab,
-                                 const struct climate_hour hours[CLIMATE_HOURS],
-                                 struct conduction_year *year)
-{
-    const double usual_radiation = 4 * 0.9 * 5.670374419e-8 * 288.15 * 288.15 * 288.15;
-    double surface = convection(hours[0].wind_m_s) + usual_radiation;
-    double temperature[CONDUCTION_NODES_MOST], start[CONDUCTION_NODES_MOST];
-    double means[CONDUCTION_NODES_MOST];
-    struct conduction_column column;
-    bool same = false;
-
-    conduction_column_make(slab, SLAB_CELLS, 3600, surface, &column);
-    warm_up(slab, hours, surface, temperature);
-    for (year->spin_up_years = 0; !same && year->spin_up_years < YEARS_MOST;
-         year->spin_up_years++) {
-        double worst = 0;
-        for (int i = 0; i < column.count; i++)
-            start[i] = temperature[i];
-        run_year(&column, 1, slab, hours, temperature, means, year);
-        for (int i = 0; i < column.count; i++)
-            worst = fmax(worst, fabs(temperature[i] - start[i]));
-        same = worst < SAME_YEAR_K;
-        if (!same)
-            settle_ground(&column, means, temperature);
-    }
-    find_extremes(year);
-    return STATUS_OK;
+    return conduction_taken(slab, hour) - conduction_radiation(slab) * fourth(surface_c) -
+           conduction_film(hour->wind_m_s) * surface_c;
 }

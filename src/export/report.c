@@ -1,4 +1,5 @@
 #include "export/report.h"
+#include "export/climate_text.h"
 #include "export/answers.h"
 #include "export/lines.h"
 #include "base/utf8.h"
@@ -214,6 +215,17 @@ static void add_spacing(struct text *out, const struct plan *plan)
     text_add(out, "  Advice never shortens the spacing unless rules.counts says so.\n");
 }
 
+static void add_climate(struct text *out, const struct plan *plan)
+{
+    struct text words = {0};
+
+    text_add(&words, "Simulated from ");
+    climate_words(&words, &plan->job);
+    text_add(&words, ". Estimate and deck rule are for comparison, no bound.");
+    wrap_add(out, "  ", 2, text_string(&words), 78);
+    text_free(&words);
+}
+
 static void add_temperature(struct text *out, const struct plan *plan)
 {
     heading(out, "TEMPERATURE AND MOVEMENT");
@@ -222,9 +234,7 @@ static void add_temperature(struct text *out, const struct plan *plan)
         text_add(out,
                  "  Indoors: the air itself. The deck rule is for comparison, no bound here.\n");
     else if (strcmp(plan->temperature.basis, "simulation") == 0)
-        text_add(out,
-                 "  Simulated: five clear days in a row at each extreme of the air. Estimate and\n"
-                 "  deck rule are for comparison, no bound.\n");
+        add_climate(out, plan);
     add_results(out, plan, "shrinkage");
     add_results(out, plan, "movement");
     add_results(out, plan, "concrete");

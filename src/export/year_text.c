@@ -1,4 +1,6 @@
 #include "export/year_text.h"
+#include "export/climate_text.h"
+#include "export/wrap.h"
 #include <math.h>
 #include <stdio.h>
 #include <stdlib.h>
@@ -65,6 +67,13 @@ void year_day_words(struct text *out, const struct plan *plan, const struct year
         text_format(out, ", +%.1f %%", 100 * day->extension);
     else
         text_format(out, ", -%.1f %%", 100 * day->compression);
+}
+
+void year_basis(struct text *out, const struct plan *plan, const struct year *year)
+{
+    text_add(out, "Simulated from ");
+    climate_words(out, &plan->job);
+    text_add(out, year->scaled ? ", stretched to the slab temperatures you typed." : ".");
 }
 
 /* ---- the chart ---- */
@@ -251,13 +260,13 @@ static void add_months(struct text *out, const struct plan *plan, const struct y
     }
 }
 
-static void add_basis(struct text *out, const struct year *year)
+static void add_basis(struct text *out, const struct plan *plan, const struct year *year)
 {
-    if (year->scaled)
-        text_add(out, "  The simulated year, stretched to the slab temperatures you typed.\n");
-    else
-        text_add(out,
-                 "  The simulated year: five clear days in a row at each extreme of the air.\n");
+    struct text words = {0};
+
+    year_basis(&words, plan, year);
+    wrap_add(out, "  ", 2, text_string(&words), 78);
+    text_free(&words);
     if (year->drying_known)
         text_add(out, "  The first year from sealing, drying by its model.\n");
     else
@@ -277,7 +286,7 @@ void year_report(struct text *out, const struct plan *plan, const struct year *y
         "\n  Strain cycles in the year (from temperature): %.0f up to 2 %%, %.0f up to 5 %%, "
         "%.0f up\n  to 10 %%, %.0f above (ASTM E1049 rainflow).\n",
         year->cycles[0], year->cycles[1], year->cycles[2], year->cycles[3]);
-    add_basis(out, year);
+    add_basis(out, plan, year);
 }
 
 void year_csv(struct text *out, const struct year *year)

@@ -9,6 +9,8 @@
 void year_sentence(struct text *out, const struct plan *plan, const struct year *year);
 /* One day: "20 January: slab -8 to -1 degC, joint 11.1 to 11.4 mm, +13.8 %". */
 void year_day_words(struct text *out, const struct plan *plan, const struct year_day *day);
+/* The weather it is made from: one sentence. */
+void year_basis(struct text *out, const struct plan *plan, const struct year *year);
 /* `rows` lines of at most `columns` characters: the width over the year, the band of what the
  * sealant stands as ====, months below. `mark`: a day of the series to point at, -1 = none. */
 void year_chart(struct text *out, const struct plan *plan, const struct year *year, int columns,

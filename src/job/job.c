@@ -139,6 +139,7 @@ static void copy_fields(struct job *to, const struct job *from)
     to->pour_lines = NULL;
     to->joints = NULL;
     to->cracks = NULL;
+    to->weather = NULL;
     to->opening_count = to->opening_capacity = to->object_count = to->object_capacity = 0;
     to->edge_count = to->edge_capacity = to->pour_line_count = to->pour_line_capacity = 0;
     to->joint_count = to->joint_capacity = to->crack_count = to->crack_capacity = 0;
@@ -148,8 +149,10 @@ enum status job_copy(struct job *to, const struct job *from)
 {
     copy_fields(to, from);
     if (copy_rows(&to->outline, &from->outline) && copy_openings(to, from) &&
-        copy_cracks(to, from) && copy_edges(to, from) && copy_plain_lists(to, from))
+        copy_cracks(to, from) && copy_edges(to, from) && copy_plain_lists(to, from)) {
+        to->weather = weather_share(from->weather);
         return STATUS_OK;
+    }
     job_free(to);
     job_init(to);
     return STATUS_NO_MEMORY;
@@ -170,6 +173,7 @@ void job_free(struct job *job)
     free(job->pour_lines);
     free(job->joints);
     free(job->cracks);
+    weather_release(job->weather);
     copy_fields(job, job);
     job->has_pours = false;
 }

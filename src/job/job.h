@@ -7,6 +7,7 @@
 
 #include "base/finding.h"
 #include "base/unit.h"
+#include "core/weather.h"
 #include <stdbool.h>
 #include <stddef.h>
 
@@ -200,6 +201,7 @@ struct job {
     size_t joint_count, joint_capacity;
     struct crack *cracks;
     size_t crack_count, crack_capacity;
+    struct weather *weather; /* what climate.file holds, read by the file layer; NULL: not read */
 };
 
 /* An empty job: fixed defaults in, nothing given. */

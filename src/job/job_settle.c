@@ -140,13 +140,37 @@ static void check_order(const struct job *job, struct finding_list *findings, en
 /* Typed, but no answer of this version leans on it: said, never silent. */
 static void note_unused(struct job *job, struct finding_list *findings)
 {
-    if (job->given[FIELD_climate_file])
+    if (job->given[FIELD_climate_file] && job->weather == NULL)
         say(job, findings, SEVERITY_WARNING, FIELD_climate_file,
-            "weather files are not read by this version; the slab's year is made from the coldest "
-            "and hottest air. Type slab-coldest and slab-hottest if the file knows better.");
+            "the weather file was not read here; the slab's year is made from the coldest and "
+            "hottest air.");
     if (job->given[FIELD_takeoff_loss_per_day])
         say(job, findings, SEVERITY_NOTE, FIELD_takeoff_loss_per_day,
             "not counted by this version; put it into the waste.");
+}
+
+/* The record's air stands for the typed range. */
+static void settle_record(struct job *job, struct finding_list *findings, bool both)
+{
+    static const enum field_id unused[] = {FIELD_climate_air_coldest, FIELD_climate_air_hottest,
+                                           FIELD_climate_swing_cold, FIELD_climate_swing_hot};
+
+    if (both)
+        say(job, findings, SEVERITY_NOTE, FIELD_climate_file,
+            "gives only the course of the year; the typed slab temperatures win over it.");
+    for (size_t i = 0; !both && i < sizeof unused / sizeof *unused; i++)
+        if (job->given[unused[i]])
+            say(job, findings, SEVERITY_NOTE, unused[i],
+                "not used; the air of the weather file wins.");
+    if (job->given[FIELD_climate_sun] && job->weather->has_sun)
+        say(job, findings, SEVERITY_NOTE, FIELD_climate_sun,
+            "not used; the sun of the weather file wins.");
+    if (fabs(job->weather->latitude_deg - job->place_latitude) > 2)
+        say(job, findings, SEVERITY_WARNING, FIELD_place_latitude,
+            "the station of the weather file stands at %.1f deg; check the two.",
+            job->weather->latitude_deg);
+    job->climate_air_coldest = job->weather->coldest_c;
+    job->climate_air_hottest = job->weather->hottest_c;
 }
 
 static void settle_climate(struct job *job, struct finding_list *findings)
@@ -165,6 +189,8 @@ static void settle_climate(struct job *job, struct finding_list *findings)
         say(job, findings, SEVERITY_NOTE, FIELD_climate_air_coldest, words);
     if (both && job->given[FIELD_climate_air_hottest])
         say(job, findings, SEVERITY_NOTE, FIELD_climate_air_hottest, words);
+    if (job->weather != NULL)
+        settle_record(job, findings, both);
 }
 
 /* ---- sealing ---- */

@@ -190,7 +190,10 @@ struct plan_cache {
     bool has_year;
     struct climate_range range;
     struct conduction_slab slab;
+    uint64_t weather_mark; /* of the weather record; 0: none */
     double coldest_c, hottest_c, day_k, night_k;
+    int coldest_hour, hottest_hour; /* of the year, from 0 */
+    int coldest_year, hottest_year; /* of the record, from 0 */
 };
 struct plan_progress {
     bool (*go_on)(void *context, double share);

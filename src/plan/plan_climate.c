@@ -13,11 +13,12 @@ bool plan_simulated(const struct plan *plan)
            (isnan(job->climate_slab_coldest) || isnan(job->climate_slab_hottest));
 }
 
-struct climate_range plan_climate_range(const struct job *job)
+static struct climate_range range_of(const struct job *job)
 {
     double share = slab_exposure_share((enum slab_exposure)job->climate_exposure);
 
-    if (isfinite(job->climate_sun)) /* kWh/m2 of the hottest clear day, typed */
+    if (isfinite(job->climate_sun) && (job->weather == NULL || !job->weather->has_sun))
+        /* kWh/m2 of the hottest clear day, typed */
         share *= job->climate_sun * 3.6e6 / slab_sun_clear_most(job->place_latitude);
     return (struct climate_range){
         .air_coldest_c = job->climate_air_coldest,
@@ -39,40 +40,123 @@ bool plan_climate(const struct plan *plan, struct climate_range *range,
 
     if (job->climate_exposure == EXPOSURE_INDOOR)
         return false;
-    *range = plan_climate_range(job);
+    *range = range_of(job);
     conduction_slab_default(job->slab_thickness, slab);
     slab->absorptivity = job->climate_absorptivity;
     return true;
 }
 
-/* The slab's steady year, remembered for as long as nothing that enters it changes. */
-enum status plan_simulate(const struct plan *plan, struct plan_cache *cache, struct plan_cache *out)
+/* ---- the years of the weather ---- */
+
+static int count_years(const struct plan *plan)
 {
-    struct climate_hour *hours;
-    struct conduction_year *year;
+    return plan->job.weather != NULL ? plan->job.weather->years : 1;
+}
+
+static void fill_hours(const struct plan *plan, const struct climate_range *range, int year,
+                       struct climate_hour hours[CLIMATE_HOURS])
+{
+    if (plan->job.weather != NULL)
+        weather_year(plan->job.weather, year, range, hours);
+    else
+        climate_make(range, hours);
+}
+
+double plan_air_mean(const struct plan *plan, int day)
+{
+    struct climate_range range = range_of(&plan->job);
+
+    return plan->job.weather != NULL ? weather_day_mean(plan->job.weather, day)
+                                     : climate_day_mean(&range, day);
+}
+
+/* Takes a year's extremes into those of all. */
+static void note_year(const struct conduction_year *year, int index, struct plan_cache *out)
+{
+    if (index == 0 || year->coldest_c < out->coldest_c) {
+        out->coldest_c = year->coldest_c;
+        out->coldest_hour = year->coldest_hour;
+        out->coldest_year = index;
+    }
+    if (index == 0 || year->hottest_c > out->hottest_c) {
+        out->hottest_c = year->hottest_c;
+        out->hottest_hour = year->hottest_hour;
+        out->hottest_year = index;
+    }
+    out->day_k = index == 0 ? year->day_k : fmax(out->day_k, year->day_k);
+    out->night_k = index == 0 ? -year->night_k : fmax(out->night_k, -year->night_k);
+}
+
+/* Every year of the weather one after the other, the first as if it had always been. `shown` (may
+ * be NULL) gets the year of the widest range. */
+static enum status run_years(const struct plan *plan, struct plan_cache *out,
+                             struct climate_hour hours[CLIMATE_HOURS], struct conduction_year *year,
+                             struct conduction_year *shown)
+{
+    struct conduction_state state;
+    double widest = -INFINITY;
+    enum status status = STATUS_OK;
+
+    for (int y = 0; status == STATUS_OK && y < count_years(plan); y++) {
+        fill_hours(plan, &out->range, y, hours);
+        status = y == 0 ? conduction_year_steady(&out->slab, hours, &state, year)
+                        : conduction_year_next(&out->slab, hours, &state, year);
+        if (status != STATUS_OK)
+            break;
+        note_year(year, y, out);
+        if (shown != NULL && year->hottest_c - year->coldest_c > widest) {
+            widest = year->hottest_c - year->coldest_c;
+            *shown = *year;
+        }
+    }
+    return status;
+}
+
+static enum status run_all(const struct plan *plan, struct plan_cache *out,
+                           struct conduction_year *shown)
+{
+    struct climate_hour *hours = malloc(CLIMATE_HOURS * sizeof *hours);
+    struct conduction_year *year = malloc(sizeof *year);
     enum status status = STATUS_NO_MEMORY;
 
-    *out = (struct plan_cache){.has_year = true};
-    plan_climate(plan, &out->range, &out->slab);
-    if (cache != NULL && cache->has_year &&
-        memcmp(&cache->range, &out->range, sizeof out->range) == 0 &&
-        memcmp(&cache->slab, &out->slab, sizeof out->slab) == 0) {
-        *out = *cache;
-        return STATUS_OK;
-    }
-    hours = malloc(CLIMATE_HOURS * sizeof *hours);
-    year = malloc(sizeof *year);
-    if (hours != NULL && year != NULL) {
-        climate_make(&out->range, hours);
-        status = conduction_year_make(&out->slab, hours, year);
-        out->coldest_c = year->coldest_c;
-        out->hottest_c = year->hottest_c;
-        out->day_k = year->day_k;
-        out->night_k = -year->night_k;
-        if (status == STATUS_OK && cache != NULL)
-            *cache = *out;
-    }
+    if (hours != NULL && year != NULL)
+        status = run_years(plan, out, hours, year, shown);
     free(hours);
     free(year);
     return status;
+}
+
+/* ---- for the steps ---- */
+
+static bool same_input(const struct plan_cache *a, const struct plan_cache *b)
+{
+    return a->has_year && a->weather_mark == b->weather_mark &&
+           memcmp(&a->range, &b->range, sizeof a->range) == 0 &&
+           memcmp(&a->slab, &b->slab, sizeof a->slab) == 0;
+}
+
+enum status plan_simulate(const struct plan *plan, struct plan_cache *cache, struct plan_cache *out)
+{
+    enum status status;
+
+    *out = (struct plan_cache){.has_year = true};
+    out->weather_mark = plan->job.weather != NULL ? plan->job.weather->mark : 0;
+    plan_climate(plan, &out->range, &out->slab);
+    if (cache != NULL && same_input(cache, out)) {
+        *out = *cache;
+        return STATUS_OK;
+    }
+    status = run_all(plan, out, NULL);
+    if (status == STATUS_OK && cache != NULL)
+        *cache = *out;
+    return status;
+}
+
+enum status plan_slab_year(const struct plan *plan, struct conduction_year *year)
+{
+    struct plan_cache scratch = {0};
+
+    if (!plan_climate(plan, &scratch.range, &scratch.slab))
+        return STATUS_REFUSED;
+    return run_all(plan, &scratch, year);
 }

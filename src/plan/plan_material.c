@@ -109,7 +109,6 @@ static void set_zero_stress(struct plan *plan)
 {
     const double hydration_k = 10;
     const struct job *job = &plan->job;
-    struct climate_range range = plan_climate_range(job);
 
     plan->temperature.zero_stress_c = plan->temperature.crack_zero_c =
         job->pour_zero_stress_temperature;
@@ -118,9 +117,8 @@ static void set_zero_stress(struct plan *plan)
     plan->temperature.zero_stress_c = job->pour_placing_temperature;
     plan->temperature.crack_zero_c = job->pour_placing_temperature + hydration_k;
     if (job->pour_date.year != 0)
-        plan->temperature.zero_stress_c =
-            fmin(plan->temperature.zero_stress_c,
-                 climate_day_mean(&range, date_day_of_year(job->pour_date)));
+        plan->temperature.zero_stress_c = fmin(
+            plan->temperature.zero_stress_c, plan_air_mean(plan, date_day_of_year(job->pour_date)));
 }
 
 enum status plan_set_temperature(struct plan *plan, struct plan_cache *cache)

@@ -27,8 +27,6 @@ enum status plan_set_cracks(struct plan *plan);
 enum status plan_set_checks(struct plan *plan);
 
 /* ---- shared by the steps ---- */
-/* The air as the job gives it. */
-struct climate_range plan_climate_range(const struct job *job);
 /* The weather and the column of the simulation; false when the job needs none (indoors). */
 bool plan_climate(const struct plan *plan, struct climate_range *range,
                   struct conduction_slab *slab);
@@ -37,8 +35,13 @@ struct shrinkage_slab;
 void plan_shrinkage_slab(const struct plan *plan, struct shrinkage_slab *slab);
 /* Whether the slab's temperatures come from it. */
 bool plan_simulated(const struct plan *plan);
-/* The steady year: extremes and gradients into *out, from the cache while nothing that enters it
- * changes. */
+/* Mean air of a day of the year (from 0) in the job's weather. */
+double plan_air_mean(const struct plan *plan, int day);
+/* The slab's hours: of the made year, or of the record's year with the widest range.
+ * STATUS_REFUSED: indoors. */
+enum status plan_slab_year(const struct plan *plan, struct conduction_year *year);
+/* The year, or all years of a record: extremes and gradients into *out, from the cache while
+ * nothing that enters it changes. */
 enum status plan_simulate(const struct plan *plan, struct plan_cache *cache,
                           struct plan_cache *out);
 /* Movement of one joint between bars of lengths l1 and l2 (0 = no bar on that side) for a free

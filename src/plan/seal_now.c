@@ -72,22 +72,12 @@ static int hour_of_year(const struct plan *plan, const struct seal_now_input *in
 /* The simulated year for this job, or NULL. */
 static struct conduction_year *simulate(const struct plan *plan)
 {
-    struct climate_range range;
-    struct conduction_slab slab;
-    struct climate_hour *hours = malloc(CLIMATE_HOURS * sizeof *hours);
     struct conduction_year *year = malloc(sizeof *year);
 
-    if (hours == NULL || year == NULL || !plan_climate(plan, &range, &slab)) {
+    if (year != NULL && plan_slab_year(plan, year) != STATUS_OK) {
         free(year);
         year = NULL;
-    } else {
-        climate_make(&range, hours);
-        if (conduction_year_make(&slab, hours, year) != STATUS_OK) {
-            free(year);
-            year = NULL;
-        }
     }
-    free(hours);
     return year;
 }
 

@@ -119,7 +119,8 @@ static const struct why_row rows[] = {
      "rho c dT/dt = k T'', top: a Q + e s (Tsky^4 - Ts^4) + hc (Ta - Ts); extremes of the mean "
      "over h",
      "heat conduction, implicit; sky: Clark and Allen (1978); sun: FAO-56 (1998)",
-     "A made year: five clear days in a row at each extreme of the air. Typed ones win.",
+     "A made year (five clear days in a row at each extreme of the air) or a weather file. Typed "
+     "ones win.",
      {{"Ta min", "air coldest", "climate.air-coldest"},
       {"Ta max", "air hottest", "climate.air-hottest"},
       {"v", "wind", "climate.wind"},

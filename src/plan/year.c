@@ -30,7 +30,6 @@ const char *year_month_word(int day_of_year, int *day_of_month)
 
 struct slab_year {
     struct conduction_year year;
-    struct climate_hour hours[CLIMATE_HOURS];
     double strain[CLIMATE_HOURS];
     struct rainflow_cycle cycles[CLIMATE_HOURS];
 };
@@ -160,20 +159,16 @@ static enum status fill(const struct plan *plan, struct slab_year *slab, struct 
 
 enum status year_make(const struct plan *plan, struct year *year)
 {
-    struct climate_range range;
-    struct conduction_slab column;
     struct slab_year *slab;
     enum status status;
 
     *year = (struct year){0};
-    if (!plan_climate(plan, &range, &column) || isnan(plan->movement.open_m) ||
-        isnan(plan->seal.width_m))
+    if (isnan(plan->movement.open_m) || isnan(plan->seal.width_m))
         return STATUS_REFUSED;
     slab = malloc(sizeof *slab);
     if (slab == NULL)
         return STATUS_NO_MEMORY;
-    climate_make(&range, slab->hours);
-    status = conduction_year_make(&column, slab->hours, &slab->year);
+    status = plan_slab_year(plan, &slab->year);
     year->scaled = !plan_simulated(plan) || isfinite(plan->job.climate_slab_coldest) ||
                    isfinite(plan->job.climate_slab_hottest);
     if (status == STATUS_OK && year->scaled)

@@ -43,12 +43,14 @@ void app_free(struct app *app)
     finding_free(&app->findings);
     history_free(&app->history);
     year_drop(app);
+    weather_drop(app);
     free(app);
 }
 
 enum status app_load(struct app *app, const char *bytes, size_t count, const char *path,
                      bool example)
 {
+    weather_drop(app); /* it may have changed on the disk */
     if (!edit_replace(app, bytes, count, path != NULL ? path : "", example, "opened"))
         return STATUS_NO_MEMORY;
     app->history.saved = path != NULL ? app->history.now : (size_t)-1;

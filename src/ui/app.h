@@ -32,6 +32,14 @@ struct plan_maker {
     void *context;
 };
 
+/* Who reads weather files for the form. Without one a job that names a file says it was not read.
+ */
+struct weather_source {
+    /* As weather_file_read(). */
+    enum status (*read)(const char *job_path, const char *name, struct weather **weather,
+                        struct finding_list *findings);
+};
+
 /* `today` is the day shown; year 0 shows none. NULL without memory. */
 struct app *app_make(struct date today);
 void app_free(struct app *app);
@@ -50,6 +58,7 @@ bool app_takes_text(const struct app *app);
 void app_draw(const struct app *app, struct canvas *canvas);
 /* The next thing to do outside; false when there is none. */
 void app_set_maker(struct app *app, const struct plan_maker *maker);
+void app_set_weather(struct app *app, const struct weather_source *source);
 /* Whether a plan is being made; the answers shown are those of the job before. */
 bool app_working(const struct app *app);
 /* The plan that was to come later; the form owns it then. */

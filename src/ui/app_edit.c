@@ -27,6 +27,8 @@ static enum status read_job(struct app *app, struct job *raw)
     struct finding_list settled = {0};
     struct job shown;
 
+    if (status == STATUS_OK)
+        status = weather_attach(app, raw);
     if (status == STATUS_NO_MEMORY || job_copy(&shown, raw) != STATUS_OK)
         return STATUS_NO_MEMORY;
     job_settle(&shown, &settled);

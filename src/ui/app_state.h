@@ -90,6 +90,12 @@ struct app {
     struct plan plan;        /* the last good one */
     struct plan_cache cache; /* of plans the form makes itself */
     struct plan_maker maker;
+    struct weather_source source;
+    struct { /* the weather file as it was last read */
+        char name[TITLE_MOST], job_path[PATH_MOST];
+        struct weather *record; /* NULL: none, or refused */
+        struct finding_list findings;
+    } weather;
     bool working;                 /* a plan is being made elsewhere */
     bool has_plan, stale;         /* stale: the document asks for something that was refused */
     struct finding_list findings; /* of the document as it stands */
@@ -152,6 +158,11 @@ void edit_undo(struct app *app, int step); /* -1 undo, 1 redo */
 const char *edit_first_error(const struct finding_list *findings);
 void edit_recompute(struct app *app);
 void edit_stop(struct app *app); /* of a plan that is being made */
+/* ---- app_weather.c ---- */
+/* Gives the job the record it names, read anew only when the name or the job's place is another.
+ * STATUS_REFUSED: it cannot be used, the findings of the form say why. */
+enum status weather_attach(struct app *app, struct job *job);
+void weather_drop(struct app *app); /* the next job reads its file anew */
 /* ---- page_year.c ---- */
 void year_drop(struct app *app); /* the year shown is of an older plan */
 /* Whether there is something not saved. */

@@ -337,6 +337,7 @@ static bool fill_row(struct app *app, double width, struct buy_row *row)
 
     job_init(&job);
     if (plan != NULL && document_job(app->document, &job, &findings) == STATUS_OK) {
+        job.weather = weather_share(app->weather.record);
         job.sealant_width = width;
         job.given[FIELD_sealant_width] = true;
         job.sealant_depth = NAN; /* by kind: a depth typed for one width does not suit another */

@@ -69,9 +69,9 @@ static void draw_year(const struct app *app, struct canvas *canvas)
     text_clear(&words);
     year_day_words(&words, &app->plan, &app->year->days[app->year_day]);
     canvas_words(canvas, rows + 2, 8, app->columns - 8, STYLE_PLAIN, text_string(&words));
-    canvas_words(canvas, rows + 3, 8, app->columns - 8, STYLE_PLAIN,
-                 app->year->scaled ? "The simulated year, stretched to the slab year you typed."
-                                   : "The simulated year: five clear days at each extreme.");
+    text_clear(&words);
+    year_basis(&words, &app->plan, app->year);
+    canvas_words(canvas, rows + 3, 8, app->columns - 8, STYLE_PLAIN, text_string(&words));
     text_free(&words);
 }
 

@@ -201,6 +201,8 @@ void row_show_year(const struct app *app, const struct entry *row, struct text *
         cold = app->plan.temperature.coldest_c;
     if (slab && !isfinite(hot) && app->has_plan)
         hot = app->plan.temperature.hottest_c;
+    if (!slab && app->job.weather != NULL)
+        text_add(out, "file ");
     if (!isfinite(cold) || !isfinite(hot)) {
         text_add(out, "from the air");
         return;

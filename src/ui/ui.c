@@ -1,6 +1,7 @@
 /* Starts the form on a file, or on the example. */
 #include "ui/ui.h"
 #include "file/file.h"
+#include "file/weather_file.h"
 #include "ui/terminal.h"
 #include <stdio.h>
 #include <time.h>
@@ -60,11 +61,13 @@ static int load(struct app *app, const char *path)
 
 int ui_run(const char *path)
 {
+    const struct weather_source weather = {weather_file_read};
     struct app *app = app_make(today());
     int code = 0;
 
     if (app == NULL)
         return complain("slabgap", STATUS_NO_MEMORY);
+    app_set_weather(app, &weather);
     if (path != NULL)
         code = load(app, path);
     else

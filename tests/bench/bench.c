@@ -220,7 +220,7 @@ static void bench_year(void)
     double ours[RUNS], reference[RUNS];
 
     conduction_slab_default(0.2, &slab);
-    conduction_column_make(&slab, 8, 3600, 19, &column);
+    conduction_column_make(&slab, 8, 3600, &column);
     for (int i = 0; i < RUNS; i++) {
         double begin = now_ms();
         climate_make(&range, hours);
