@@ -186,9 +186,9 @@ static void settle_climate(struct job *job, struct finding_list *findings)
     check_order(job, findings, FIELD_climate_air_coldest, job->climate_air_coldest,
                 job->climate_air_hottest);
     if (both && job->given[FIELD_climate_air_coldest])
-        say(job, findings, SEVERITY_NOTE, FIELD_climate_air_coldest, words);
+        say(job, findings, SEVERITY_NOTE, FIELD_climate_air_coldest, "%s", words);
     if (both && job->given[FIELD_climate_air_hottest])
-        say(job, findings, SEVERITY_NOTE, FIELD_climate_air_hottest, words);
+        say(job, findings, SEVERITY_NOTE, FIELD_climate_air_hottest, "%s", words);
     if (job->weather != NULL)
         settle_record(job, findings, both);
 }
