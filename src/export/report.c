@@ -223,6 +223,7 @@ static void add_climate(struct text *out, const struct plan *plan)
     climate_words(&words, &plan->job);
     text_add(&words, ". Estimate and deck rule are for comparison, no bound.");
     wrap_add(out, "  ", 2, text_string(&words), 78);
+    out->failed = out->failed || words.failed;
     text_free(&words);
 }
 

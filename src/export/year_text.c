@@ -266,6 +266,7 @@ static void add_basis(struct text *out, const struct plan *plan, const struct ye
 
     year_basis(&words, plan, year);
     wrap_add(out, "  ", 2, text_string(&words), 78);
+    out->failed = out->failed || words.failed;
     text_free(&words);
     if (year->drying_known)
         text_add(out, "  The first year from sealing, drying by its model.\n");
