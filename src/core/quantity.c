@@ -189,6 +189,18 @@ enum status quantity_packages(const double *sizes_m3, size_t count, double amoun
     return STATUS_OK;
 }
 
+double quantity_hours(double length_m, double pace_m_s, double hands)
+{
+    double pace = fmax(pace_m_s, 1e-9) * fmax(hands, 1);
+
+    return fmax(length_m, 0) / pace / 3600;
+}
+
+double quantity_pot_life(double pot_life_s, double temperature_c)
+{
+    return fmax(pot_life_s, 0) * exp2((23 - temperature_c) / 10);
+}
+
 int quantity_boxes(int packages, int box)
 {
     if (packages <= 0)

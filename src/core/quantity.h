@@ -20,6 +20,11 @@ enum { QUANTITY_SIZE_MOST = 8 };
  * QUANTITY_SIZE_MOST sizes or more than a million packages. */
 enum status quantity_packages(const double *sizes_m3, size_t count, double amount_m3, int *counts,
                               double *left_over_m3);
+/* Hours for so many metres with so many hands or tools at a pace of one, m/s. */
+double quantity_hours(double length_m, double pace_m_s, double hands);
+/* Time to use a mixed batch at another temperature, s: half for every 10 K above 23 degC, double
+ * for every 10 K below. A rule of thumb for curing resins, from memory. */
+double quantity_pot_life(double pot_life_s, double temperature_c);
 /* Whole boxes of so many packages; box 1 or less: the packages. */
 int quantity_boxes(int packages, int box);
 /* Saw cut depth: h/4 on unbound bases, h/3 on stabilised or asphalt ones; `range`: h/4, h/3. Not

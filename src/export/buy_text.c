@@ -4,6 +4,7 @@
 #include "job/field.h"
 #include "job/table.h"
 #include <math.h>
+#include <stdio.h>
 
 enum { LABEL = 30, VALUE = 16 };
 
@@ -43,8 +44,22 @@ static void add_amounts(struct text *out, const struct plan *plan)
     if (plan->quantities.sealant_cusps_m3 > 0)
         line(out, plan, "beside the round rod", plan->quantities.sealant_cusps_m3, QUANTITY_VOLUME,
              job->takeoff_rod_cusps ? "counted" : "not counted");
-    line(out, plan, "waste", plan->quantities.sealant_order_m3 - counted, QUANTITY_VOLUME, "");
+    line(out, plan, "waste", plan->quantities.sealant_order_m3 - plan->quantities.loss_m3 - counted,
+         QUANTITY_VOLUME, "");
+    if (plan->quantities.loss_m3 > 0)
+        line(out, plan, "lost with the days", plan->quantities.loss_m3, QUANTITY_VOLUME, "");
     line(out, plan, "to order", plan->quantities.sealant_order_m3, QUANTITY_VOLUME, "");
+}
+
+static void add_size(struct text *out, const struct plan *plan, const char *what, double size_m,
+                     double length_m, const char *remark)
+{
+    struct text words = {0};
+
+    text_format(&words, "%s ", what);
+    unit_show(&words, size_m, QUANTITY_SMALL_LENGTH, units_of(plan));
+    line(out, plan, text_string(&words), length_m, QUANTITY_LENGTH, remark);
+    text_free(&words);
 }
 
 static void add_packages(struct text *out, const struct plan *plan)
@@ -64,31 +79,51 @@ static void add_packages(struct text *out, const struct plan *plan)
     line(out, plan, "left over if all is wasted", total - plan->quantities.sealant_order_m3,
          QUANTITY_VOLUME, "");
     line(out, plan, "left over if nothing is",
-         total - plan->quantities.sealant_order_m3 / (1 + plan->job.takeoff_waste), QUANTITY_VOLUME,
-         "");
+         total - (plan->quantities.sealant_order_m3 - plan->quantities.loss_m3) /
+                     (1 + plan->job.takeoff_waste),
+         QUANTITY_VOLUME, "");
     if (plan->quantities.boxes > 0)
         text_format(out, "  %-*s%*d\n", LABEL, "boxes", VALUE, plan->quantities.boxes);
-    for (size_t i = 0; i < plan->quantities.rod_count; i++) {
-        struct text words = {0};
-        text_add(&words, "rod ");
-        unit_show(&words, plan->quantities.rods[i].diameter_m, QUANTITY_SMALL_LENGTH,
-                  units_of(plan));
-        line(out, plan, text_string(&words), plan->quantities.rods[i].length_m, QUANTITY_LENGTH,
-             "5 % more than the joint");
-        text_free(&words);
-    }
+    for (size_t i = 0; i < plan->quantities.rod_count; i++)
+        add_size(out, plan, "rod", plan->quantities.rods[i].diameter_m,
+                 plan->quantities.rods[i].length_m, "5 % more than the joint");
+    if (isfinite(plan->quantities.tape_m))
+        line(out, plan, "bond-breaker tape", plan->quantities.tape_m, QUANTITY_LENGTH,
+             "as wide as the joint, never up the sides");
 }
 
 /* What goes over the soft board is no part of the order above: it may be another colour or kind. */
 static void add_boards(struct text *out, const struct plan *plan)
 {
-    if (isnan(plan->quantities.board_order_m3))
-        return;
-    text_add_char(out, '\n', 1);
-    line(out, plan, "over soft board, besides", plan->quantities.board_m, QUANTITY_LENGTH,
-         "walls, objects, expansion joints");
-    line(out, plan, "to order for it, waste in", plan->quantities.board_order_m3, QUANTITY_VOLUME,
-         "not in the packs above");
+    for (size_t i = 0; i < plan->quantities.board_count; i++)
+        add_size(out, plan, "soft board", plan->quantities.boards[i].thickness_m,
+                 plan->quantities.boards[i].length_m, "as deep as the slab");
+    if (isfinite(plan->quantities.board_order_m3))
+        line(out, plan, "sealant over the board", plan->quantities.board_order_m3, QUANTITY_VOLUME,
+             "besides, not in the packs above");
+}
+
+static void add_count(struct text *out, const char *label, double count, int decimals,
+                      const char *remark)
+{
+    text_format(out, "  %-*s%*.*f%s%s\n", LABEL, label, VALUE, decimals, count,
+                remark[0] != '\0' ? "   " : "", remark);
+}
+
+static void add_hours(struct text *out, const struct plan *plan)
+{
+    for (size_t i = 0; i < plan->quantities.work_count; i++) {
+        const struct plan_work *work = &plan->quantities.works[i];
+        char label[40];
+        snprintf(label, sizeof label, "hours, %.0f x %s", work->tools, work->name);
+        add_count(out, label, work->hours, 1, work->slowest ? "the slowest" : "");
+    }
+    add_count(out, "working days", plan->quantities.days, 0, "");
+    if (isfinite(plan->quantities.batch_most_m3))
+        line(out, plan, "mix at once, at most", plan->quantities.batch_most_m3, QUANTITY_VOLUME,
+             "by the pot life at the slab's temperature then");
+    if (isfinite(plan->quantities.cost))
+        add_count(out, "cost of what has a price", plan->quantities.cost, 2, "");
 }
 
 static void add_strip(struct text *out, const struct plan *plan)
@@ -118,6 +153,7 @@ void buy_report(struct text *out, const struct plan *plan)
     add_packages(out, plan);
     add_boards(out, plan);
     text_add_char(out, '\n', 1);
-    wrap_add(out, "NOT IN", 8, "it: primer, and the board itself. The maker's data sheet wins.",
-             78);
+    add_hours(out, plan);
+    text_add_char(out, '\n', 1);
+    wrap_add(out, "NOT IN", 8, "it: primer, if the maker asks for one. The data sheet wins.", 78);
 }

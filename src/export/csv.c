@@ -88,6 +88,9 @@ static void add_quantities(struct text *out, const struct plan *plan)
     for (size_t i = 0; i < plan->quantities.package_count; i++)
         text_format(out, "packages of %.9g l,%d\r\n", 1000 * plan->quantities.packages[i].size_m3,
                     plan->quantities.packages[i].count);
+    for (size_t i = 0; i < plan->quantities.board_count; i++)
+        text_format(out, "board_m of thickness %.9g m,%.9g\r\n",
+                    plan->quantities.boards[i].thickness_m, plan->quantities.boards[i].length_m);
     for (size_t i = 0; i < plan->quantities.rod_count; i++)
         text_format(out, "rod_m of diameter %.9g m,%.9g\r\n", plan->quantities.rods[i].diameter_m,
                     plan->quantities.rods[i].length_m);

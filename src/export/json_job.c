@@ -35,11 +35,11 @@ static void add_words(struct json *json, const char *key, const char *words, uns
     json_close(json, ']');
 }
 
-static void add_packages(struct json *json, const char *key, const struct packages *packages)
+static void add_numbers(struct json *json, const char *key, const struct numbers *numbers)
 {
     json_open(json, key, '[');
-    for (size_t i = 0; i < packages->count; i++)
-        json_number(json, NULL, packages->size[i]);
+    for (size_t i = 0; i < numbers->count; i++)
+        json_number(json, NULL, numbers->items[i]);
     json_close(json, ']');
 }
 
@@ -100,8 +100,8 @@ static void add_field(struct json *json, const struct job *job, enum field_id id
     case FIELD_CLASS:
         json_string(json, key, ((const struct movement_class *)place)->word);
         break;
-    case FIELD_PACKAGES:
-        add_packages(json, key, place);
+    case FIELD_NUMBERS:
+        add_numbers(json, key, place);
         break;
     case FIELD_COUNTS:
         add_words(json, key, COUNTS_WORDS, ((const struct counts *)place)->bits);
@@ -179,7 +179,7 @@ static const char *quantity_word(const struct field *field)
         [FIELD_STRENGTH] = "strength",
         [FIELD_AGGREGATE] = "aggregate",
         [FIELD_CLASS] = "movement class",
-        [FIELD_PACKAGES] = "list of volumes",
+        [FIELD_NUMBERS] = "",
         [FIELD_COUNTS] = "list of words",
         [FIELD_POINT] = "point",
         [FIELD_SIZE] = "size",
@@ -188,7 +188,7 @@ static const char *quantity_word(const struct field *field)
         [FIELD_LINE] = "line",
     };
 
-    return field->type == FIELD_NUMBER ? numbers[field->quantity] : types[field->type];
+    return types[field->type][0] == '\0' ? numbers[field->quantity] : types[field->type];
 }
 
 /* The number a limit or default is in the field's own metric unit; null when there is none. */

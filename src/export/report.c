@@ -91,7 +91,7 @@ static void add_job(struct text *out, const struct plan *plan)
     add_fields(out, plan, "ASSUMED (nothing was typed)", plan->assumed, plan->assumed_count);
 }
 
-enum { COLUMNS_MOST = 8 };
+enum { COLUMNS_MOST = 12 };
 
 /* One cell of a list as text. */
 static void cell(struct text *out, const struct list *list, const char *key,
@@ -343,10 +343,23 @@ static void add_restraint(struct text *out, const struct plan *plan)
                   "  base, swelling and grit lower it.\n");
 }
 
+static void add_other_widths(struct text *out, const struct plan *plan)
+{
+    static const char *const keys[] = {"width_m", "depth_m", "extension", "compression", "verdict",
+                                       "when_n3", "order_l", "packs",     "rod_m",       NULL};
+
+    if (plan->quantities.width_count < 2)
+        return;
+    text_add(out, "  The same joints at other widths (depth by the kind of sealant):\n");
+    add_list(out, plan, "quantities.other_widths", keys, WIDTH_MOST);
+}
+
 static void add_quantities(struct text *out, const struct plan *plan)
 {
     static const char *const packs[] = {"size_l", "count", NULL};
     static const char *const rods[] = {"diameter_m", "length_m", NULL};
+    static const char *const boards[] = {"thickness_m", "length_m", "area_m2", NULL};
+    static const char *const work[] = {"name", "pace_m_s", "tools", "hours", "slowest", NULL};
 
     heading(out, "QUANTITIES");
     add_results(out, plan, "quantities");
@@ -357,9 +370,14 @@ static void add_quantities(struct text *out, const struct plan *plan)
                     plan->quantities.boxes);
     if (plan->quantities.rod_count > 0)
         add_list(out, plan, "quantities.rod_m", rods, PACKAGE_KINDS);
+    if (plan->quantities.board_count > 0)
+        add_list(out, plan, "quantities.boards", boards, BOARD_MOST);
+    if (plan->quantities.work_count > 0)
+        add_list(out, plan, "quantities.work", work, WORK_MOST);
     if (plan->quantities.isolation_m + plan->quantities.expansion_m > 0)
         text_add(out, "  The order and its packs are for cut joints and pour ends; what goes over\n"
                       "  the soft board comes on top.\n");
+    add_other_widths(out, plan);
     add_results(out, plan, "steel");
     add_restraint(out, plan);
 }

@@ -34,6 +34,10 @@
 #define TIME(id, section, key, words, group, label, help, source)                                  \
     ROW(FIELD_TIME, section, key, QUANTITY_NONE, 0, 0, NAN, NULL, words, group, label, help,       \
         source, id)
+#define NUMBERS(id, section, key, quantity, least, most, initial, words, group, label, help,       \
+                source)                                                                            \
+    ROW(FIELD_NUMBERS, section, key, quantity, least, most, initial, NULL, words, group, label,    \
+        help, source, id)
 #define SPECIAL(id, type, section, key, words, group, label, help, source)                         \
     ROW(FIELD_##type, section, key, QUANTITY_NONE, 0, 0, NAN, NULL, words, group, label, help,     \
         source, id)
@@ -185,14 +189,22 @@ static void add_bar(struct text *out, const struct bar *bar, enum unit_system un
     add(out, bar->spacing, QUANTITY_SMALL_LENGTH, units);
 }
 
-static void add_packages(struct text *out, const struct packages *packages, bool write)
+/* Volumes are packs and stay in millilitres, as they are sold. */
+static void add_numbers(struct text *out, const struct field *field, const struct numbers *numbers,
+                        enum unit_system units, bool write)
 {
-    for (size_t i = 0; i < packages->count; i++) {
+    bool pack = field->quantity == QUANTITY_VOLUME;
+
+    if (numbers->count == 0)
+        text_add(out, write ? "" : field->words);
+    for (size_t i = 0; i < numbers->count; i++) {
         text_add(out, i > 0 ? ", " : "");
-        if (write)
-            unit_write_as(out, packages->size[i], QUANTITY_VOLUME, "ml");
+        if (write && pack)
+            unit_write_as(out, numbers->items[i], field->quantity, "ml");
+        else if (write)
+            unit_write(out, numbers->items[i], field->quantity, units);
         else
-            unit_show(out, packages->size[i], QUANTITY_VOLUME, UNITS_METRIC);
+            unit_show(out, numbers->items[i], field->quantity, pack ? UNITS_METRIC : units);
     }
 }
 
@@ -291,8 +303,8 @@ static void add_value(struct text *out, const struct job *job, enum field_id id,
     case FIELD_CLASS:
         text_add(out, ((const struct movement_class *)place)->word);
         break;
-    case FIELD_PACKAGES:
-        add_packages(out, place, write);
+    case FIELD_NUMBERS:
+        add_numbers(out, field, place, units, write);
         break;
     case FIELD_COUNTS:
         add_counts(out, ((const struct counts *)place)->bits);

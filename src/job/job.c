@@ -25,8 +25,9 @@ static void set_initial(struct job *job, const struct field *field)
     case FIELD_CLASS:
         *(struct movement_class *)place = (struct movement_class){0.25, 0.25, "25"};
         break;
-    case FIELD_PACKAGES:
-        *(struct packages *)place = (struct packages){{600 / 1e6}, 1};
+    case FIELD_NUMBERS:
+        if (isfinite(field->initial))
+            *(struct numbers *)place = (struct numbers){{field->initial}, 1};
         break;
     default:
         break; /* nothing given is all zero */

@@ -64,6 +64,8 @@ enum { EXPOSURE_OPEN, EXPOSURE_HALF, EXPOSURE_SHADE, EXPOSURE_INDOOR };
 enum { MOVEMENT_FRICTION, MOVEMENT_FACTOR };
 enum { SEALING_NEW, SEALING_RESEAL };
 enum { SEALING_AT_SEALING, SEALING_MEAN_WIDTH };
+enum { BACKING_ROD, BACKING_TAPE, BACKING_NONE };
+enum { TOOL_GUN, TOOL_PUMP, TOOL_MELTER };
 enum { CEMENT_N, CEMENT_S, CEMENT_R };
 enum { AGENCY_NONE, AGENCY_UFC, AGENCY_SUDAS, AGENCY_ILLINOIS, AGENCY_IRC };
 
@@ -93,9 +95,9 @@ struct movement_class { /* CLASS: ratios of the width at sealing */
     double extension, compression;
     char word[16]; /* "25", "100/50" */
 };
-enum { PACKAGE_MOST = 8 };
-struct packages {              /* PACKAGES */
-    double size[PACKAGE_MOST]; /* m3, in the order typed */
+enum { NUMBERS_MOST = 8 };
+struct numbers { /* NUMBERS: SI, in the order typed */
+    double items[NUMBERS_MOST];
     size_t count;
 };
 struct counts { /* COUNTS: bits */
@@ -115,6 +117,7 @@ enum field_id {
 #define TEXT(id, ...) FIELD_##id,
 #define DATE(id, ...) FIELD_##id,
 #define TIME(id, ...) FIELD_##id,
+#define NUMBERS(id, ...) FIELD_##id,
 #define SPECIAL(id, ...) FIELD_##id,
 #include "job/fields.def"
     FIELD_COUNT
@@ -179,12 +182,12 @@ struct job {
 #define TEXT(id, ...) char id[TITLE_MOST];
 #define DATE(id, ...) struct date id;
 #define TIME(id, ...) struct time_of_day id;
+#define NUMBERS(id, ...) struct numbers id;
 #define SPECIAL(id, type, ...) SPECIAL_TYPE_##type id;
 #define SPECIAL_TYPE_BAR struct bar
 #define SPECIAL_TYPE_STRENGTH struct strength
 #define SPECIAL_TYPE_AGGREGATE struct aggregate
 #define SPECIAL_TYPE_CLASS struct movement_class
-#define SPECIAL_TYPE_PACKAGES struct packages
 #define SPECIAL_TYPE_COUNTS struct counts
 #include "job/fields.def"
     struct rows outline;

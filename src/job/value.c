@@ -432,7 +432,7 @@ union scratch {
     struct strength strength;
     struct aggregate aggregate;
     struct movement_class movement_class;
-    struct packages packages;
+    struct numbers numbers;
     struct counts counts;
 };
 
@@ -485,8 +485,8 @@ bool value_read(const struct value *value, const struct field *field, void *plac
         return read_class(value, place);
     case FIELD_BAR:
         return value_read_bar(value, place);
-    case FIELD_PACKAGES:
-        return value_read_packages(value, place);
+    case FIELD_NUMBERS:
+        return value_read_numbers(value, field, place);
     case FIELD_COUNTS:
         return value_read_counts(value, place);
     default:

@@ -294,27 +294,22 @@ bool value_read_bar(const struct value *value, struct bar *place)
     return true;
 }
 
-bool value_read_packages(const struct value *value, struct packages *place)
+bool value_read_numbers(const struct value *value, const struct field *field, struct numbers *place)
 {
-    static const struct field limits = {.type = FIELD_NUMBER,
-                                        .label = "A pack",
-                                        .quantity = QUANTITY_VOLUME,
-                                        .least = 1e-5,
-                                        .most = 2};
     struct pieces pieces = {0};
-    struct packages packages = {0};
+    struct numbers numbers = {0};
     bool good = split(value, &pieces);
 
-    if (good && pieces.count > PACKAGE_MOST) {
-        value_refuse(value, 0, "8", "names too many sizes; at most 8");
+    if (good && pieces.count > NUMBERS_MOST) {
+        value_refuse(value, 0, "8", "names too many; at most 8");
         good = false;
     }
-    good = good && read_pieces(value, pieces.items, pieces.count, QUANTITY_VOLUME, packages.size);
+    good = good && read_pieces(value, pieces.items, pieces.count, field->quantity, numbers.items);
     for (size_t i = 0; good && i < pieces.count; i++)
-        good = value_within(value, &limits, packages.size[i]);
-    packages.count = pieces.count;
+        good = value_within(value, field, numbers.items[i]);
+    numbers.count = pieces.count;
     if (good)
-        *place = packages;
+        *place = numbers;
     free(pieces.items);
     return good;
 }

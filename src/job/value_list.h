@@ -5,7 +5,9 @@
 #include "job/value.h"
 
 bool value_read_bar(const struct value *value, struct bar *place);
-bool value_read_packages(const struct value *value, struct packages *place);
+/* One to eight numbers, each within the field's limits. */
+bool value_read_numbers(const struct value *value, const struct field *field,
+                        struct numbers *place);
 bool value_read_counts(const struct value *value, struct counts *place);
 /* Whether a number lies within the field's limits; else an error finding. */
 bool value_within(const struct value *value, const struct field *field, double si);

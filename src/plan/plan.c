@@ -55,6 +55,9 @@ static void clear_results(struct plan *plan)
     plan->quantities.sealant_net_m3 = plan->quantities.sealant_cusps_m3 = NAN;
     plan->quantities.sealant_order_m3 = plan->quantities.filler_m2 = NAN;
     plan->quantities.board_order_m3 = plan->quantities.strip_m = NAN;
+    plan->quantities.tape_m = plan->quantities.primer_m2 = plan->quantities.hours = NAN;
+    plan->quantities.wide_cut_m = plan->quantities.days = plan->quantities.cost = NAN;
+    plan->quantities.pot_life_s = plan->quantities.batch_most_m3 = plan->quantities.batch_m = NAN;
     plan->quantities.area_m2 = plan->quantities.volume_m3 = NAN;
     plan->governing_joint = SIZE_MAX;
 }

@@ -31,7 +31,8 @@ struct plan_table_row {
 };
 struct plan_isolation {
     char where[NAME_MOST + 32]; /* "edge 1", "C1", "opening pit", "expansion joint J3" */
-    double run_m, from_c, expansion_m, filler_m, least_filler_m, extension, compression, opening_m;
+    double length_m, run_m, from_c, expansion_m, filler_m, least_filler_m, extension, compression,
+        opening_m;
     enum verdict verdict;
 };
 struct plan_check {
@@ -57,6 +58,22 @@ struct plan_package {
 };
 struct plan_rod {
     double diameter_m, length_m;
+};
+
+enum { WORK_MOST = 4, WIDTH_MOST = 12, BOARD_MOST = 12 };
+struct plan_work { /* one operation of the sealing crew */
+    const char *name;
+    double length_m, pace_m_s, tools, hours;
+    bool slowest;
+};
+struct plan_width { /* the same joints at another width */
+    double width_m, depth_m, extension, compression, rod_m, order_m3, hours;
+    int packs;
+    enum verdict verdict, when_n3; /* when_n3: if only one cut in three works */
+    bool now;                      /* the job's own */
+};
+struct plan_board { /* soft board of one thickness */
+    double thickness_m, length_m, area_m2;
 };
 
 struct plan_pour { /* what is placed at once */
@@ -161,6 +178,16 @@ struct plan {
         int boxes;                      /* of takeoff.box packs, for the first package */
         double board_m, board_order_m3; /* sealant over soft board: its length, waste in; extra */
         double strip_m;                 /* compression seal to order, spare in */
+        double wide_cut_m, tape_m, primer_m2; /* primer: both faces, if the sealant wants one */
+        double loss_m3;                       /* of all days, in sealant_order */
+        double pot_life_s, batch_most_m3, batch_m; /* two-part: at the sealing temperature */
+        double hours, days, cost; /* of the slowest operation; cost: NAN, no price */
+        struct plan_work works[WORK_MOST];
+        size_t work_count;
+        struct plan_width widths[WIDTH_MOST];
+        size_t width_count;
+        struct plan_board boards[BOARD_MOST];
+        size_t board_count;
     } quantities;
     struct {
         double dowel_diameter_m, dowel_length_m, dowel_spacing_m;

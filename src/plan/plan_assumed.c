@@ -126,7 +126,16 @@ static const struct {
     {FIELD_sawing_saws, never},
     {FIELD_sawing_pace, never},
     {FIELD_sealing_dew_margin, never},
-    {FIELD_takeoff_loss_per_day, never},
+    {FIELD_takeoff_loss_per_day, never}, /* none lost */
+    {FIELD_takeoff_tool, has_sealant},
+    {FIELD_takeoff_tools, has_sealant},
+    {FIELD_takeoff_clean_pace, has_sealant},
+    {FIELD_takeoff_rod_pace, has_class},
+    {FIELD_takeoff_day, has_sealant},
+    {FIELD_takeoff_rods, never}, /* the usual sizes */
+    {FIELD_takeoff_blades, never},
+    {FIELD_takeoff_prices, never},
+    {FIELD_sealant_backing, has_class},
     {FIELD_rules_column_box, never},
     {FIELD_rules_table, never},
     {FIELD_rules_effort, never},

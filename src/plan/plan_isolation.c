@@ -210,6 +210,7 @@ static void make_rows(struct plan *plan, const struct stop_list *stops)
             continue;
         name_row(plan, joint, where, sizeof where);
         row = row_named(plan, where);
+        row->length_m += plan->joints[j].length_m;
         row->run_m = fmax(row->run_m, run_of(plan, stops, j));
         row->opening_m = fmax(row->opening_m, opening(plan, &plan->joints[j]));
     }

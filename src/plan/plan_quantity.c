@@ -1,4 +1,4 @@
-/* The basic take-off: metres by kind, sealant, packages, rod, board, compression seal. */
+/* The take-off: metres by kind, sealant, packages, rod, tape, board, compression seal. */
 #include "core/quantity.h"
 #include "core/sealant.h"
 #include "job/table.h"
@@ -32,10 +32,10 @@ static void add_lengths(struct plan *plan)
 
 static void set_packages(struct plan *plan)
 {
-    const struct packages *sizes = &plan->job.takeoff_packages;
-    int counts[PACKAGE_MOST];
+    const struct numbers *sizes = &plan->job.takeoff_packages;
+    int counts[NUMBERS_MOST];
     double left;
-    enum status status = quantity_packages(sizes->size, sizes->count,
+    enum status status = quantity_packages(sizes->items, sizes->count,
                                            plan->quantities.sealant_order_m3, counts, &left);
 
     if (status == STATUS_NO_MEMORY) {
@@ -50,39 +50,72 @@ static void set_packages(struct plan *plan)
     }
     for (size_t i = 0; i < sizes->count; i++)
         plan->quantities.packages[plan->quantities.package_count++] =
-            (struct plan_package){.size_m3 = sizes->size[i], .count = counts[i]};
+            (struct plan_package){.size_m3 = sizes->items[i], .count = counts[i]};
     if (plan->job.takeoff_box > 1)
         plan->quantities.boxes = quantity_boxes(counts[0], (int)lround(plan->job.takeoff_box));
 }
 
 static const double spare = 1.05; /* of rod and of seal: common practice */
 
-/* A bead over the soft board, as wide as the board and as deep as the kind asks: it lies on the
- * board, so there is no rod. */
+/* Board of one thickness on one line, and the bead over it: as wide as the board, as deep as the
+ * kind asks, on the board and so without a rod. */
+static struct plan_board *board_of(struct plan *plan, double thickness_m)
+{
+    for (size_t i = 0; i < plan->quantities.board_count; i++)
+        if (fabs(plan->quantities.boards[i].thickness_m - thickness_m) < 1e-6)
+            return &plan->quantities.boards[i];
+    if (plan->quantities.board_count == BOARD_MOST)
+        return &plan->quantities.boards[BOARD_MOST - 1]; /* more thicknesses than any stock has */
+    plan->quantities.boards[plan->quantities.board_count] =
+        (struct plan_board){.thickness_m = thickness_m};
+    return &plan->quantities.boards[plan->quantities.board_count++];
+}
+
 static void set_boards(struct plan *plan)
 {
     const struct sealant_row *kind = &sealant_table[plan->job.sealant_kind];
     double net = 0;
 
-    if (plan->job.sealant_kind > SEALANT_HOT_POUR)
-        return;
     for (size_t j = 0; j < plan->layout.joint_count; j++) {
-        double width = plan->joints[j].width_m;
+        double width = plan->joints[j].width_m, length = plan->joints[j].length_m;
+        struct plan_board *board;
         if (plan->layout.joints[j].kind != LAYOUT_ISOLATION || isnan(width))
             continue;
-        plan->quantities.board_m += plan->joints[j].length_m;
+        board = board_of(plan, width);
+        board->length_m += length;
+        board->area_m2 += length * plan->job.slab_thickness;
+        if (plan->job.sealant_kind > SEALANT_HOT_POUR)
+            continue;
+        plan->quantities.board_m += length;
         net += quantity_bead(
-            plan->joints[j].length_m, width,
+            length, width,
             sealant_depth(width, kind->depth_ratio, kind->depth_least, kind->depth_most));
     }
     if (net > 0)
         plan->quantities.board_order_m3 = quantity_order(net, plan->job.takeoff_waste);
 }
 
+/* What lies under the bead. */
+static void set_backing(struct plan *plan)
+{
+    double length = plan->quantities.sealed_m * spare;
+
+    if (plan->job.sealant_kind > SEALANT_HOT_POUR)
+        return;
+    if (plan->job.sealant_backing == BACKING_TAPE)
+        plan->quantities.tape_m = length;
+    if (plan->job.sealant_backing != BACKING_ROD || !(plan->seal.rod_m > 0))
+        return;
+    plan->quantities.rods[0] =
+        (struct plan_rod){.diameter_m = plan->seal.rod_m, .length_m = length};
+    plan->quantities.rod_count = 1;
+}
+
 static void set_sealant(struct plan *plan)
 {
     double sealed = plan->quantities.sealed_m, width = plan->seal.width_m;
-    bool rod = plan->job.sealant_kind <= SEALANT_HOT_POUR;
+    bool rod =
+        plan->job.sealant_kind <= SEALANT_HOT_POUR && plan->job.sealant_backing == BACKING_ROD;
 
     if (plan->job.sealant_kind == SEALANT_COMPRESSION_SEAL && sealed > 0)
         plan->quantities.strip_m = sealed * spare;
@@ -93,13 +126,11 @@ static void set_sealant(struct plan *plan)
     plan->quantities.sealant_order_m3 =
         quantity_order(plan->quantities.sealant_net_m3 +
                            (plan->job.takeoff_rod_cusps ? plan->quantities.sealant_cusps_m3 : 0),
-                       plan->job.takeoff_waste);
+                       plan->job.takeoff_waste) +
+        plan->quantities.loss_m3;
+    plan->quantities.primer_m2 = 2 * sealed * plan->seal.depth_m;
     set_packages(plan);
-    if (rod && plan->seal.rod_m > 0) {
-        plan->quantities.rods[0] =
-            (struct plan_rod){.diameter_m = plan->seal.rod_m, .length_m = sealed * spare};
-        plan->quantities.rod_count = 1;
-    }
+    set_backing(plan);
 }
 
 void plan_set_quantities(struct plan *plan)
@@ -115,6 +146,10 @@ void plan_set_quantities(struct plan *plan)
     }
     if (plan->job.sealant_kind == SEALANT_NONE)
         plan->quantities.sealed_m = 0;
+    plan_set_work(plan);
     set_sealant(plan);
     set_boards(plan);
+    plan_set_batch(plan);
+    plan_set_cost(plan);
+    plan_set_other_widths(plan);
 }

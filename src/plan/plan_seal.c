@@ -35,9 +35,25 @@ size_t plan_stock(const struct plan *plan, const struct size_row *table, size_t 
     return count;
 }
 
+/* What is on the truck, narrow to wide, else the usual sizes. */
+static size_t truck(const struct plan *plan, const struct numbers *typed,
+                    const struct size_row *table, size_t rows, double sizes[PLAN_BLADES_MOST])
+{
+    if (typed->count == 0)
+        return plan_stock(plan, table, rows, sizes);
+    memcpy(sizes, typed->items, typed->count * sizeof *sizes);
+    qsort(sizes, typed->count, sizeof *sizes, narrower);
+    return typed->count;
+}
+
 size_t plan_blades(const struct plan *plan, double widths[PLAN_BLADES_MOST])
 {
-    return plan_stock(plan, blade_table, blade_count, widths);
+    return truck(plan, &plan->job.takeoff_blades, blade_table, blade_count, widths);
+}
+
+size_t plan_rods(const struct plan *plan, double diameters[PLAN_BLADES_MOST])
+{
+    return truck(plan, &plan->job.takeoff_rods, rod_table, rod_count, diameters);
 }
 
 size_t plan_boards(const struct plan *plan, double thicknesses[PLAN_BLADES_MOST])
@@ -266,21 +282,47 @@ __attribute__((format(printf, 4, 0))) static void warn_rod(struct plan *plan, do
     text_free(&b);
 }
 
+static void warn_there_is(struct plan *plan)
+{
+    double there = plan->job.sealing_slot_depth;
+    struct text need = {0}, slot = {0};
+
+    if (isnan(there) || there >= plan->seal.cut_depth_m - 1e-9)
+        return;
+    unit_show(&need, plan->seal.cut_depth_m, QUANTITY_SMALL_LENGTH,
+              (enum unit_system)plan->job.job_units);
+    unit_show(&slot, there, QUANTITY_SMALL_LENGTH, (enum unit_system)plan->job.job_units);
+    finding_add(&plan->findings, SEVERITY_WARNING, "sealing.slot-depth", text_string(&slot),
+                text_string(&need), 0, 0,
+                "sealing.slot-depth: the wide cut is %s deep; recess, bead and what lies under it "
+                "need %s. Cut deeper, take a smaller rod, or bond-breaker tape.",
+                text_string(&slot), text_string(&need));
+    text_free(&need);
+    text_free(&slot);
+}
+
 /* The slot that rod, bead and recess need, and whether the rod can be pressed in and stays. */
 static void warn_slot(struct plan *plan)
 {
     const double press = 2; /* widths; a quarter more is usual: common practice */
     double width = plan->seal.width_m;
 
+    warn_there_is(plan);
+    if (plan->job.sealant_backing == BACKING_NONE)
+        finding_add(&plan->findings, SEVERITY_WARNING, "sealant.backing", "none", "", 0, 0,
+                    "sealant.backing: with nothing under the bead it sticks to the bottom too and "
+                    "tears (three-sided bond); put in a rod, or bond-breaker tape.");
+    if (plan->job.sealant_backing != BACKING_ROD)
+        return;
     if (plan->seal.cut_depth_m > plan->cut.most_m + 1e-9)
         warn_rod(plan, plan->seal.cut_depth_m, plan->cut.most_m,
                  "a %s rod under the bead needs a slot %s deep, more than a third of the slab "
                  "(%s); take a smaller rod, a thinner bead or bond-breaker tape.");
-    if (plan->job.given[FIELD_sealant_rod] && plan->seal.rod_m < width - 1e-9)
+    if (plan->seal.rod_m < width - 1e-9)
         warn_rod(plan, width, width,
                  "a %s rod is narrower than the %s joint and falls through; take one about a "
                  "quarter wider than %s.");
-    if (plan->job.given[FIELD_sealant_rod] && plan->seal.rod_m > press * width)
+    if (plan->seal.rod_m > press * width)
         warn_rod(plan, width, press * width,
                  "a %s rod cannot be pressed into a joint %s wide; take one of at most %s.");
 }
@@ -289,7 +331,7 @@ static void set_bead(struct plan *plan)
 {
     const struct sealant_row *kind = &sealant_table[plan->job.sealant_kind];
     double rods[PLAN_BLADES_MOST];
-    size_t count = plan_stock(plan, rod_table, rod_count, rods);
+    size_t count = plan_rods(plan, rods);
     double open = isfinite(plan->movement.open_m) ? plan->movement.open_m : 0;
     double close = isfinite(plan->movement.close_m) ? plan->movement.close_m : 0;
 
@@ -299,7 +341,9 @@ static void set_bead(struct plan *plan)
         plan->seal.depth_m = sealant_depth(plan->seal.width_m, kind->depth_ratio, kind->depth_least,
                                            kind->depth_most);
     plan->seal.rod_m = plan->job.sealant_rod;
-    if (isnan(plan->seal.rod_m))
+    if (plan->job.sealant_backing != BACKING_ROD)
+        plan->seal.rod_m = 0; /* tape is thin; without either the bead lies on the concrete */
+    else if (isnan(plan->seal.rod_m))
         plan->seal.rod_m = plan_next_size(rods, count, 1.25 * plan->seal.width_m);
     plan->seal.cut_depth_m = plan->seal.recess_m + plan->seal.depth_m + plan->seal.rod_m;
     plan->seal.bead_strain =

@@ -22,6 +22,10 @@ enum status plan_set_isolation(struct plan *plan);
 void plan_set_restraint(struct plan *plan);
 void plan_set_steel(struct plan *plan);
 void plan_set_quantities(struct plan *plan);
+void plan_set_work(struct plan *plan); /* these four are part of plan_set_quantities */
+void plan_set_batch(struct plan *plan);
+void plan_set_cost(struct plan *plan);
+void plan_set_other_widths(struct plan *plan);
 enum status plan_set_pours(struct plan *plan);
 enum status plan_set_cracks(struct plan *plan);
 enum status plan_set_checks(struct plan *plan);
@@ -69,6 +73,8 @@ double plan_working_movement(const struct plan *plan, int n, double bar_m, doubl
 /* Stock widths in the job's units, narrow to wide; returns how many. */
 enum { PLAN_BLADES_MOST = 32 };
 size_t plan_blades(const struct plan *plan, double widths[PLAN_BLADES_MOST]);
+/* Rods on the truck, else in stock, thin to thick. */
+size_t plan_rods(const struct plan *plan, double diameters[PLAN_BLADES_MOST]);
 /* Filler boards in stock in the job's units, thin to thick. */
 size_t plan_boards(const struct plan *plan, double thicknesses[PLAN_BLADES_MOST]);
 /* Sizes of a stock table in the job's units, narrow to wide. */

@@ -102,6 +102,16 @@ const struct result result_table[] = {
     LITRES("quantities.sealant_net_l", "Sealant, net", quantities.sealant_net_m3),
     LITRES("quantities.sealant_cusps_l", "Beside the round rod", quantities.sealant_cusps_m3),
     LITRES("quantities.sealant_order_l", "Sealant to order", quantities.sealant_order_m3),
+    LITRES("quantities.loss_l", "of it lost with the days", quantities.loss_m3),
+    NUM("quantities.wide_cut_m", "Wide cut", METRES, quantities.wide_cut_m),
+    NUM("quantities.tape_m", "Bond-breaker tape", METRES, quantities.tape_m),
+    NUM("quantities.primer_m2", "Faces, if primed, m2", QUANTITY_NONE, quantities.primer_m2),
+    NUM("quantities.pot_life_s", "Pot life then", QUANTITY_TIME, quantities.pot_life_s),
+    LITRES("quantities.batch_most_l", "Batch at most", quantities.batch_most_m3),
+    NUM("quantities.batch_m", "A batch fills", METRES, quantities.batch_m),
+    NUM("quantities.hours", "Hours, slowest operation", QUANTITY_NONE, quantities.hours),
+    NUM("quantities.days", "Days", QUANTITY_NONE, quantities.days),
+    NUM("quantities.cost", "Cost, as far as priced", QUANTITY_NONE, quantities.cost),
     LITRES("quantities.board_order_l", "and over the soft board", quantities.board_order_m3),
     NUM("quantities.seal_m", "Compression seal to order", METRES, quantities.strip_m),
     NUM("quantities.filler_m2", "Board area, m2", QUANTITY_NONE, quantities.filler_m2),
@@ -169,6 +179,7 @@ static const struct column table_columns[] = {
 };
 static const struct column isolation_columns[] = {
     CTEXT(plan_isolation, "where", "where", where),
+    CNUM(plan_isolation, "length_m", "length", METRES, length_m),
     CNUM(plan_isolation, "run_m", "pushed by", METRES, run_m),
     CNUM(plan_isolation, "from_c", "from", DEGC, from_c),
     CNUM(plan_isolation, "expansion_m", "takes up", MM, expansion_m),
@@ -206,6 +217,31 @@ static const struct column crack_columns[] = {
 static const struct column package_columns[] = {
     COLUMN("size_l", "size", RESULT_NUMBER, QUANTITY_VOLUME, 1000.0, plan_package, size_m3),
     CINT(plan_package, "count", "packs", count),
+};
+static const struct column work_columns[] = {
+    CWORD(plan_work, "name", "work", name),
+    CNUM(plan_work, "length_m", "length", METRES, length_m),
+    CNUM(plan_work, "pace_m_s", "pace of one", QUANTITY_PACE, pace_m_s),
+    CNUM(plan_work, "tools", "of them", QUANTITY_NONE, tools),
+    CNUM(plan_work, "hours", "hours", QUANTITY_NONE, hours),
+    COLUMN("slowest", "slowest", RESULT_BOOL, QUANTITY_NONE, 1.0, plan_work, slowest),
+};
+static const struct column width_columns[] = {
+    CNUM(plan_width, "width_m", "width", MM, width_m),
+    CNUM(plan_width, "depth_m", "depth", MM, depth_m),
+    CNUM(plan_width, "extension", "stretch", SHARE, extension),
+    CNUM(plan_width, "compression", "squeeze", SHARE, compression),
+    CVERDICT(plan_width, verdict),
+    COLUMN("when_n3", "if 1 in 3", RESULT_VERDICT, QUANTITY_NONE, 1.0, plan_width, when_n3),
+    COLUMN("order_l", "order", RESULT_NUMBER, QUANTITY_VOLUME, 1000.0, plan_width, order_m3),
+    CINT(plan_width, "packs", "packs", packs),
+    CNUM(plan_width, "rod_m", "rod", MM, rod_m),
+    COLUMN("now", "now", RESULT_BOOL, QUANTITY_NONE, 1.0, plan_width, now),
+};
+static const struct column board_columns[] = {
+    CNUM(plan_board, "thickness_m", "board", MM, thickness_m),
+    CNUM(plan_board, "length_m", "length", METRES, length_m),
+    CNUM(plan_board, "area_m2", "area, m2", QUANTITY_NONE, area_m2),
 };
 static const struct column rod_columns[] = {
     CNUM(plan_rod, "diameter_m", "rod", MM, diameter_m),
@@ -248,6 +284,9 @@ ROWS(check_rows, checks, check_count)
 ROWS(pour_rows, pours, pour_count)
 ROWS(crack_rows, cracks, crack_count)
 ROWS(package_rows, quantities.packages, quantities.package_count)
+ROWS(work_rows, quantities.works, quantities.work_count)
+ROWS(width_rows, quantities.widths, quantities.width_count)
+ROWS(board_rows, quantities.boards, quantities.board_count)
 ROWS(rod_rows, quantities.rods, quantities.rod_count)
 
 static size_t joint_rows(const struct plan *plan, const void *arrays[2])
@@ -271,6 +310,9 @@ const struct list list_table[] = {
     LIST("cracks", crack_columns, plan_crack, crack_rows),
     LIST("quantities.packages", package_columns, plan_package, package_rows),
     LIST("quantities.rod_m", rod_columns, plan_rod, rod_rows),
+    LIST("quantities.boards", board_columns, plan_board, board_rows),
+    LIST("quantities.work", work_columns, plan_work, work_rows),
+    LIST("quantities.other_widths", width_columns, plan_width, width_rows),
     {"joints",
      joint_columns,
      COUNT(joint_columns),

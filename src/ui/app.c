@@ -362,8 +362,6 @@ void app_key(struct app *app, uint32_t key)
         row_key(app, key);
     else
         key_on_page(app, key);
-    if (app->page == PAGE_BUY && app->buy_count == 0 && app->has_plan)
-        buy_fill(app);
     if (app->page == PAGE_YEAR)
         year_fill(app);
 }

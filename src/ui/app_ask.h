@@ -45,7 +45,4 @@ bool seal_draw_now(const struct app *app, struct canvas *canvas, int at, int row
 /* page_year.c */
 void year_fill(struct app *app);
 
-/* page_buy.c: the other widths, by plans of their own */
-void buy_fill(struct app *app);
-
 #endif

@@ -42,7 +42,6 @@ static enum status read_job(struct app *app, struct job *raw)
 static void say_outcome(struct app *app, enum status status)
 {
     app->stale = status != STATUS_OK;
-    app->buy_count = 0;
     year_drop(app);
     if (status == STATUS_NO_MEMORY)
         app_tell(app, "Not enough memory; close other programs. The answers are the old ones.");

@@ -73,14 +73,7 @@ enum ask {
 };
 
 enum open_as { OPEN_NOT, OPEN_TEXT, OPEN_CHOICE };
-enum { BUY_MOST = 5, WORDS_MOST = 256, OPENED_MOST = 32 };
-
-struct buy_row {
-    double width_m, depth_m, extension, compression, capacity, litres, rod_m;
-    int packs;
-    enum verdict verdict;
-    bool now;
-};
+enum { WORDS_MOST = 256, OPENED_MOST = 32 };
 
 struct app {
     struct date today;
@@ -125,8 +118,6 @@ struct app {
     char under[WORDS_MOST];
     int why_question;
     char why_path[64];
-    struct buy_row buy[BUY_MOST];
-    size_t buy_count;
     char measured[EDITOR_MOST]; /* at the joint, as typed; not of the job */
     struct year *year;          /* of the plan; NULL: none */
     bool year_done;             /* tried for this plan */

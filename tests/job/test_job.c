@@ -58,7 +58,7 @@ static void test_fixed_defaults(void **state)
     assert_true(j->rules_least_angle == 60 && j->rules_round_to == 0);
     assert_true(isnan(j->rules_expansion_every));
     assert_true(is(j->takeoff_waste, 0.1) && j->takeoff_rod_cusps == 1 && j->takeoff_box == 1);
-    assert_true(j->takeoff_packages.count == 1 && is(j->takeoff_packages.size[0], 600e-6));
+    assert_true(j->takeoff_packages.count == 1 && is(j->takeoff_packages.items[0], 600e-6));
     assert_true(isnan(j->takeoff_length));
     assert_true(j->sawing_saws == 1 && is(j->sawing_pace, 75.0 / 3600));
     assert_true(!j->given[FIELD_sawing_sunset] && j->pours_direction == 0);

@@ -4,7 +4,7 @@
 #include "plan_help.h"
 
 /* A job of these numbers; the same seed gives the same jobs. */
-struct numbers {
+struct figures {
     double thickness_mm, coldest, hottest, sealing, shrinkage, spacing, expansion;
     const char *base, *movement;
 };
@@ -15,10 +15,10 @@ static double between(uint64_t *seed, double least, double most)
     return least + (most - least) * (double)(*seed >> 33) / 2147483648.0;
 }
 
-static struct numbers random_numbers(uint64_t *seed)
+static struct figures random_numbers(uint64_t *seed)
 {
     static const char *const bases[] = {"granular", "stabilised", "asphalt", "sand", "soil"};
-    struct numbers n = {.thickness_mm = floor(between(seed, 80, 400)),
+    struct figures n = {.thickness_mm = floor(between(seed, 80, 400)),
                         .coldest = floor(between(seed, -30, 15)),
                         .shrinkage = between(seed, 0, 600e-6),
                         .spacing = between(seed, 1, 7),
@@ -31,7 +31,7 @@ static struct numbers random_numbers(uint64_t *seed)
     return n;
 }
 
-static void plan_of(const struct numbers *n, const char *more, struct plan *plan)
+static void plan_of(const struct figures *n, const char *more, struct plan *plan)
 {
     struct text text = {0};
 
@@ -53,13 +53,13 @@ static const double tiny = 1 + 1e-12;
 /* ---- mechanics that cannot turn round ---- */
 
 /* Two plans of random numbers, the second changed; then what must hold of them. */
-static void for_pairs(void (*change)(struct numbers *n, uint64_t *seed),
+static void for_pairs(void (*change)(struct figures *n, uint64_t *seed),
                       void (*expect)(const struct plan *before, const struct plan *after))
 {
     uint64_t seed = 20270412;
 
     for (int i = 0; i < ROUNDS; i++) {
-        struct numbers n = random_numbers(&seed);
+        struct figures n = random_numbers(&seed);
         struct plan before, after;
         plan_of(&n, "[sealant]\nwidth = 15 mm\n", &before);
         change(&n, &seed);
@@ -70,7 +70,7 @@ static void for_pairs(void (*change)(struct numbers *n, uint64_t *seed),
     }
 }
 
-static void double_length(struct numbers *n, uint64_t *seed)
+static void double_length(struct figures *n, uint64_t *seed)
 {
     (void)seed;
     n->spacing *= 2;
@@ -93,7 +93,7 @@ static void test_longer_panels_move_no_less(void **state)
     for_pairs(double_length, moves_no_less);
 }
 
-static void colder(struct numbers *n, uint64_t *seed)
+static void colder(struct figures *n, uint64_t *seed)
 {
     n->coldest -= between(seed, 0, 20);
 }
@@ -113,7 +113,7 @@ static void test_colder_never_opens_less(void **state)
     for_pairs(colder, opens_no_less);
 }
 
-static void hotter(struct numbers *n, uint64_t *seed)
+static void hotter(struct figures *n, uint64_t *seed)
 {
     n->hottest += between(seed, 0, 6);
 }
@@ -131,7 +131,7 @@ static void test_hotter_never_closes_less(void **state)
     for_pairs(hotter, closes_no_less);
 }
 
-static void drier(struct numbers *n, uint64_t *seed)
+static void drier(struct figures *n, uint64_t *seed)
 {
     n->shrinkage += between(seed, 0, 400e-6);
 }
@@ -149,7 +149,7 @@ static void test_never_more_than_free(void **state)
     uint64_t seed = 7;
 
     for (int i = 0; i < ROUNDS; i++) {
-        struct numbers n = random_numbers(&seed);
+        struct figures n = random_numbers(&seed);
         struct plan plan;
         double open, close;
         plan_of(&n, "", &plan);
@@ -169,7 +169,7 @@ static void test_wider_stretches_less(void **state)
     uint64_t seed = 11;
 
     for (int i = 0; i < ROUNDS / 4; i++) {
-        struct numbers n = random_numbers(&seed);
+        struct figures n = random_numbers(&seed);
         double last = INFINITY;
         for (int width = 6; width <= 40; width += 2) {
             struct plan plan;
@@ -193,7 +193,7 @@ static void test_a_chosen_width_holds(void **state)
     uint64_t seed = 13;
 
     for (int i = 0; i < ROUNDS; i++) {
-        struct numbers n = random_numbers(&seed);
+        struct figures n = random_numbers(&seed);
         struct plan plan;
         plan_of(&n, "", &plan);
         if (isfinite(plan.seal.width_m) && plan.seal.verdict != VERDICT_FAILS) {
@@ -214,7 +214,7 @@ static void test_sealing_table_falls(void **state)
     uint64_t seed = 17;
 
     for (int i = 0; i < ROUNDS; i++) {
-        struct numbers n = random_numbers(&seed);
+        struct figures n = random_numbers(&seed);
         struct plan plan;
         plan_of(&n, "[sealant]\nwidth = 15 mm\n", &plan);
         assert_true(plan.table_count >= 3);
@@ -276,7 +276,7 @@ static void test_shown_units_change_no_movement(void **state)
     uint64_t seed = 23;
 
     for (int i = 0; i < ROUNDS / 4; i++) {
-        struct numbers n = random_numbers(&seed);
+        struct figures n = random_numbers(&seed);
         struct plan metric, us;
         plan_of(&n, "[sealant]\nwidth = 15 mm\ndepth = 10 mm\n", &metric);
         plan_of(&n, "[sealant]\nwidth = 15 mm\ndepth = 10 mm\n[job]\nunits = us\n", &us);
