@@ -78,7 +78,7 @@ $(B)/terminfo/stamp: tests/term/slabgap-term.ti
 	tic -x -o $(@D) $< && touch $@
 
 $(B)/tests/export/%: TEST_LIBS = -ljansson
-$(B)/tests/core/test_layout_geos $(B)/tests/core/long_layout: TEST_LIBS = -lgeos_c
+$(B)/tests/core/test_layout_geos $(B)/tests/core/test_layout_crowd $(B)/tests/core/long_layout: TEST_LIBS = -lgeos_c
 $(B)/tests/cmd/%: CFLAGS += -DSLABGAP_BINARY='"$(abspath $(B))/slabgap"'
 $(filter $(B)/tests/cmd/%,$(TESTS)): $(B)/slabgap
 WRAP = -Wl,--wrap=malloc,--wrap=calloc,--wrap=realloc,--wrap=strdup

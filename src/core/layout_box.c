@@ -100,7 +100,7 @@ bool place_boxes(struct work *w)
     return true;
 }
 
-static void snap_box(const struct work *w, struct work_box *b, int axis, int64_t to)
+void place_move_box(const struct work *w, struct work_box *b, int axis, int64_t to)
 {
     int64_t *at = axis ? &b->y : &b->x, *moved = axis ? &b->moved_y : &b->moved_x;
     const int64_t shift = to - *at;
@@ -237,7 +237,7 @@ static bool snap_axis(struct work *w, int axis, int64_t reach)
             const struct layout_object *o = &w->input->objects[w->boxes[n].object];
             const bool fixed = o->box_at_given || (axis ? w->boxes[n].on_y : w->boxes[n].on_x);
             if (u >= list[i] && u <= list[k] && !fixed && u != to && !w->boxes[n].stay)
-                snap_box(w, &w->boxes[n], axis, to);
+                place_move_box(w, &w->boxes[n], axis, to);
         }
         i = k + 1;
     }
@@ -265,11 +265,15 @@ static bool name_box(struct work *w, const struct work_box *b)
     return true;
 }
 
+void place_on_edges(struct work *w)
+{
+    for (size_t i = 0; i < w->box_count; i++)
+        find_edge(w, &w->boxes[i]);
+}
+
 bool place_snap(struct work *w)
 {
     const int64_t reach = UNITS(snap_m);
-    for (size_t i = 0; i < w->box_count; i++)
-        find_edge(w, &w->boxes[i]);
     return snap_axis(w, 0, reach) && snap_axis(w, 1, reach);
 }
 

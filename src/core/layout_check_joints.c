@@ -65,7 +65,42 @@ static bool takes_on(const struct layout *out, const struct layout_joint *j,
            on_boundary(out, at_start ? o->x2 : o->x1, at_start ? o->y2 : o->y1);
 }
 
-static bool end_is_good(const struct work *w, size_t i, bool second)
+struct ends { /* the joints by where they are, in axes along the longest of them */
+    struct layout_index index;
+    double ux, uy;
+};
+
+static bool ends_make(const struct layout *out, struct ends *ends)
+{
+    struct layout_extent *e = calloc(out->joint_count + 1, sizeof *e);
+    double longest = 0;
+    if (!e)
+        return false;
+    *ends = (struct ends){.ux = 1};
+    for (size_t i = 0; i < out->joint_count; i++) {
+        const double dx = out->joints[i].x2 - out->joints[i].x1,
+                     dy = out->joints[i].y2 - out->joints[i].y1, length = hypot(dx, dy);
+        if (length <= longest)
+            continue;
+        longest = length;
+        ends->ux = dx / length;
+        ends->uy = dy / length;
+    }
+    for (size_t i = 0; i < out->joint_count; i++) {
+        const struct layout_joint *j = &out->joints[i];
+        const double x1 = j->x1 * ends->ux + j->y1 * ends->uy,
+                     y1 = j->y1 * ends->ux - j->x1 * ends->uy,
+                     x2 = j->x2 * ends->ux + j->y2 * ends->uy,
+                     y2 = j->y2 * ends->ux - j->x2 * ends->uy;
+        e[i] = (struct layout_extent){fmin(x1, x2) - 2 * near_m, fmin(y1, y2) - 2 * near_m,
+                                      fmax(x1, x2) + 2 * near_m, fmax(y1, y2) + 2 * near_m};
+    }
+    const bool fine = layout_index_make(&ends->index, e, out->joint_count);
+    free(e);
+    return fine;
+}
+
+static bool end_is_good(const struct work *w, const struct ends *ends, size_t i, bool second)
 {
     const struct layout *out = w->out;
     const struct layout_joint *j = &out->joints[i];
@@ -75,9 +110,12 @@ static bool end_is_good(const struct work *w, size_t i, bool second)
     const double side = fmax(w->input->max_side_x, w->input->max_side_y);
     if (on_boundary(out, x, y))
         return true;
-    for (size_t k = 0; k < out->joint_count; k++) {
-        const struct layout_joint *o = &out->joints[k];
-        if (k == i || fmin(o->x1, o->x2) > x + near_m || fmax(o->x1, o->x2) < x - near_m ||
+    const size_t *list;
+    const size_t n = layout_index_at(&ends->index, x * ends->ux + y * ends->uy,
+                                     y * ends->ux - x * ends->uy, &list);
+    for (size_t k = 0; k < n; k++) {
+        const struct layout_joint *o = &out->joints[list[k]];
+        if (list[k] == i || fmin(o->x1, o->x2) > x + near_m || fmax(o->x1, o->x2) < x - near_m ||
             fmin(o->y1, o->y2) > y + near_m || fmax(o->y1, o->y2) < y - near_m)
             continue;
         if (takes_on(out, j, o, x, y, ux, uy, side))
@@ -86,11 +124,11 @@ static bool end_is_good(const struct work *w, size_t i, bool second)
     return false;
 }
 
-static bool check_end(struct work *w, size_t i, bool second)
+static bool check_end(struct work *w, const struct ends *ends, size_t i, bool second)
 {
     const struct layout_joint *j = &w->out->joints[i];
     char cause[160];
-    if (end_is_good(w, i, second))
+    if (end_is_good(w, ends, i, second))
         return true;
     snprintf(cause, sizeof cause,
              "Joint %.20s ends at %.3f, %.3f m in a panel's side, where nothing takes it on.",
@@ -101,11 +139,13 @@ static bool check_end(struct work *w, size_t i, bool second)
 
 static bool check_ends(struct work *w)
 {
-    for (size_t i = 0; i < w->out->joint_count; i++)
-        if (w->out->joints[i].kind != LAYOUT_ISOLATION &&
-            (!check_end(w, i, false) || !check_end(w, i, true)))
-            return false;
-    return true;
+    struct ends ends = {.ux = 1};
+    bool fine = ends_make(w->out, &ends);
+    for (size_t i = 0; fine && i < w->out->joint_count; i++)
+        if (w->out->joints[i].kind != LAYOUT_ISOLATION)
+            fine = check_end(w, &ends, i, false) && check_end(w, &ends, i, true);
+    layout_index_free(&ends.index);
+    return fine;
 }
 
 static bool check_matches(struct work *w)

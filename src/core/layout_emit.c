@@ -9,7 +9,11 @@ struct emit {
     struct work *w;
     struct rect_chord *chords;
     size_t chord_count, joint_room;
-    int *sides; /* per object: box sides so far */
+    const struct work_line **labels;      /* by axis and place, then as they came */
+    const struct rect_chord **isolations; /* chords that are isolation joints */
+    size_t label_count, isolation_count;
+    struct stop *stops; /* room for those of one line */
+    int *sides;         /* per object: box sides so far */
 };
 struct stop {
     int64_t from, to;
@@ -61,14 +65,59 @@ static int compare_stop(const void *a, const void *b)
     return (p->from > q->from) - (p->from < q->from);
 }
 
-static const struct work_line *label_of(const struct work *w, const struct rect_chord *c)
+static int compare_label(const void *a, const void *b)
 {
-    for (size_t i = 0; i < w->line_count; i++) {
-        const struct work_line *l = &w->lines[i];
-        if (l->labels && l->axis == c->axis && l->u == c->u && l->v0 < c->v1 && l->v1 > c->v0)
+    const struct work_line *p = *(const struct work_line *const *)a,
+                           *q = *(const struct work_line *const *)b;
+    if (p->axis != q->axis)
+        return p->axis - q->axis;
+    if (p->u != q->u)
+        return p->u < q->u ? -1 : 1;
+    return (p > q) - (p < q);
+}
+
+static const struct work_line *label_of(const struct emit *e, const struct rect_chord *c)
+{
+    const struct work_line key = {.axis = c->axis, .u = c->u};
+    size_t low = 0, high = e->label_count;
+    while (low < high) {
+        const size_t mid = (low + high) / 2;
+        const struct work_line *l = e->labels[mid];
+        if (l->axis < key.axis || (l->axis == key.axis && l->u < key.u))
+            low = mid + 1;
+        else
+            high = mid;
+    }
+    for (; low < e->label_count; low++) {
+        const struct work_line *l = e->labels[low];
+        if (l->axis != c->axis || l->u != c->u)
+            break;
+        if (l->v0 < c->v1 && l->v1 > c->v0)
             return l;
     }
     return NULL;
+}
+
+/* The lines with a kind of their own in order, and the chords that are isolation joints. */
+static bool index_labels(struct emit *e)
+{
+    const struct work *w = e->w;
+    e->labels = calloc(w->line_count + 1, sizeof *e->labels);
+    e->isolations = calloc(e->chord_count + 1, sizeof *e->isolations);
+    e->stops = calloc(w->box_count + e->chord_count + 1, sizeof *e->stops);
+    if (!e->labels || !e->isolations || !e->stops)
+        return false;
+    for (size_t i = 0; i < w->line_count; i++)
+        if (w->lines[i].labels)
+            e->labels[e->label_count++] = &w->lines[i];
+    if (e->label_count)
+        qsort(e->labels, e->label_count, sizeof *e->labels, compare_label);
+    for (size_t i = 0; i < e->chord_count; i++) {
+        const struct work_line *l = label_of(e, &e->chords[i]);
+        if (l && l->kind == LAYOUT_ISOLATION)
+            e->isolations[e->isolation_count++] = &e->chords[i];
+    }
+    return true;
 }
 
 /* Boxes and crossing isolation joints that interrupt a line at u between v0 and v1. */
@@ -84,12 +133,9 @@ static size_t find_stops(const struct emit *e, int axis, int64_t u, int64_t v0, 
         if (!b->dropped && bu == u && bv + high > v0 && bv - low < v1)
             list[n++] = (struct stop){bv - low, bv + high};
     }
-    for (size_t i = 0; !isolation && i < e->chord_count; i++) {
-        const struct rect_chord *c = &e->chords[i];
-        if (c->axis == axis || c->u <= v0 || c->u >= v1 || c->v0 >= u || c->v1 <= u)
-            continue;
-        const struct work_line *label = label_of(w, c);
-        if (label && label->kind == LAYOUT_ISOLATION)
+    for (size_t i = 0; !isolation && i < e->isolation_count; i++) {
+        const struct rect_chord *c = e->isolations[i];
+        if (c->axis != axis && c->u > v0 && c->u < v1 && c->v0 < u && c->v1 > u)
             list[n++] = (struct stop){c->u, c->u};
     }
     qsort(list, n, sizeof *list, compare_stop);
@@ -116,9 +162,7 @@ static bool add_piece(struct emit *e, int axis, int64_t u, int64_t from, int64_t
 static bool add_pieces(struct emit *e, int axis, int64_t u, int64_t v0, int64_t v1,
                        struct layout_joint joint)
 {
-    struct stop *list = calloc(e->w->box_count + e->chord_count + 1, sizeof *list);
-    if (!list)
-        return false;
+    struct stop *list = e->stops;
     const size_t n = find_stops(e, axis, u, v0, v1, joint.kind == LAYOUT_ISOLATION, list);
     int64_t at = v0;
     bool fine = true;
@@ -129,7 +173,6 @@ static bool add_pieces(struct emit *e, int axis, int64_t u, int64_t v0, int64_t 
         if (i < n && list[i].to > at)
             at = list[i].to;
     }
-    free(list);
     return fine;
 }
 
@@ -155,7 +198,7 @@ static bool emit_lines(struct emit *e)
         char stem[24];
         snprintf(stem, sizeof stem, "J%d", ++line);
         for (; i < e->chord_count && e->chords[i].axis == axis && e->chords[i].u == u; i++) {
-            const struct work_line *label = label_of(e->w, &e->chords[i]);
+            const struct work_line *label = label_of(e, &e->chords[i]);
             const struct layout_joint joint = {.line = line,
                                                .kind = label ? label->kind : LAYOUT_CONTRACTION,
                                                .expansion = label && label->expansion,
@@ -380,7 +423,7 @@ enum status layout_emit(struct work *w)
         e.sides = calloc(w->input->object_count + 1, sizeof *e.sides);
         bool fine =
             w->out->panels && e.sides && sort_panels(w) && index_panels(w) && drop_clashes(w);
-        fine = fine && emit_lines(&e);
+        fine = fine && index_labels(&e) && emit_lines(&e);
         w->out->panel_count = fine ? w->panel_count : 0;
         for (size_t i = 0; fine && i < w->panel_count; i++)
             fine = emit_panel(&e, i);
@@ -388,5 +431,8 @@ enum status layout_emit(struct work *w)
         status = fine ? STATUS_OK : STATUS_NO_MEMORY;
     }
     free(e.sides);
+    free(e.labels);
+    free(e.isolations);
+    free(e.stops);
     return status;
 }

@@ -11,8 +11,12 @@ bool place_lines(struct work *w);
 bool place_bans(struct work *w);
 bool place_expansion(struct work *w);
 bool place_matches(struct work *w);
-/* Moves the boxes onto common lines within the tolerance, or onto the slab edge. */
+/* Onto the slab edge where they are near it. */
+void place_on_edges(struct work *w);
+/* Onto common lines within the tolerance. */
 bool place_snap(struct work *w);
+/* One box onto the line at `to`, larger so that it still clears its object; too large: not. */
+void place_move_box(const struct work *w, struct work_box *b, int axis, int64_t to);
 /* Their lines, with names. */
 bool place_name_boxes(struct work *w);
 bool place_index_boxes(struct work *w);

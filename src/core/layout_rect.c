@@ -312,6 +312,8 @@ enum status rect_add_box(struct rect_slab *slab, const struct rect_box *box)
     for (; at > 0 && compare_box(&more[at - 1], box) > 0; at--)
         more[at] = more[at - 1];
     more[at] = *box;
+    for (int k = 0; k < 4; k++)
+        slab->longest_tip = box->tip[k] > slab->longest_tip ? box->tip[k] : slab->longest_tip;
     force_room(slab, 0, box->x, box->y, box->tip[0], box->tip[1]);
     force_room(slab, 1, box->y, box->x, box->tip[2], box->tip[3]);
     return STATUS_OK;
@@ -379,7 +381,6 @@ enum status rect_chords(const struct rect_slab *slab, struct rect_chord **chords
                 list[n++] =
                     (struct rect_chord){axis, f->arcs[i].cut[k], f->arcs[i].v0, f->arcs[i].v1};
     }
-    qsort(list, n, sizeof *list, compare_chord);
     *chords = list;
     *count = n;
     return STATUS_OK;

@@ -67,6 +67,7 @@ struct rect_slab {
     bool fine; /* places at every 0.1 m too */
     struct rect_box *boxes; /* sorted by x, then y */
     size_t box_count;
+    int64_t longest_tip;
     const struct rect_ban *bans;
     size_t ban_count;
     double cost; /* of the solved slab: metres and penalties */
@@ -87,9 +88,10 @@ bool rect_force(struct rect_slab *slab, int axis, int64_t u, int64_t v);
 enum status rect_add_box(struct rect_slab *slab, const struct rect_box *box);
 void rect_sort_boxes(struct rect_box *boxes, size_t count);
 const struct rect_box *rect_box_at(const struct rect_slab *slab, int64_t x, int64_t y);
-/* The starts and whole openings only; single corners too; places at every 0.1 m too. */
-enum rect_depth { RECT_QUICK, RECT_FULL, RECT_FINE };
+/* Few starts only; all starts and whole openings; single corners too; places at every 0.1 m too. */
+enum rect_depth { RECT_GLANCE, RECT_QUICK, RECT_FULL, RECT_FINE };
 enum status rect_solve(struct rect_slab *slab, enum rect_depth depth);
+/* In no order. */
 enum status rect_chords(const struct rect_slab *slab, struct rect_chord **chords, size_t *count);
 void rect_sort_chords(struct rect_chord *chords, size_t count);
 /* The first of the sorted chords that is not before the key. */

@@ -11,7 +11,10 @@ static size_t count_cramped(const struct rect_slab *slab, const struct rect_pane
     const int64_t x[4] = {p->x0, p->x1, p->x1, p->x0}, y[4] = {p->y0, p->y0, p->y1, p->y1};
     const double w = (double)(p->x1 - p->x0), h = (double)(p->y1 - p->y0);
     size_t n = 0;
-    for (int k = 0; k < 4 && slab->box_count; k++) {
+    if (!slab->box_count ||
+        (w < h ? w : h) - (double)slab->longest_tip >= slab->rules.least - SLACK)
+        return 0;
+    for (int k = 0; k < 4; k++) {
         const struct rect_box *b = rect_box_at(slab, x[k], y[k]);
         n += b && (w - (double)b->tip[along[k][0]] < slab->rules.least - SLACK ||
                    h - (double)b->tip[along[k][1]] < slab->rules.least - SLACK);
@@ -30,27 +33,34 @@ static double panel_cost(struct rect_slab *slab, const struct rect_panel *p, siz
     return cost + BROKEN * (double)cramped;
 }
 
+static double chord_metres(struct rect_slab *slab)
+{
+    double sum = 0;
+    for (int axis = 0; axis < 2; axis++) {
+        const struct rect_family *f = &slab->family[axis];
+        for (size_t i = 0; i < f->gate_count; i++)
+            sum += f->gates[i].on ? (double)(f->gates[i].v1 - f->gates[i].v0) / LAYOUT_UNIT : 0;
+        for (size_t i = 0; i < f->arc_count; i++)
+            sum += (double)f->arcs[i].cut_count * (double)(f->arcs[i].v1 - f->arcs[i].v0) /
+                   LAYOUT_UNIT;
+        slab->evaluations += 4 * (f->gate_count + f->arc_count);
+    }
+    return sum;
+}
+
 static enum status total(struct rect_slab *slab, double *cost, size_t *broken)
 {
     struct rect_panel *panels = NULL;
-    struct rect_chord *chords = NULL;
-    size_t n = 0, m = 0;
-    enum status status = rect_panels(slab, &panels, &n);
-    if (!status)
-        status = rect_chords(slab, &chords, &m);
-    if (status) {
-        free(panels);
+    size_t n = 0;
+    const enum status status = rect_panels(slab, &panels, &n);
+    if (status)
         return status;
-    }
-    double sum = 0;
+    double sum = chord_metres(slab);
     *broken = 0;
-    slab->evaluations += 8 * n + 4 * m;
-    for (size_t i = 0; i < m; i++)
-        sum += (double)(chords[i].v1 - chords[i].v0) / LAYOUT_UNIT;
+    slab->evaluations += 8 * n;
     for (size_t i = 0; i < n; i++)
         sum += panel_cost(slab, &panels[i], broken);
     free(panels);
-    free(chords);
     *cost = sum;
     return STATUS_OK;
 }
@@ -281,6 +291,20 @@ static enum status starts(struct rect_slab *slab, struct kept *best)
     return status;
 }
 
+/* Every corner by x, then every one by y: is there a plan without a breach near at hand? */
+static enum status glance(struct rect_slab *slab, struct kept *best)
+{
+    enum status status = STATUS_OK;
+    slab->broken = 1;
+    for (int start = 0; !status && slab->broken && start < (slab->corner_count ? 2 : 1); start++) {
+        set_start(slab, start);
+        status = descend(slab, 0, false, best);
+        if (!status && slab->broken)
+            status = descend(slab, 1, false, best);
+    }
+    return status;
+}
+
 enum status rect_solve(struct rect_slab *slab, enum rect_depth depth)
 {
     struct kept best = {0};
@@ -290,11 +314,11 @@ enum status rect_solve(struct rect_slab *slab, enum rect_depth depth)
     else if (!status && !keep(&best, slab))
         status = STATUS_NO_MEMORY;
     if (!status)
-        status = starts(slab, &best);
+        status = depth == RECT_GLANCE ? glance(slab, &best) : starts(slab, &best);
     slab->start_cost = slab->evaluations;
-    if (depth == RECT_QUICK && slab->allowed > 3 * slab->start_cost)
+    if (depth <= RECT_QUICK && slab->allowed > 3 * slab->start_cost)
         slab->allowed = 3 * slab->start_cost;
-    if (!status && slab->broken && slab->group_count > 1)
+    if (!status && depth > RECT_GLANCE && slab->broken && slab->group_count > 1)
         status = flip_groups(slab, &best);
     if (!status && depth > RECT_QUICK)
         status = flips(slab, &best);

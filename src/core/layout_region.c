@@ -62,7 +62,7 @@ enum status zone_build(struct work *w, struct rect_edge *const edges[2], const s
     place_force_lines(w, slab);
     for (size_t i = 0; !status && i < w->box_count; i++) {
         const struct work_box *b = &w->boxes[i];
-        struct rect_box box = {.x = b->x, .y = b->y};
+        struct rect_box box = {.x = b->x, .y = b->y, .number = i};
         memcpy(box.tip, b->tip, sizeof box.tip);
         if (!b->dropped && zone_holds(slab, b->x, b->y))
             status = rect_add_box(slab, &box);
@@ -119,6 +119,15 @@ static enum status add_zone(struct search *s, struct parts *p, const struct rect
         add_edge(&z->edges, 1, a->v1, a->u0, a->u1);
     }
     return zone_build(s->w, z->edges.list, z->edges.count, &z->slab);
+}
+
+double zone_panels(const struct zone *z)
+{
+    const struct rect_family *f = &z->slab.family[0];
+    double area = 0;
+    for (size_t i = 0; i < f->arc_count; i++)
+        area += (double)(f->arcs[i].u1 - f->arcs[i].u0) * (double)(f->arcs[i].v1 - f->arcs[i].v0);
+    return area / z->slab.rules.side[0] / z->slab.rules.side[1];
 }
 
 enum status zone_lay_out(struct search *s, struct zone *z, enum rect_depth deep)

@@ -9,7 +9,10 @@ static int compare_int64(const void *a, const void *b)
 
 void sort_int64(int64_t *list, size_t count)
 {
-    if (count)
+    size_t i = 1;
+    while (i < count && list[i - 1] <= list[i])
+        i++;
+    if (i < count)
         qsort(list, count, sizeof *list, compare_int64);
 }
 

@@ -100,7 +100,8 @@ static bool same_places(const struct variants *v)
     return true;
 }
 
-static enum status try_variant(struct variants *v, const bool *keep_off, const bool *stay)
+static enum status try_variant(struct variants *v, const bool *keep_off, const bool *stay,
+                               bool parted)
 {
     struct work *w = v->w;
     if (w->box_count)
@@ -108,6 +109,13 @@ static enum status try_variant(struct variants *v, const bool *keep_off, const b
     for (size_t i = 0; i < w->box_count; i++) {
         w->boxes[i].keep_off = keep_off[i];
         w->boxes[i].stay = stay[i];
+    }
+    place_on_edges(w);
+    v->same = false;
+    if (parted) {
+        w->line_count = v->line_count;
+        const enum status status = zone_solve(w, v->edges, v->count, true);
+        return status || place_name_boxes(w) ? status : STATUS_NO_MEMORY;
     }
     if (!place_snap(w))
         return STATUS_NO_MEMORY;
@@ -120,14 +128,14 @@ static enum status try_variant(struct variants *v, const bool *keep_off, const b
     v->placed_once = true;
     if (w->box_count)
         memcpy(v->placed, w->boxes, w->box_count * sizeof *w->boxes);
-    return zone_solve(w, v->edges, v->count);
+    return zone_solve(w, v->edges, v->count, false);
 }
 
 /* Solves it; true in *last when it is the best so far, *gained too; not solved again: as it was. */
-static enum status compare(struct variants *v, const bool *keep_off, const bool *stay, bool *last,
-                           bool *gained)
+static enum status compare(struct variants *v, const bool *keep_off, const bool *stay, bool parted,
+                           bool *last, bool *gained)
 {
-    const enum status status = try_variant(v, keep_off, stay);
+    const enum status status = try_variant(v, keep_off, stay, parted);
     if (v->same)
         return status;
     *last = !status && (v->w->broken < v->broken ||
@@ -153,7 +161,7 @@ static enum status try_all_alike(struct variants *v, bool *keep_off, bool *stay,
             break;
         memset(keep_off, k & 1, v->w->box_count * sizeof *keep_off);
         memset(stay, k >> 1, v->w->box_count * sizeof *stay);
-        status = compare(v, keep_off, stay, last, &gained);
+        status = compare(v, keep_off, stay, false, last, &gained);
     }
     return status;
 }
@@ -171,8 +179,23 @@ static enum status try_one_by_one(struct variants *v, bool *keep_off, bool *stay
             memcpy(stay, v->stay, v->w->box_count * sizeof *stay);
             bool *one = i % 2 ? &stay[i / 2] : &keep_off[i / 2];
             *one = !*one;
-            status = compare(v, keep_off, stay, last, &gained);
+            status = compare(v, keep_off, stay, false, last, &gained);
         }
+    }
+    return status;
+}
+
+/* Parted before it is laid out; then with no box on an edge it need not stand on. */
+static enum status try_parted(struct variants *v, bool *keep_off, bool *stay, bool *last)
+{
+    enum status status = STATUS_OK;
+    bool gained;
+    for (int k = 0; !status && k < 2 && v->broken; k++) {
+        if (k && (v->w->slab.evaluations > v->allowed / 4 || !zone_go_on(v->w)))
+            break;
+        memset(keep_off, k, v->w->box_count * sizeof *keep_off);
+        memset(stay, 0, v->w->box_count * sizeof *stay);
+        status = compare(v, keep_off, stay, true, last, &gained);
     }
     return status;
 }
@@ -195,13 +218,19 @@ enum status variant_solve(struct work *w, struct rect_edge *const edges[2], cons
     enum status status = v.origin && v.placed && v.keep_off && v.stay && keep_off && stay
                              ? STATUS_OK
                              : STATUS_NO_MEMORY;
-    if (!status) {
+    const bool many = zone_is_many(w, edges, count);
+    if (!status)
         memcpy(v.origin, w->boxes, n * sizeof *v.origin);
+    if (!status && many)
+        status = try_parted(&v, keep_off, stay, &last);
+    const bool alike = !many || (v.broken && !zone_is_vast(w));
+    if (!status && alike)
         status = n ? try_all_alike(&v, keep_off, stay, &last)
-                   : compare(&v, keep_off, stay, &last, &gained);
-    }
-    if (!status && n)
+                   : compare(&v, keep_off, stay, false, &last, &gained);
+    if (!status && n && alike)
         status = try_one_by_one(&v, keep_off, stay, &last);
+    if (!status && !many && v.broken && n > 1)
+        status = try_parted(&v, keep_off, stay, &last);
     if (!status && !last && v.kept.boxes)
         give_back(&v);
     kept_free(&v.kept);

@@ -19,6 +19,7 @@ struct work_box {
     bool on_x, on_y; /* on a slab edge parallel to y, to x */
     bool keep_off;   /* variant: no triangle on an edge farther than its half */
     bool stay;       /* variant: not moved onto a common line */
+    bool held[2];    /* its x, its y is settled */
 };
 struct work_line { /* a line with a name: what forces it, and what kind the joint on it is */
     int axis;
@@ -52,6 +53,7 @@ struct work {
     size_t panel_count;
     struct layout_index panel_index; /* of the panels in plan order */
     size_t cut_count;                /* construction joints the program put in */
+    int attempt;                     /* way of parting the slab */
     bool stopped;                    /* the caller wants the best so far */
     double cost;                     /* metres and penalties of the zones */
     size_t broken;

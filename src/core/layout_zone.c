@@ -1,6 +1,7 @@
 /* Zones: where lines common to the whole slab break a rule, construction joints close parts of it
  * and each part is laid out alone (design, "Zone at construction/isolation joints"). */
 #include "core/layout_zone.h"
+#include "core/layout_partition.h"
 #include "core/layout_place.h"
 #include "core/layout_region.h"
 #include <math.h>
@@ -38,11 +39,15 @@ bool zone_go_on(struct work *w)
 /* A zone of so many panels that trying every cut would take too long: the first two do. */
 static bool is_vast(const struct zone *z)
 {
-    const struct rect_family *f = &z->slab.family[0];
-    double area = 0;
-    for (size_t i = 0; i < f->arc_count; i++)
-        area += (double)(f->arcs[i].u1 - f->arcs[i].u0) * (double)(f->arcs[i].v1 - f->arcs[i].v0);
-    return area > 1500 * z->slab.rules.side[0] * z->slab.rules.side[1];
+    return zone_panels(z) > 1500;
+}
+
+static bool is_broken(const struct parts *p)
+{
+    size_t broken = 0;
+    for (size_t i = 0; i < p->count; i++)
+        broken += p->zones[i].slab.broken;
+    return broken > 0;
 }
 
 static enum status best_split(struct search *s, const struct zone *z, struct parts *best)
@@ -63,6 +68,8 @@ static enum status best_split(struct search *s, const struct zone *z, struct par
         if (p.count > 1 && p.cost < limit - 1e-6) {
             parts_free(best);
             *best = p;
+            if (s->trying && !is_broken(best))
+                break; /* good enough among many */
         } else {
             parts_free(&p);
         }
@@ -154,7 +161,36 @@ static enum status solve_zone(struct search *s, struct zone *z, int depth)
     return status;
 }
 
-enum status zone_solve(struct work *w, struct rect_edge *const edges[2], const size_t count[2])
+/* Panels if none is smaller than it must be. */
+static double least_panels(const struct work *w)
+{
+    const struct work_ring *r = &w->rings[0];
+    double area = 0;
+    for (size_t i = 0; i < r->count; i++) {
+        const size_t k = (i + 1) % r->count;
+        area += ((double)r->x[i] * (double)r->y[k] - (double)r->x[k] * (double)r->y[i]) / 2;
+    }
+    return fabs(area) / w->slab.rules.side[0] / w->slab.rules.side[1];
+}
+
+bool zone_is_many(const struct work *w, struct rect_edge *const edges[2], const size_t count[2])
+{
+    (void)edges;
+    return w->box_count + (count[0] + count[1]) / 4 > 7 && least_panels(w) > 150;
+}
+
+bool zone_is_vast(const struct work *w)
+{
+    return least_panels(w) > 1500;
+}
+
+enum status zone_search(struct search *s, struct zone *z)
+{
+    return solve_zone(s, z, 0);
+}
+
+enum status zone_solve(struct work *w, struct rect_edge *const edges[2], const size_t count[2],
+                       bool parted)
 {
     struct search s = {.w = w, .allowed = w->slab.allowed / 2};
     const uint64_t left =
@@ -171,11 +207,15 @@ enum status zone_solve(struct work *w, struct rect_edge *const edges[2], const s
     w->chord_count = w->panel_count = 0;
     enum status status = place_index_boxes(w) ? STATUS_OK : STATUS_NO_MEMORY;
     if (!status)
-        status = parts_add(&s, &p, &whole, RECT_FULL);
-    for (size_t i = 0; !status && i < p.count; i++)
+        status = parted ? parts_build(&s, &p, &whole) : parts_add(&s, &p, &whole, RECT_FULL);
+    if (!status && parted)
+        status = partition_solve(&s, &p);
+    for (size_t i = 0; !status && !parted && i < p.count; i++)
         status = solve_zone(&s, &p.zones[i], 0);
     w->slab.evaluations += s.used;
     parts_free(&p);
+    if (!status && parted && !place_index_boxes(w))
+        status = STATUS_NO_MEMORY;
     if (!status) {
         zone_relabel_cuts(w);
         w->broken += zone_mark_faults(w);

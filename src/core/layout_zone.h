@@ -13,7 +13,12 @@ size_t zone_mark_faults(struct work *w);
 void zone_relabel_cuts(struct work *w);
 /* False: the caller wants the best so far. */
 bool zone_go_on(struct work *w);
-/* Fills chords and panels of the work, and the lines of the joints it adds. */
-enum status zone_solve(struct work *w, struct rect_edge *const edges[2], const size_t count[2]);
+/* More objects and inside corners than a search over the whole slab can go through; more panels. */
+bool zone_is_many(const struct work *w, struct rect_edge *const edges[2], const size_t count[2]);
+bool zone_is_vast(const struct work *w);
+/* Fills chords and panels of the work, and the lines of the joints it adds. parted: for many
+ * objects, which take their last places meanwhile. */
+enum status zone_solve(struct work *w, struct rect_edge *const edges[2], const size_t count[2],
+                       bool parted);
 
 #endif

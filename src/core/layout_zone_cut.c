@@ -28,10 +28,10 @@ bool cut_is_clear(const struct zone *z, int axis, int64_t u)
 }
 
 /* A joint of contraction the user drew stays one: no zone ends there. */
-static bool is_kept(const struct work *w, struct cut cut)
+bool cut_is_kept(const struct work *w, int axis, int64_t u)
 {
     for (size_t i = 0; i < w->line_count; i++)
-        if (w->lines[i].labels && w->lines[i].axis == cut.axis && w->lines[i].u == cut.u &&
+        if (w->lines[i].labels && w->lines[i].axis == axis && w->lines[i].u == u &&
             w->lines[i].kind == LAYOUT_CONTRACTION)
             return true;
     return false;
@@ -39,7 +39,7 @@ static bool is_kept(const struct work *w, struct cut cut)
 
 static void add_cut(const struct search *s, const struct zone *z, struct cuts *c, struct cut cut)
 {
-    if (is_kept(s->w, cut))
+    if (cut_is_kept(s->w, cut.axis, cut.u))
         return;
     if (cut_length(z, cut.axis, cut.u) <= 0 || !cut_is_clear(z, cut.axis, cut.u))
         return;
@@ -60,6 +60,36 @@ static bool runs_across(const struct zone *z, const struct work_line *l)
         if (f->gates[i].u == l->u && (l->v0 > f->gates[i].v0 || l->v1 < f->gates[i].v1))
             return false;
     return true;
+}
+
+/* The extent of a zone along an axis. */
+static void reach_of(const struct rect_family *f, int64_t *low, int64_t *high)
+{
+    *low = INT64_MAX;
+    *high = INT64_MIN;
+    for (size_t i = 0; i < f->arc_count; i++) {
+        *low = f->arcs[i].u0 < *low ? f->arcs[i].u0 : *low;
+        *high = f->arcs[i].u1 > *high ? f->arcs[i].u1 : *high;
+    }
+}
+
+bool cut_given(const struct search *s, const struct zone *z, struct cut *cut)
+{
+    double least = INFINITY;
+    for (size_t i = 0; i < s->w->line_count; i++) {
+        const struct work_line *l = &s->w->lines[i];
+        int64_t low, high;
+        if (!l->labels || l->kind == LAYOUT_CONTRACTION || !runs_across(z, l) ||
+            cut_length(z, l->axis, l->u) <= 0 || !cut_is_clear(z, l->axis, l->u))
+            continue;
+        reach_of(&z->slab.family[l->axis], &low, &high);
+        const double off = fabs((double)(l->u - low) / (double)(high - low) - 0.5);
+        if (off >= least)
+            continue;
+        least = off;
+        *cut = (struct cut){.axis = l->axis, .u = l->u, .given = true};
+    }
+    return isfinite(least);
 }
 
 /* Where the zone may be cut: joints that must be there anyhow, lines of boxes and inside corners,
@@ -108,17 +138,6 @@ enum status cuts_find(const struct search *s, const struct zone *z, struct cuts 
         free(at);
     }
     return STATUS_OK;
-}
-
-/* The extent of a zone along an axis. */
-static void reach_of(const struct rect_family *f, int64_t *low, int64_t *high)
-{
-    *low = INT64_MAX;
-    *high = INT64_MIN;
-    for (size_t i = 0; i < f->arc_count; i++) {
-        *low = f->arcs[i].u0 < *low ? f->arcs[i].u0 : *low;
-        *high = f->arcs[i].u1 > *high ? f->arcs[i].u1 : *high;
-    }
 }
 
 static int compare_cut(const void *a, const void *b)

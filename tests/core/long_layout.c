@@ -6,8 +6,7 @@
 #include <stddef.h>
 #include <stdint.h>
 /* cmocka.h needs the headers above */
-#include "layout_checker.h"
-#include <cmocka.h>
+#include "crowded_check.h"
 
 struct draw {
     uint64_t state;
@@ -137,8 +136,27 @@ static void random_slabs(void **state)
     assert_true(clean >= all * 9 / 10);
 }
 
+/* Yards of 1 000 panels with 30 columns, and of 50 000 with 900 columns and 20 openings. */
+static void crowded_yards(void **state)
+{
+    (void)state;
+    static const struct yard_case plain = {150, 130, 30, 0, 4e6, 0},
+                                  holes = {150, 130, 30, 2, 1e7, 0},
+                                  fifty = {1050, 900, 900, 20, 1e8, 0};
+    struct checker c = {.geos = GEOS_init_r()};
+    for (enum yard_order order = YARD_GRID; order <= YARD_ANYWHERE; order++) {
+        for (uint64_t seed = 1; seed <= 20; seed++) {
+            yard_check(&c, &plain, order, seed);
+            yard_check(&c, &holes, order, seed);
+        }
+        yard_check(&c, &fifty, order, 3);
+    }
+    GEOS_finish_r(c.geos);
+}
+
 int main(void)
 {
-    const struct CMUnitTest tests[] = {cmocka_unit_test(random_slabs)};
+    const struct CMUnitTest tests[] = {cmocka_unit_test(random_slabs),
+                                       cmocka_unit_test(crowded_yards)};
     return cmocka_run_group_tests(tests, NULL, NULL);
 }
