@@ -125,7 +125,7 @@ static const char *const keys[] = {
     "program",    "job",       "spacing",       "temperature",    "shrinkage", "movement",
     "working",    "seal",      "sealing_table", "isolation",      "cut",       "checks",
     "quantities", "joints",    "layout",        "layout_reasons", "findings",  "concrete",
-    "steel",      "restraint", "pours",         "cracks",
+    "steel",      "restraint", "pours",         "cracks",         "choice",
 };
 enum { KEY_COUNT = sizeof keys / sizeof *keys };
 

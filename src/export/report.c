@@ -4,6 +4,7 @@
 #include "export/lines.h"
 #include "base/utf8.h"
 #include "export/names.h"
+#include "export/seal_chart.h"
 #include "export/wrap.h"
 #include "job/field.h"
 #include "plan/result.h"
@@ -268,6 +269,27 @@ static void add_table(struct text *out, const struct plan *plan)
         return;
     heading(out, "SEALING TABLE (the joint as cut, sealed at another slab temperature)");
     add_list(out, plan, "sealing_table", keys, TABLE_MOST);
+    text_add(out, "\n  Which width may be sealed at which slab temperature, both measured then:\n");
+    seal_chart_add(out, plan, REPORT_COLUMNS);
+}
+
+static void add_choice(struct text *out, const struct plan *plan)
+{
+    struct text words = {0};
+
+    if (plan->choice_count == 0)
+        return;
+    heading(out, "WHICH SEALANT (usual classes; the tin wins; common practice and memory)");
+    for (size_t i = 0; i < plan->choice_count; i++) {
+        char first[32];
+        snprintf(first, sizeof first, "%c %s", plan->choices[i].now ? '*' : ' ',
+                 plan->choices[i].kind);
+        text_clear(&words);
+        seal_choice_words(&words, plan, &plan->choices[i]);
+        wrap_add(out, first, 20, text_string(&words), REPORT_COLUMNS);
+    }
+    out->failed = out->failed || words.failed;
+    text_free(&words);
 }
 
 static void add_isolation(struct text *out, const struct plan *plan)
@@ -588,21 +610,14 @@ static const struct part {
     const char *key;
     void (*add)(struct text *out, const struct plan *plan);
 } parts[] = {
-    {"answers", add_answers},
-    {"job", add_job},
-    {"findings", add_findings},
-    {"spacing", add_spacing},
-    {"temperature", add_temperature},
-    {"seal", add_seal},
-    {"sealing_table", add_table},
-    {"isolation", add_isolation},
-    {"checks", add_checks},
-    {"quantities", add_quantities},
-    {"joints", add_joints},
-    {"layout", add_layout},
-    {"pours", add_pours},
-    {"cracks", add_cracks},
-    {"cautions", add_cautions},
+    {"answers", add_answers},         {"job", add_job},
+    {"findings", add_findings},       {"spacing", add_spacing},
+    {"temperature", add_temperature}, {"seal", add_seal},
+    {"sealing_table", add_table},     {"choice", add_choice},
+    {"isolation", add_isolation},     {"checks", add_checks},
+    {"quantities", add_quantities},   {"joints", add_joints},
+    {"layout", add_layout},           {"pours", add_pours},
+    {"cracks", add_cracks},           {"cautions", add_cautions},
 };
 /* Keys of the JSON that stand inside another part of the text. */
 static const char *const inside[][2] = {

@@ -83,6 +83,7 @@ static enum status run_chain(struct plan *plan, struct plan_cache *cache,
         return status;
     plan_set_seal(plan);
     plan_set_joint_seals(plan);
+    plan_set_choice(plan);
     status = plan_set_isolation(plan);
     if (status != STATUS_OK)
         return status;

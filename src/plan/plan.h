@@ -26,6 +26,7 @@ struct plan_working {
 };
 struct plan_table_row {
     double slab_c, gap_m, extension, compression;
+    double least_m; /* narrowest joint that may be sealed then, measured then, tolerance in */
     enum verdict verdict;
     bool too_cold;
 };
@@ -74,6 +75,16 @@ struct plan_width { /* the same joints at another width */
 };
 struct plan_board { /* soft board of one thickness */
     double thickness_m, length_m, area_m2;
+};
+
+enum { CHOICE_KINDS = 8 };
+struct plan_choice { /* one kind of sealant */
+    int kind_index;
+    const char *kind;
+    bool fits, now;
+    double width_m, depth_m, extension, compression; /* narrowest that holds; NAN none */
+    char reason[320];                                /* why not */
+    char remark[200];                                /* what to mind all the same */
 };
 
 struct plan_pour { /* what is placed at once */
@@ -159,6 +170,8 @@ struct plan {
     } seal;
     struct plan_table_row table[TABLE_MOST];
     size_t table_count;
+    struct plan_choice choices[CHOICE_KINDS];
+    size_t choice_count;
     struct plan_isolation *isolation;
     size_t isolation_count;
     struct {

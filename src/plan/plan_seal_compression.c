@@ -11,13 +11,19 @@ static struct sealant_seal seal_of(const struct plan *plan, double seal_m)
                                  .most = plan->job.sealant_seal_most};
 }
 
+static double demand_of(const struct plan *plan, double seal_m, struct plan_worst worst,
+                        double slot_m)
+{
+    struct sealant_seal seal = seal_of(plan, seal_m);
+    struct sealant_follow follow = sealant_seal_follow(&seal, slot_m, plan->job.sealing_tolerance);
+
+    return sealant_seal_demand(follow, worst.open, worst.close);
+}
+
 double plan_compression_demand(const struct plan *plan, double open_m, double close_m,
                                double slot_m)
 {
-    struct sealant_seal seal = seal_of(plan, plan->seal.rod_m);
-    struct sealant_follow follow = sealant_seal_follow(&seal, slot_m, plan->job.sealing_tolerance);
-
-    return sealant_seal_demand(follow, open_m, close_m);
+    return demand_of(plan, plan->seal.rod_m, (struct plan_worst){open_m, close_m}, slot_m);
 }
 
 /* The slot of the published formula at the sealing temperature, on the saw's raster, held within
@@ -50,7 +56,22 @@ static bool try_size(struct plan *plan, double seal_m, struct plan_worst worst)
     plan->seal.rod_m = seal_m;
     plan->seal.width_m =
         typed(plan->job.sealant_width) ? plan->job.sealant_width : slot_for(plan, seal_m, worst);
-    return plan_compression_demand(plan, worst.open, worst.close, plan->seal.width_m) <= 1 + 1e-9;
+    return demand_of(plan, seal_m, worst, plan->seal.width_m) <= 1 + 1e-9;
+}
+
+bool plan_compression_fit(const struct plan *plan, struct plan_worst worst, double *seal_m,
+                          double *slot_m)
+{
+    double sizes[PLAN_BLADES_MOST];
+    size_t count = plan_stock(plan, seal_table, seal_count, sizes);
+
+    for (size_t i = 0; i < count; i++) {
+        *seal_m = sizes[i];
+        *slot_m = slot_for(plan, sizes[i], worst);
+        if (demand_of(plan, sizes[i], worst, *slot_m) <= 1 + 1e-9)
+            return true;
+    }
+    return false;
 }
 
 /* The smallest seal in stock that follows; when none does, the published least size, which fails

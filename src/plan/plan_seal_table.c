@@ -33,12 +33,18 @@ struct sealant_joint plan_sealant_joint(const struct plan *plan)
 static void add_table_row(struct plan *plan, const struct sealant_joint *joint, double slab_c)
 {
     struct sealant_moment at = sealant_row_at(joint, slab_c);
+    double least =
+        joint->basis == SEALANT_OF_REST
+            ? sealant_least_mean_width(at.open_m, at.close_m,
+                                       fmin(joint->capacity.extension, joint->capacity.compression))
+            : sealant_least_width(at.open_m, at.close_m, joint->capacity, 0);
 
     if (plan->table_count >= TABLE_MOST)
         return;
     plan->table[plan->table_count++] =
         (struct plan_table_row){.slab_c = slab_c,
                                 .gap_m = at.gap_m,
+                                .least_m = least + joint->tolerance_m,
                                 .extension = at.extension,
                                 .compression = at.compression,
                                 .verdict = verdict_of(at.demand, 1),

@@ -17,6 +17,7 @@ void plan_set_seal(struct plan *plan);            /* width, strains, table, wind
 void plan_set_seal_table(struct plan *plan);      /* part of plan_set_seal */
 void plan_set_compression_seal(struct plan *plan);
 void plan_set_working(struct plan *plan);
+void plan_set_choice(struct plan *plan);      /* kinds of sealant, each with its reasons */
 void plan_set_joint_seals(struct plan *plan); /* width and strains of every joint */
 enum status plan_set_isolation(struct plan *plan);
 void plan_set_restraint(struct plan *plan);
@@ -97,6 +98,9 @@ struct sealant_joint plan_sealant_joint(const struct plan *plan);
 /* Share of what a compression seal of seal.rod_m can follow from this slot; above 1 it fails. */
 double plan_compression_demand(const struct plan *plan, double open_m, double close_m,
                                double slot_m);
+/* The smallest seal in stock that follows from a slot the saw can cut; false: none. */
+bool plan_compression_fit(const struct plan *plan, struct plan_worst worst, double *seal_m,
+                          double *slot_m);
 /* Narrowest blade of the kind that holds with room for these movements; NAN: none. */
 double plan_narrowest(const struct plan *plan, double open_m, double close_m);
 /* Width at sealing of a joint cut this wide at the cutting temperature. */

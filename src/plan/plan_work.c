@@ -33,8 +33,8 @@ void plan_set_work(struct plan *plan)
     add_work(plan, "cleaning", job->takeoff_clean_pace, 1);
     if (isfinite(plan->seal.depth_m) && job->sealant_backing != BACKING_NONE &&
         job->sealant_kind <= SEALANT_HOT_POUR)
-        add_work(plan, job->sealant_backing == BACKING_TAPE ? "tape" : "rod",
-                 job->takeoff_rod_pace, 1);
+        add_work(plan, job->sealant_backing == BACKING_TAPE ? "tape" : "rod", job->takeoff_rod_pace,
+                 1);
     if (job->sealant_kind != SEALANT_COMPRESSION_SEAL)
         add_work(plan, tools[job->takeoff_tool], job->takeoff_tool_pace, job->takeoff_tools);
     slowest = &plan->quantities.works[0];
@@ -139,9 +139,9 @@ static struct plan_width width_row(const struct plan *plan, double width, bool n
     row.compression = strains.compression;
     row.verdict = plan_seal_verdict(plan, worst.open, worst.close, width);
     row.when_n3 = plan_seal_verdict(plan, plan->working[2].open_m, plan->working[2].close_m, width);
-    row.depth_m = now ? plan->seal.depth_m
-                      : sealant_depth(width, kind->depth_ratio, kind->depth_least,
-                                      kind->depth_most);
+    row.depth_m =
+        now ? plan->seal.depth_m
+            : sealant_depth(width, kind->depth_ratio, kind->depth_least, kind->depth_most);
     row.rod_m = now ? plan->seal.rod_m : plan_next_size(rods, count, 1.25 * width);
     net = quantity_bead(length, width, row.depth_m);
     if (plan->job.takeoff_rod_cusps && plan->job.sealant_backing == BACKING_ROD)
@@ -157,8 +157,8 @@ static void add_width(struct plan *plan, double width, bool now)
         plan->quantities.widths[plan->quantities.width_count++] = width_row(plan, width, now);
 }
 
-/* From the blade below the first that does not fail up to the first that takes one cut in three; the
- * job's own width at its place. */
+/* From the blade below the first that does not fail up to the first that takes one cut in three;
+ * the job's own width at its place. */
 void plan_set_other_widths(struct plan *plan)
 {
     const struct sealant_row *kind = &sealant_table[plan->job.sealant_kind];
@@ -169,9 +169,9 @@ void plan_set_other_widths(struct plan *plan)
 
     if (!plan->seal.sealed || plan->working_count < 3 || !(plan->quantities.sealed_m > 0))
         return;
-    while (first < count && (blades[first] < kind->width_least - 1e-9 ||
-                             plan_seal_verdict(plan, worst.open, worst.close, blades[first]) ==
-                                 VERDICT_FAILS))
+    while (first < count &&
+           (blades[first] < kind->width_least - 1e-9 ||
+            plan_seal_verdict(plan, worst.open, worst.close, blades[first]) == VERDICT_FAILS))
         first++;
     first -= first > 0 && blades[first - 1] >= kind->width_least - 1e-9;
     for (size_t i = first; i < count && !(placed && enough); i++) {

@@ -172,10 +172,21 @@ static const struct column working_columns[] = {
 static const struct column table_columns[] = {
     CNUM(plan_table_row, "slab_c", "slab", DEGC, slab_c),
     CNUM(plan_table_row, "gap_m", "width", MM, gap_m),
+    CNUM(plan_table_row, "least_m", "least width", MM, least_m),
     CNUM(plan_table_row, "extension", "stretch", SHARE, extension),
     CNUM(plan_table_row, "compression", "squeeze", SHARE, compression),
     COLUMN("too_cold", "too cold", RESULT_BOOL, QUANTITY_NONE, 1.0, plan_table_row, too_cold),
     CVERDICT(plan_table_row, verdict),
+};
+static const struct column choice_columns[] = {
+    CWORD(plan_choice, "kind", "kind", kind),
+    COLUMN("fits", "fits", RESULT_BOOL, QUANTITY_NONE, 1.0, plan_choice, fits),
+    CNUM(plan_choice, "width_m", "width", MM, width_m),
+    CNUM(plan_choice, "depth_m", "depth", MM, depth_m),
+    CNUM(plan_choice, "extension", "stretch", SHARE, extension),
+    CNUM(plan_choice, "compression", "squeeze", SHARE, compression),
+    CTEXT(plan_choice, "reason", "why not", reason),
+    CTEXT(plan_choice, "remark", "mind", remark),
 };
 static const struct column isolation_columns[] = {
     CTEXT(plan_isolation, "where", "where", where),
@@ -279,6 +290,7 @@ static const struct column joint_columns[] = {
 ROWS(limit_rows, spacing.rows, spacing.count)
 ROWS(working_rows, working, working_count)
 ROWS(table_rows, table, table_count)
+ROWS(choice_rows, choices, choice_count)
 ROWS(isolation_rows, isolation, isolation_count)
 ROWS(check_rows, checks, check_count)
 ROWS(pour_rows, pours, pour_count)
@@ -304,6 +316,7 @@ const struct list list_table[] = {
     LIST("spacing.limits", limit_columns, plan_limit, limit_rows),
     LIST("working", working_columns, plan_working, working_rows),
     LIST("sealing_table", table_columns, plan_table_row, table_rows),
+    LIST("choice", choice_columns, plan_choice, choice_rows),
     LIST("isolation", isolation_columns, plan_isolation, isolation_rows),
     LIST("checks", check_columns, plan_check, check_rows),
     LIST("pours", pour_columns, plan_pour, pour_rows),

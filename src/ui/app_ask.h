@@ -42,6 +42,10 @@ void plan_move_line(struct app *app);
 void seal_take_measured(struct app *app);
 bool seal_draw_now(const struct app *app, struct canvas *canvas, int at, int rows);
 
+/* page_seal_view.c */
+enum { SEAL_VIEW_WORK, SEAL_VIEW_WIDTHS, SEAL_VIEW_KINDS, SEAL_VIEWS };
+void seal_draw_view(const struct app *app, struct canvas *canvas, int top, int rows);
+
 /* page_year.c */
 void year_fill(struct app *app);
 

@@ -81,6 +81,7 @@ struct app {
     struct document *document;
     struct job job;          /* settled, from the document */
     struct plan plan;        /* the last good one */
+    int seal_view;           /* what the page seal shows below its answers */
     struct plan_cache cache; /* of plans the form makes itself */
     struct plan_maker maker;
     struct weather_source source;

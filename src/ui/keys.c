@@ -34,6 +34,8 @@ const struct key_row key_table[] = {
     {'v', ACTION_MOVE, PLACE_PLAN, "v", NULL, "Plan: moves the line under the cross."},
     {'g', ACTION_MEASURED, PLACE_SEAL, "g", NULL,
      "Seal: go or not, from what is measured at the joint."},
+    {'v', ACTION_VIEW, PLACE_SEAL, "v", NULL,
+     "Seal: which width at which slab temperature; which sealant; back."},
     {'z', ACTION_NEARER, PLACE_PLAN, "z", NULL, "Plan: nearer."},
     {'x', ACTION_FARTHER, PLACE_PLAN, "x", NULL, "Plan: farther."},
 };

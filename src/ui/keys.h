@@ -52,6 +52,7 @@ enum action {
     ACTION_KEEP,
     ACTION_MOVE,
     ACTION_MEASURED,
+    ACTION_VIEW,
     ACTION_NEARER,
     ACTION_FARTHER
 };

@@ -261,9 +261,16 @@ static void seal_draw(const struct app *app, struct canvas *canvas)
             canvas, 3, 0, app->columns, STYLE_BOLD,
             "Slab, width, air, damp %; rising, falling, dry, wet, clean: 15 10 12 70 ris dry");
     else if (!seal_draw_now(app, canvas, app_roomy(app) ? 3 : 2, app_roomy(app) ? 1 : 2))
-        canvas_words(canvas, 3, 0, app->columns, STYLE_BOLD,
-                     "NOW     g: go or not, from slab, width, air and damp measured at the joint.");
+        canvas_words(
+            canvas, 3, 0, app->columns, STYLE_BOLD,
+            "NOW     g: go or not, measured at the joint.   v: widths by temperature, kinds.");
     canvas_rule(canvas, 4);
+    if (app->seal_view != SEAL_VIEW_WORK) {
+        seal_draw_view(app, canvas, 5, app->rows - 8 - app_roomy(app));
+        draw_foot(app, canvas, help_of(app, &words));
+        text_free(&words);
+        return;
+    }
     draw_rows(app, canvas, 6, 18, 9);
     canvas_words(canvas, 5, 1, 32, STYLE_BOLD, "IN THIS TABLE");
     sketch = 5 + body;
@@ -284,10 +291,13 @@ static void seal_draw(const struct app *app, struct canvas *canvas)
 
 static bool seal_key(struct app *app, uint32_t pressed)
 {
-    if (key_action(pressed, PLACE_SEAL) != ACTION_MEASURED)
-        return false;
-    app_ask(app, ASK_MEASURED, app->measured);
-    return true;
+    enum action action = key_action(pressed, PLACE_SEAL);
+
+    if (action == ACTION_MEASURED)
+        app_ask(app, ASK_MEASURED, app->measured);
+    else if (action == ACTION_VIEW)
+        app->seal_view = (app->seal_view + 1) % SEAL_VIEWS;
+    return action == ACTION_MEASURED || action == ACTION_VIEW;
 }
 
 const struct page page_seal = {"seal", seal_count, seal_row, seal_draw, seal_key};

@@ -1,6 +1,6 @@
-/* The crew, prices, batches and other widths, worked out by hand from the yard of the examples: 300 m
- * of joint 10 x 10 mm. Paces: FHWA-RD-99-147 Table 8 (75 and 200 m/h within 60 to 90 and 150 to 270);
- * hand gun 32 m/h from memory. */
+/* The crew, prices, batches and other widths, worked out by hand from the yard of the examples: 300
+ * m of joint 10 x 10 mm. Paces: FHWA-RD-99-147 Table 8 (75 and 200 m/h within 60 to 90 and 150 to
+ * 270); hand gun 32 m/h from memory. */
 #include "plan/plan_help.h"
 
 static void assert_near(double value, double wanted, double tolerance)
@@ -91,8 +91,8 @@ static void test_price_with_a_comma(void **state)
     plan_free(&plan);
 }
 
-/* 40 minutes at 23 degC are 40 x 2^0.8 = 69.6 at 15; one gun puts 32 m/h x 36.54 l/300 m into the joint
- * in that time: 4.52 l. */
+/* 40 minutes at 23 degC are 40 x 2^0.8 = 69.6 at 15; one gun puts 32 m/h x 36.54 l/300 m into the
+ * joint in that time: 4.52 l. */
 static void test_batch(void **state)
 {
     struct plan plan;
@@ -173,12 +173,9 @@ static void test_under_the_bead(void **state)
 int main(void)
 {
     const struct CMUnitTest tests[] = {
-        cmocka_unit_test(test_hours),
-        cmocka_unit_test(test_loss),
-        cmocka_unit_test(test_cost),
-        cmocka_unit_test(test_price_with_a_comma),
-        cmocka_unit_test(test_batch),
-        cmocka_unit_test(test_other_widths),
+        cmocka_unit_test(test_hours),          cmocka_unit_test(test_loss),
+        cmocka_unit_test(test_cost),           cmocka_unit_test(test_price_with_a_comma),
+        cmocka_unit_test(test_batch),          cmocka_unit_test(test_other_widths),
         cmocka_unit_test(test_under_the_bead),
     };
 
