@@ -5,6 +5,7 @@
 #define SLABGAP_CORE_LAYOUT_H
 
 #include "base/status.h"
+#include "core/layout_cache.h"
 #include <stdbool.h>
 #include <stddef.h>
 #include <stdint.h>
@@ -72,8 +73,9 @@ struct layout_input {
     double pour_direction_deg;
     const struct layout_drawn *drawn;
     size_t drawn_count;
-    bool us_units; /* free lines on 1/16 in, else whole mm */
-    double effort; /* 1 = usual number of evaluations */
+    bool us_units;              /* free lines on 1/16 in, else whole mm */
+    double effort;              /* 1 = usual number of evaluations */
+    struct layout_cache *cache; /* what earlier layouts remember; NULL: none */
     bool (*go_on)(void *context, double share);
     void *context; /* NULL, or false = stop with the best so far */
 };

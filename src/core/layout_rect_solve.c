@@ -309,6 +309,9 @@ enum status rect_solve(struct rect_slab *slab, enum rect_depth depth)
 {
     struct kept best = {0};
     enum status status = kept_make(&best, slab) ? STATUS_OK : STATUS_NO_MEMORY;
+    for (int axis = 0; axis < 2; axis++) /* the answer depends on nothing met before */
+        for (size_t i = 0; i < slab->family[axis].arc_count; i++)
+            rect_forget(&slab->family[axis].arcs[i]);
     if (!slab->solved)
         slab->cost = INFINITY;
     else if (!status && !keep(&best, slab))

@@ -1,6 +1,7 @@
 /* Regions of a rectilinear slab and the parts they fall into when they are cut. */
 #include "core/layout_region.h"
 #include "core/layout_place.h"
+#include "core/layout_rect_cache.h"
 #include "core/layout_sort.h"
 #include "core/layout_zone.h"
 #include <stdlib.h>
@@ -91,11 +92,15 @@ static size_t find_parts(const struct rect_family *f, size_t *part)
     return n;
 }
 
-/* Evaluations one region may use: a part of what is left. */
+/* Evaluations one region may use: a part of what is left, in steps, so that a zone is most often
+ * asked the same question when another has changed. */
 uint64_t search_share(const struct search *s)
 {
     const uint64_t left = s->used < s->allowed ? s->allowed - s->used : 0;
-    return left / 8;
+    uint64_t share = 1;
+    while (share <= left / 16)
+        share *= 2;
+    return left ? share : 0;
 }
 
 static enum status add_zone(struct search *s, struct parts *p, const struct rect_family *f,
@@ -134,7 +139,7 @@ enum status zone_lay_out(struct search *s, struct zone *z, enum rect_depth deep)
 {
     z->slab.evaluations = 0;
     z->slab.allowed = search_share(s);
-    const enum status status = rect_solve(&z->slab, deep);
+    const enum status status = rect_solve_cached(s->w->input->cache, &z->slab, deep);
     s->used += z->slab.evaluations;
     return status;
 }

@@ -132,10 +132,7 @@ static enum status solve_zone(struct search *s, struct zone *z, int depth)
     if (!status && !best.count && z->slab.broken && depth < DEEPEST && s->used < s->allowed)
         status = best_pair(s, z, &best);
     if (!status && !best.count && z->slab.broken && zone_go_on(s->w)) {
-        z->slab.evaluations = 0;
-        z->slab.allowed = search_share(s);
-        status = rect_solve(&z->slab, RECT_FINE);
-        s->used += z->slab.evaluations;
+        status = zone_lay_out(s, z, RECT_FINE);
     }
     if (!status && !best.count) {
         s->w->cost += z->slab.cost;
@@ -148,12 +145,8 @@ static enum status solve_zone(struct search *s, struct zone *z, int depth)
     }
     for (size_t i = 0; !status && i < best.count; i++) {
         struct zone *part = &best.zones[i];
-        if (part->slab.broken) {
-            part->slab.evaluations = 0;
-            part->slab.allowed = search_share(s);
-            status = rect_solve(&part->slab, RECT_FULL);
-            s->used += part->slab.evaluations;
-        }
+        if (part->slab.broken)
+            status = zone_lay_out(s, part, RECT_FULL);
         if (!status)
             status = solve_zone(s, part, depth + 1);
     }

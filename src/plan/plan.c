@@ -76,7 +76,7 @@ static enum status run_chain(struct plan *plan, struct plan_cache *cache,
     plan_set_shrinkage(plan);
     plan_set_spacing(plan);
     if (plan->has_outline)
-        status = plan_set_layout(plan, progress);
+        status = plan_set_layout(plan, cache, progress);
     if (status == STATUS_OK)
         status = plan_set_movement(plan);
     if (status != STATUS_OK)
@@ -122,6 +122,12 @@ enum status plan_make(const struct job *job, struct plan_cache *cache,
     if (status == STATUS_OK && finding_has_error(&plan->findings))
         status = STATUS_REFUSED;
     return status;
+}
+
+void plan_cache_free(struct plan_cache *cache)
+{
+    layout_cache_free(&cache->layout);
+    *cache = (struct plan_cache){0};
 }
 
 void plan_free(struct plan *plan)

@@ -224,8 +224,8 @@ struct plan {
     struct layout layout;
 };
 
-/* What a plan remembers for the next one: the slab's year. May be NULL everywhere; a plan made with
- * it equals a plan made without. Starts as {0}, owns nothing. */
+/* What a plan remembers for the next one: the slab's year and the layout's zones. May be NULL
+ * everywhere; a plan made with it equals a plan made without. Starts as {0}; plan_cache_free. */
 struct plan_cache {
     bool has_year;
     struct climate_range range;
@@ -234,7 +234,9 @@ struct plan_cache {
     double coldest_c, hottest_c, day_k, night_k;
     int coldest_hour, hottest_hour; /* of the year, from 0 */
     int coldest_year, hottest_year; /* of the record, from 0 */
+    struct layout_cache layout;
 };
+void plan_cache_free(struct plan_cache *cache);
 struct plan_progress {
     bool (*go_on)(void *context, double share);
     void *context;

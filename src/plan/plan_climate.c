@@ -144,11 +144,15 @@ enum status plan_simulate(const struct plan *plan, struct plan_cache *cache, str
     plan_climate(plan, &out->range, &out->slab);
     if (cache != NULL && same_input(cache, out)) {
         *out = *cache;
+        out->layout = (struct layout_cache){0};
         return STATUS_OK;
     }
     status = run_all(plan, out, NULL);
-    if (status == STATUS_OK && cache != NULL)
+    if (status == STATUS_OK && cache != NULL) {
+        const struct layout_cache layout = cache->layout;
         *cache = *out;
+        cache->layout = layout;
+    }
     return status;
 }
 

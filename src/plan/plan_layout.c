@@ -177,7 +177,8 @@ static double or_zero(double value)
     return isfinite(value) ? value : 0;
 }
 
-enum status plan_set_layout(struct plan *plan, const struct plan_progress *progress)
+enum status plan_set_layout(struct plan *plan, struct plan_cache *cache,
+                            const struct plan_progress *progress)
 {
     const struct job *job = &plan->job;
     struct geometry geometry = {0};
@@ -194,6 +195,7 @@ enum status plan_set_layout(struct plan *plan, const struct plan_progress *progr
         .pour_direction_deg = job->pours_direction,
         .us_units = job->job_units == UNITS_US,
         .effort = job->rules_effort,
+        .cache = cache != NULL ? &cache->layout : NULL,
         .go_on = progress != NULL ? progress->go_on : NULL,
         .context = progress != NULL ? progress->context : NULL,
     };

@@ -11,7 +11,8 @@ void plan_set_concrete(struct plan *plan);
 enum status plan_set_temperature(struct plan *plan, struct plan_cache *cache);
 void plan_set_shrinkage(struct plan *plan);
 void plan_set_spacing(struct plan *plan);
-enum status plan_set_layout(struct plan *plan, const struct plan_progress *progress);
+enum status plan_set_layout(struct plan *plan, struct plan_cache *cache,
+                            const struct plan_progress *progress);
 enum status plan_set_movement(struct plan *plan); /* movement, joints, working */
 void plan_set_seal(struct plan *plan);            /* width, strains, table, window */
 void plan_set_seal_table(struct plan *plan);      /* part of plan_set_seal */

@@ -40,6 +40,7 @@ void app_free(struct app *app)
     document_free(app->document);
     job_free(&app->job);
     plan_free(&app->plan);
+    plan_cache_free(&app->cache);
     finding_free(&app->findings);
     history_free(&app->history);
     year_drop(app);

@@ -132,6 +132,7 @@ void worker_free(struct worker *worker)
     pthread_cond_destroy(&worker->asked);
     pthread_cond_destroy(&worker->ready);
     close(worker->event);
+    plan_cache_free(&worker->cache);
     free(worker);
 }
 

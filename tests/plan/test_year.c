@@ -72,6 +72,7 @@ static void test_cache(void **state)
         plan_free(&plain);
         plan_free(&cached);
     }
+    plan_cache_free(&cache);
 }
 
 /* The yard of the examples: open = 1.376 mm, close = 0.8 mm on 10 mm, so 11.4 mm in the cold
