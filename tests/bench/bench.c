@@ -4,10 +4,12 @@
  *                  starting /bin/true
  *   keystroke      the whole chain (plan_make) on an example, against GEOS polygonising the same
  *                  joints and edges (only to name the panels, no rule, no movement)
- *   large slabs    the same on slabs of 1 000 to 50 000 panels, one object moved in every run */
+ *   large slabs    the layout on slabs of 1 000 to 50 000 panels, with columns on and off common
+ *                  lines, and one object moved, against GEOS polygonising the same joints */
+#include "bench/bench_help.h"
+#include "bench/bench_layout.h"
 #include "job/document.h"
 #include "plan/plan.h"
-#include <geos_c.h>
 #include <pty.h>
 #include <signal.h>
 #include <stdio.h>
@@ -15,37 +17,9 @@
 #include <string.h>
 #include <sys/resource.h>
 #include <sys/wait.h>
-#include <time.h>
 #include <unistd.h>
 
 enum { RUNS = 9 };
-
-static double now_ms(void)
-{
-    struct timespec t;
-
-    clock_gettime(CLOCK_MONOTONIC, &t);
-    return 1000.0 * (double)t.tv_sec + (double)t.tv_nsec / 1e6;
-}
-
-static int less(const void *a, const void *b)
-{
-    double x = *(const double *)a, y = *(const double *)b;
-
-    return (x > y) - (x < y);
-}
-
-static double median(double *values, size_t count)
-{
-    qsort(values, count, sizeof *values, less);
-    return values[count / 2];
-}
-
-static void row(const char *what, double ms, const char *reference, double reference_ms)
-{
-    printf("%-38s %9.3f ms   %-22s %9.3f ms   ratio %.3f\n", what, ms, reference, reference_ms,
-           reference_ms > 0 ? ms / reference_ms : 0.0);
-}
 
 /* ---- start to first screen ---- */
 
@@ -115,43 +89,6 @@ static bool load(const char *path, struct job *job)
     return true;
 }
 
-static GEOSGeometry *line(GEOSContextHandle_t geos, double x1, double y1, double x2, double y2)
-{
-    GEOSCoordSequence *points = GEOSCoordSeq_create_r(geos, 2, 2);
-
-    GEOSCoordSeq_setXY_r(geos, points, 0, x1, y1);
-    GEOSCoordSeq_setXY_r(geos, points, 1, x2, y2);
-    return GEOSGeom_createLineString_r(geos, points);
-}
-
-/* Union (nodes the lines) and polygonise. */
-static double polygonise_ms(GEOSContextHandle_t geos, const struct layout *layout, int *panels)
-{
-    size_t count = 0, n = layout->outline_count;
-    GEOSGeometry **lines = calloc(layout->joint_count + n, sizeof *lines);
-    GEOSGeometry *all, *noded, *made;
-    double begin, end;
-
-    for (size_t i = 0; i < n; i++)
-        lines[count++] = line(geos, layout->outline[i].x, layout->outline[i].y,
-                              layout->outline[(i + 1) % n].x, layout->outline[(i + 1) % n].y);
-    for (size_t i = 0; i < layout->joint_count; i++)
-        if (layout->joints[i].edge < 0 && layout->joints[i].opening < 0)
-            lines[count++] = line(geos, layout->joints[i].x1, layout->joints[i].y1,
-                                  layout->joints[i].x2, layout->joints[i].y2);
-    begin = now_ms();
-    all = GEOSGeom_createCollection_r(geos, GEOS_MULTILINESTRING, lines, (unsigned)count);
-    noded = GEOSUnaryUnion_r(geos, all);
-    made = GEOSPolygonize_r(geos, (const GEOSGeometry *const *)&noded, 1);
-    *panels = GEOSGetNumGeometries_r(geos, made);
-    end = now_ms();
-    GEOSGeom_destroy_r(geos, made);
-    GEOSGeom_destroy_r(geos, noded);
-    GEOSGeom_destroy_r(geos, all);
-    free(lines);
-    return end - begin;
-}
-
 static void bench_keystroke(const char *name, const char *path)
 {
     GEOSContextHandle_t geos = GEOS_init_r();
@@ -176,6 +113,7 @@ static void bench_keystroke(const char *name, const char *path)
         reference[i] = polygonise_ms(geos, &plan.layout, &panels);
         plan_free(&plan);
     }
+    plan_cache_free(&cache);
     snprintf(what, sizeof what, "one keystroke, %s (whole chain)", name);
     row(what, median(chain, RUNS), "GEOS polygonise", median(reference, RUNS));
     job_free(&job);
@@ -234,69 +172,6 @@ static void bench_year(void)
     free(year);
 }
 
-/* ---- large slabs: the layout alone ---- */
-
-/* A yard with columns in a grid, off the joint lines by a little so that lines have to bend to
- * them. */
-static char *big_job(double length_m, double width_m, int columns, int rows, double shift_m)
-{
-    size_t room = 4096 + 128 * (size_t)(columns * rows), used;
-    char *text = malloc(room);
-
-    used = (size_t)snprintf(text, room,
-                            "format = 1\n[slab]\nthickness = 200 mm\n[outline]\npoint = 0, 0 m\n"
-                            "point = %g, 0 m\npoint = %g, %g m\npoint = 0, %g m\n",
-                            length_m, length_m, width_m, width_m);
-    for (int i = 0; i < columns * rows; i++)
-        used += (size_t)snprintf(text + used, room - used,
-                                 "[object C%d]\nkind = column\nat = %g, %g m\nsize = 0.4 x 0.4 m\n",
-                                 i + 1, length_m * (1 + i % columns) / (columns + 1) + shift_m,
-                                 width_m * (1 + i / columns) / (rows + 1));
-    return text;
-}
-
-static void read_text(const char *text, struct job *job)
-{
-    struct document *document = NULL;
-    struct finding_list findings = {0};
-
-    job_init(job);
-    document_parse(text, strlen(text), &document, &findings);
-    document_job(document, job, &findings);
-    document_free(document);
-    finding_free(&findings);
-}
-
-static void bench_large(double length_m, double width_m, int columns, int rows)
-{
-    GEOSContextHandle_t geos = GEOS_init_r();
-    enum { LARGE_RUNS = 5 };
-    double chain[LARGE_RUNS], reference[LARGE_RUNS];
-    struct job job;
-    struct plan_cache cache = {0};
-    size_t panels = 0;
-    int polygons = 0;
-    char what[64];
-
-    for (int i = 0; i < LARGE_RUNS; i++) { /* each run with its objects elsewhere: an edit */
-        char *text = big_job(length_m, width_m, columns, rows, 0.01 * i);
-        struct plan plan;
-        double begin;
-        read_text(text, &job);
-        free(text);
-        begin = now_ms();
-        plan_make(&job, &cache, NULL, &plan);
-        chain[i] = now_ms() - begin;
-        panels = plan.layout.panel_count;
-        reference[i] = polygonise_ms(geos, &plan.layout, &polygons);
-        plan_free(&plan);
-        job_free(&job);
-    }
-    snprintf(what, sizeof what, "%zu panels, %d objects (whole chain)", panels, columns * rows);
-    row(what, median(chain, LARGE_RUNS), "GEOS polygonise", median(reference, LARGE_RUNS));
-    GEOS_finish_r(geos);
-}
-
 int main(void)
 {
     struct rusage usage;
@@ -306,10 +181,9 @@ int main(void)
     bench_keystroke("E2", "share/examples/e2-store-floor.slab");
     bench_keystroke("E3", "share/examples/e3-two-lane-road.slab");
     bench_year();
-    bench_large(150, 130, 6, 5);
-    bench_large(480, 400, 10, 10);
-    bench_large(1050, 900, 20, 19);
+    bench_layouts();
     getrusage(RUSAGE_SELF, &usage);
-    printf("%-38s %9.1f MB\n", "largest memory of this run", (double)usage.ru_maxrss / 1024);
+    printf("%-38s %9.1f MB\n", "largest memory of this run, with GEOS",
+           (double)usage.ru_maxrss / 1024);
     return 0;
 }
