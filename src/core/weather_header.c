@@ -1,6 +1,5 @@
 /* The header of a weather file: which column is what, in which unit. */
 #include "core/weather_read.h"
-#include <ctype.h>
 #include <math.h>
 #include <stdio.h>
 #include <string.h>
@@ -13,9 +12,9 @@ static void words_of(const char *name, char out[2 * CELL_MOST])
 
     out[0] = ' ';
     for (; *name != '\0' && used < 2 * CELL_MOST - 3; name++) {
-        unsigned char c = (unsigned char)*name;
-        if (isalnum(c) || c == '%')
-            out[used++] = (char)tolower(c);
+        const char c = (*name >= 'A' && *name <= 'Z') ? (char)(*name - 'A' + 'a') : *name;
+        if ((c >= 'a' && c <= 'z') || (c >= '0' && c <= '9') || c == '%')
+            out[used++] = c;
         else if (out[used - 1] != ' ')
             out[used++] = ' ';
     }

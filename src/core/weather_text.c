@@ -1,7 +1,6 @@
 /* Lines, cells, numbers, dates and clock times of a weather file. */
 #include "base/unit.h"
 #include "core/weather_read.h"
-#include <ctype.h>
 #include <stdarg.h>
 #include <stdio.h>
 #include <string.h>
@@ -144,7 +143,7 @@ static bool digits(const char **text, int least, int most, int *out)
     int i;
 
     *out = 0;
-    for (i = 0; i < most && isdigit((unsigned char)**text); i++, (*text)++)
+    for (i = 0; i < most && **text >= '0' && **text <= '9'; i++, (*text)++)
         *out = 10 * *out + (**text - '0');
     return i >= least;
 }
