@@ -1,5 +1,5 @@
-/* Which kinds of sealant suit this job, and why the others do not. Each kind is judged with its usual
- * class, its own widths and depths; what the tin says wins. */
+/* Which kinds of sealant suit this job, and why the others do not. Each kind is judged with its
+ * usual class, its own widths and depths; what the tin says wins. */
 #include "core/sealant.h"
 #include "job/table.h"
 #include "plan/plan_steps.h"

@@ -1,5 +1,5 @@
-/* Which sealant: every refusal alone, on a slab where the kind suits otherwise. The rules are common
- * practice and memory; the widths are worked out by hand from 1.376 mm and 0.8 mm. */
+/* Which sealant: every refusal alone, on a slab where the kind suits otherwise. The rules are
+ * common practice and memory; the widths are worked out by hand from 1.376 mm and 0.8 mm. */
 #include "plan/plan_help.h"
 
 static void make_yard(const char *more, struct plan *plan)
@@ -28,8 +28,7 @@ static void expect(const char *more, const char *kind, bool fits, const char *wo
 
     make_yard(more, &plan);
     choice = kind_named(&plan, kind);
-    if (choice->fits != fits ||
-        strstr(fits ? choice->remark : choice->reason, words) == NULL)
+    if (choice->fits != fits || strstr(fits ? choice->remark : choice->reason, words) == NULL)
         fail_msg("%s with '%s': %d '%s' '%s'", kind, more, choice->fits, choice->reason,
                  choice->remark);
     plan_free(&plan);
