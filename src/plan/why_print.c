@@ -53,12 +53,24 @@ static void add_value(struct text *out, size_t *line_start, const char *value)
     pad_to(out, *line_start, FROM_COLUMN);
 }
 
-static void add_line(struct text *out, const struct why_line *line)
+/* Column where the words begin: behind the longest symbol. */
+static int words_column(const struct why *why)
+{
+    int column = 11;
+
+    for (size_t i = 0; i < why->line_count; i++) {
+        int used = 3 + utf8_columns(why->lines[i].step);
+        column = used > column ? used : column;
+    }
+    return column;
+}
+
+static void add_line(struct text *out, const struct why_line *line, int words)
 {
     size_t start = out->length;
 
     text_format(out, "  %s", line->step);
-    pad_to(out, start, 11);
+    pad_to(out, start, words);
     text_add(out, line->words);
     if (line->sum[0] != '\0') {
         text_add_char(out, '\n', 1);
@@ -79,7 +91,7 @@ void why_print(struct text *out, const struct why *why)
     paragraph(out, "", why->answer);
     text_add_char(out, '\n', 1);
     for (size_t i = 0; i < why->line_count; i++)
-        add_line(out, &why->lines[i]);
+        add_line(out, &why->lines[i], words_column(why));
     text_add_char(out, '\n', 1);
     paragraph(out, "FORMULA", why->formula);
     for (size_t i = 0; i < why->try_count; i++) {

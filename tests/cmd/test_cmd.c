@@ -159,6 +159,8 @@ static void test_wrong_arguments(void **state)
         {{"why", E1, "seal.colour"}, 2, "", "'seal.colour'"},
         {{"why", E1, "seal.colour"}, 2, "", "seal.width_m"}, /* says which there are */
         {{"why", E1, "joints.J99.open_m"}, 2, "", "'joints.J99.open_m'"},
+        {{"why", E1, "sealing"}, 2, "", "seal. cut."}, /* the groups there are */
+        {{"why", E1, "isolation.1"}, 2, "", "working.1"},
         {{"why", E1, ""}, 2, "", "''"},
     };
 
