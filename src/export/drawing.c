@@ -124,8 +124,7 @@ static void draw_joints(struct glyph_grid *grid, const struct drawing *drawing,
             continue;
         if (ink == INK_CUT && !drawing->joints_drawn)
             continue;
-        if (joint->edge < 0 && joint->opening < 0)
-            draw_line(grid, drawing, joint->x1, joint->y1, joint->x2, joint->y2, ink);
+        draw_line(grid, drawing, joint->x1, joint->y1, joint->x2, joint->y2, ink);
     }
 }
 

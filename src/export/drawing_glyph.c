@@ -74,8 +74,9 @@ static void slant(struct glyph_grid *grid, int c1, int r1, int c2, int r2, enum 
         int column = c1 + (int)lround((double)(c2 - c1) * i / steps);
         int row = r1 + (int)lround((double)(r2 - r1) * i / steps);
         int arms = falls ? FALLS : RISES;
-        if (columns > 4 * rows)
-            arms = LEFT | RIGHT;
+        if (columns > 4 * rows) /* level strokes; the ends meet what stands there */
+            arms =
+                (i > 0 ? (c2 > c1 ? LEFT : RIGHT) : 0) | (i < steps ? (c2 > c1 ? RIGHT : LEFT) : 0);
         add_arms(grid, column, row, arms, ink);
     }
 }
@@ -183,7 +184,8 @@ static uint32_t code_of(const struct glyph_grid *grid, int arms, enum drawing_in
     return grid->ascii ? ascii_code(arms & ARMS, ink) : codes[arms & ARMS];
 }
 
-/* The strongest line in a cell decides; a cut that crosses a pour end or a board joins it. */
+/* The strongest line in a cell decides; a cut that crosses a pour end or a board joins it. Board
+ * all along an edge shows, not the edge. */
 static void resolve_cell(struct glyph_grid *grid, size_t index)
 {
     static const enum drawing_ink order[] = {INK_EDGE, INK_BOARD, INK_POUR_END, INK_CUT};
@@ -193,7 +195,7 @@ static void resolve_cell(struct glyph_grid *grid, size_t index)
         return;
     for (size_t i = 0; i < sizeof order / sizeof *order; i++) {
         int arms = cell->arms[order[i]];
-        if (arms == 0)
+        if (arms == 0 || (order[i] == INK_EDGE && (arms & ~cell->arms[INK_BOARD]) == 0))
             continue;
         if (order[i] == INK_POUR_END)
             arms |= cell->arms[INK_CUT];
