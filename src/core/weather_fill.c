@@ -22,7 +22,8 @@ static int earlier(const void *a, const void *b)
 
 static void sort(struct weather_reader *reader)
 {
-    qsort(reader->rows, reader->row_count, sizeof *reader->rows, earlier);
+    if (reader->row_count > 1)
+        qsort(reader->rows, reader->row_count, sizeof *reader->rows, earlier);
 }
 
 static void check_repeats(struct weather_reader *reader)
