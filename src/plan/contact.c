@@ -1,5 +1,6 @@
 #include "plan/contact.h"
 #include "base/array.h"
+#include "core/layout_index.h"
 #include <float.h>
 #include <math.h>
 #include <stdlib.h>
@@ -10,10 +11,6 @@ static const double least_overlap_m = 1e-3;
 
 struct frame { /* of a joint: origin, direction u, normal n = u turned left */
     double x, y, ux, uy, length;
-};
-
-struct extent {
-    double x0, y0, x1, y1;
 };
 
 static struct frame frame_of(const struct layout_joint *joint)
@@ -73,9 +70,9 @@ static bool overlap(const struct frame *frame, const struct layout_panel *panel,
     return found;
 }
 
-static struct extent panel_extent(const struct layout_panel *panel)
+static struct layout_extent panel_extent(const struct layout_panel *panel)
 {
-    struct extent extent = {DBL_MAX, DBL_MAX, -DBL_MAX, -DBL_MAX};
+    struct layout_extent extent = {DBL_MAX, DBL_MAX, -DBL_MAX, -DBL_MAX};
 
     for (size_t i = 0; i < panel->count; i++) {
         extent.x0 = fmin(extent.x0, panel->ring[i].x);
@@ -86,7 +83,7 @@ static struct extent panel_extent(const struct layout_panel *panel)
     return extent;
 }
 
-static bool far_apart(const struct layout_joint *joint, const struct extent *extent)
+static bool far_apart(const struct layout_joint *joint, const struct layout_extent *extent)
 {
     return fmax(joint->x1, joint->x2) < extent->x0 - near_m ||
            fmin(joint->x1, joint->x2) > extent->x1 + near_m ||
@@ -94,48 +91,81 @@ static bool far_apart(const struct layout_joint *joint, const struct extent *ext
            fmin(joint->y1, joint->y2) > extent->y1 + near_m;
 }
 
-/* Panels by their western side: a joint looks only at those that can reach it. */
-struct panel_place {
-    struct extent extent;
-    size_t panel;
+/* ---- which panels can touch a joint ---- */
+
+struct search {
+    const struct layout *layout;
+    struct layout_extent *extents; /* of the panels */
+    struct layout_index index;
+    size_t *seen; /* the last joint (from 1) that looked at a panel */
+    size_t *near; /* panels found for one joint */
+    size_t near_count;
 };
 
-static int more_to_the_west(const void *a, const void *b)
+static void search_free(struct search *search)
 {
-    const struct panel_place *p = a, *q = b;
-
-    if (p->extent.x0 < q->extent.x0 || p->extent.x0 > q->extent.x0)
-        return p->extent.x0 < q->extent.x0 ? -1 : 1;
-    return p->panel < q->panel ? -1 : p->panel > q->panel;
+    layout_index_free(&search->index);
+    free(search->extents);
+    free(search->seen);
+    free(search->near);
 }
 
-/* The first place whose western side is not west of `x`. */
-static size_t first_from(const struct panel_place *places, size_t count, double x)
+static bool search_make(const struct layout *layout, struct search *search)
 {
-    size_t low = 0, high = count;
+    size_t count = layout->panel_count;
 
-    while (low < high) {
-        size_t middle = low + (high - low) / 2;
-        if (places[middle].extent.x0 < x)
-            low = middle + 1;
-        else
-            high = middle;
-    }
-    return low;
+    *search = (struct search){.layout = layout};
+    search->extents = calloc(count + 1, sizeof *search->extents);
+    search->seen = calloc(count + 1, sizeof *search->seen);
+    search->near = calloc(count + 1, sizeof *search->near);
+    if (search->extents == NULL || search->seen == NULL || search->near == NULL)
+        return false;
+    for (size_t p = 0; p < count; p++)
+        search->extents[p] = panel_extent(&layout->panels[p]);
+    return layout_index_make(&search->index, search->extents, count);
 }
 
-static bool add_joint(const struct layout *layout, const struct panel_place *places, double widest,
-                      size_t joint, struct contact_list *list)
+static int lower_number(const void *a, const void *b)
 {
-    const struct layout_joint *at = &layout->joints[joint];
-    struct frame frame = frame_of(at);
-    double west = fmin(at->x1, at->x2) - near_m, east = fmax(at->x1, at->x2) + near_m;
+    size_t p = *(const size_t *)a, q = *(const size_t *)b;
 
-    for (size_t i = first_from(places, layout->panel_count, west - widest);
-         i < layout->panel_count && places[i].extent.x0 <= east; i++) {
-        const struct layout_panel *panel = &layout->panels[places[i].panel];
-        struct contact contact = {.joint = joint, .panel = places[i].panel};
-        if (far_apart(at, &places[i].extent) || !overlap(&frame, panel, &contact.from, &contact.to))
+    return p < q ? -1 : p > q;
+}
+
+/* Panels whose extent meets that of the joint, by number. */
+static void find_near(struct search *search, size_t joint)
+{
+    const struct layout_joint *at = &search->layout->joints[joint];
+    double x0 = fmin(at->x1, at->x2) - near_m, x1 = fmax(at->x1, at->x2) + near_m;
+    double y0 = fmin(at->y1, at->y2) - near_m, y1 = fmax(at->y1, at->y2) + near_m;
+    double step = search->index.cell;
+
+    search->near_count = 0;
+    for (double y = y0; y < y1 + step; y += step)
+        for (double x = x0; x < x1 + step; x += step) {
+            const size_t *cell;
+            size_t count = layout_index_at(&search->index, fmin(x, x1), fmin(y, y1), &cell);
+            for (size_t i = 0; i < count; i++) {
+                if (search->seen[cell[i]] == joint + 1)
+                    continue;
+                search->seen[cell[i]] = joint + 1;
+                if (!far_apart(at, &search->extents[cell[i]]))
+                    search->near[search->near_count++] = cell[i];
+            }
+        }
+    if (search->near_count > 1)
+        qsort(search->near, search->near_count, sizeof *search->near, lower_number);
+}
+
+static bool add_joint(struct search *search, size_t joint, struct contact_list *list)
+{
+    struct frame frame = frame_of(&search->layout->joints[joint]);
+
+    find_near(search, joint);
+    for (size_t i = 0; i < search->near_count; i++) {
+        const struct layout_panel *panel = &search->layout->panels[search->near[i]];
+        struct contact contact = {.joint = joint, .panel = search->near[i]};
+        if (!overlap(&frame, panel, &contact.from, &contact.to))
             continue;
         contact.side = body_side(&frame, panel, &contact.extent);
         if (!array_reserve((void **)&list->items, &list->capacity, list->count + 1,
@@ -148,24 +178,17 @@ static bool add_joint(const struct layout *layout, const struct panel_place *pla
 
 enum status contact_list_make(const struct layout *layout, struct contact_list *list)
 {
-    struct panel_place *places = calloc(layout->panel_count + 1, sizeof *places);
-    double widest = 0;
-    bool good;
+    struct search search;
+    bool good = search_make(layout, &search);
 
     *list = (struct contact_list){0};
     list->first = calloc(layout->joint_count + 1, sizeof *list->first);
-    good = places != NULL && list->first != NULL;
-    for (size_t p = 0; good && p < layout->panel_count; p++) {
-        places[p] = (struct panel_place){panel_extent(&layout->panels[p]), p};
-        widest = fmax(widest, places[p].extent.x1 - places[p].extent.x0);
-    }
-    if (good)
-        qsort(places, layout->panel_count, sizeof *places, more_to_the_west);
+    good = good && list->first != NULL;
     for (size_t j = 0; good && j < layout->joint_count; j++) {
         list->first[j] = list->count;
-        good = add_joint(layout, places, widest, j, list);
+        good = add_joint(&search, j, list);
     }
-    free(places);
+    search_free(&search);
     if (!good) {
         contact_list_free(list);
         return STATUS_NO_MEMORY;

@@ -48,6 +48,8 @@ static void join_across(const struct layout *layout, const struct contact_list *
 
 /* ---- one row a pour ---- */
 
+enum { POURS_MOST = 500 }; /* more are no plan for placing */
+
 struct centre {
     double x, y;
 };
@@ -77,29 +79,25 @@ static void add_panel(struct plan_pour *pour, const struct layout_panel *panel)
  * place is counted square to the strips. */
 static void set_turns(struct plan *plan)
 {
-    double angle = plan->job.pours_direction * 3.14159265358979323846 / 180;
+    double angle = plan->job.pours_direction * 3.14159265358979323846 / 180, place[POURS_MOST];
+    bool first_of_row[POURS_MOST];
 
     for (size_t i = 0; i < plan->pour_count; i++) {
-        struct plan_pour *pour = &plan->pours[i];
-        double at = -pour->x * sin(angle) + pour->y * cos(angle);
+        place[i] = -plan->pours[i].x * sin(angle) + plan->pours[i].y * cos(angle);
+        first_of_row[i] = true;
+        for (size_t k = 0; k < i; k++)
+            first_of_row[i] = first_of_row[i] && fabs(place[k] - place[i]) > 0.05;
+    }
+    for (size_t i = 0; i < plan->pour_count; i++) {
         int below = 0;
-        for (size_t k = 0; k < plan->pour_count; k++) {
-            const struct plan_pour *other = &plan->pours[k];
-            double place = -other->x * sin(angle) + other->y * cos(angle);
-            bool first_of_its_row = true;
-            for (size_t m = 0; m < k; m++) {
-                double same = -plan->pours[m].x * sin(angle) + plan->pours[m].y * cos(angle);
-                first_of_its_row = first_of_its_row && fabs(same - place) > 0.05;
-            }
-            below += first_of_its_row && place < at - 0.05;
-        }
-        pour->turn = 1 + below % 2;
+        for (size_t k = 0; k < plan->pour_count; k++)
+            below += first_of_row[k] && place[k] < place[i] - 0.05;
+        plan->pours[i].turn = 1 + below % 2;
     }
 }
 
 enum status plan_set_pours(struct plan *plan)
 {
-    enum { POURS_MOST = 500 }; /* more are no plan for placing */
     const struct layout *layout = &plan->layout;
     struct contact_list list = {0};
     size_t *group = calloc(layout->panel_count + 1, sizeof *group);

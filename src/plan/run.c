@@ -64,10 +64,28 @@ static bool add_all(const struct layout *layout, struct stop_list *list)
     return true;
 }
 
+/* Extents a hair larger than the segments, so that a ray along a cell's side misses none. */
+static bool make_index(struct stop_list *list)
+{
+    const double hair = 1e-5;
+    struct layout_extent *extents = calloc(list->count + 1, sizeof *extents);
+    bool good = extents != NULL;
+
+    for (size_t i = 0; good && i < list->count; i++) {
+        const struct stop_segment *at = &list->items[i];
+        extents[i] =
+            (struct layout_extent){fmin(at->x1, at->x2) - hair, fmin(at->y1, at->y2) - hair,
+                                   fmax(at->x1, at->x2) + hair, fmax(at->y1, at->y2) + hair};
+    }
+    good = good && layout_index_make(&list->index, extents, list->count);
+    free(extents);
+    return good;
+}
+
 enum status stop_list_make(const struct layout *layout, struct stop_list *list)
 {
     *list = (struct stop_list){0};
-    if (add_all(layout, list))
+    if (add_all(layout, list) && make_index(list))
         return STATUS_OK;
     stop_list_free(list);
     return STATUS_NO_MEMORY;
@@ -75,6 +93,7 @@ enum status stop_list_make(const struct layout *layout, struct stop_list *list)
 
 void stop_list_free(struct stop_list *list)
 {
+    layout_index_free(&list->index);
     free(list->items);
     *list = (struct stop_list){0};
 }
@@ -93,22 +112,61 @@ static double hit(const struct stop_segment *segment, double x, double y, double
     return s >= -1e-9 && s <= 1 + 1e-9 ? t : DBL_MAX;
 }
 
+struct nearest {
+    double at;
+    enum stop stop;
+};
+
+static void look_at(const struct stop_segment *segment, double x, double y, double dx, double dy,
+                    struct nearest *nearest)
+{
+    double t = hit(segment, x, y, dx, dy);
+
+    if (t > 1e-3 && t < nearest->at - 1e-9) {
+        nearest->at = t;
+        nearest->stop = segment->stop;
+    } else if (t > 1e-3 && t < nearest->at + 1e-9 && segment->stop > nearest->stop) {
+        nearest->stop = segment->stop; /* a wall along a side wins over the side */
+    }
+}
+
+/* Where along the ray its present cell ends, on one axis. */
+static double leaves_cell(double at, double direction, double from, double cell)
+{
+    double k = floor((at - from) / cell);
+
+    if (fabs(direction) < 1e-12)
+        return DBL_MAX;
+    return (from + (direction > 0 ? k + 1 : k) * cell - at) / direction;
+}
+
+static bool within(const struct layout_index *index, double x, double y)
+{
+    return x >= index->x && y >= index->y && x <= index->x + (double)index->nx * index->cell &&
+           y <= index->y + (double)index->ny * index->cell;
+}
+
 double stop_list_run(const struct stop_list *list, double x, double y, double dx, double dy,
                      enum stop *stop)
 {
-    double nearest = DBL_MAX;
+    const struct layout_index *index = &list->index;
+    const double hair = 1e-6 * index->cell;
+    struct nearest nearest = {DBL_MAX, STOP_NONE};
+    double t = 0;
 
-    *stop = STOP_NONE;
-    for (size_t i = 0; i < list->count; i++) {
-        double t = hit(&list->items[i], x, y, dx, dy);
-        if (t > 1e-3 && t < nearest - 1e-9) {
-            nearest = t;
-            *stop = list->items[i].stop;
-        } else if (t > 1e-3 && t < nearest + 1e-9 && list->items[i].stop > *stop) {
-            *stop = list->items[i].stop; /* a wall along a side wins over the side */
-        }
+    while (within(index, x + t * dx, y + t * dy)) {
+        double px = x + t * dx, py = y + t * dy;
+        const size_t *cell;
+        size_t count = layout_index_at(index, px, py, &cell);
+        for (size_t i = 0; i < count; i++)
+            look_at(&list->items[cell[i]], x, y, dx, dy, &nearest);
+        t += hair + fmin(leaves_cell(px, dx, index->x, index->cell),
+                         leaves_cell(py, dy, index->y, index->cell));
+        if (nearest.at < t - 2 * hair)
+            break;
     }
-    return *stop == STOP_NONE ? 0 : nearest;
+    *stop = nearest.stop;
+    return nearest.stop == STOP_NONE ? 0 : nearest.at;
 }
 
 double stop_pushing(double run, enum stop far_end, bool fixed)

@@ -4,6 +4,7 @@
 #define SLABGAP_PLAN_RUN_H
 
 #include "core/layout.h"
+#include "core/layout_index.h"
 #include <stdbool.h>
 
 enum stop {
@@ -21,6 +22,7 @@ struct stop_segment {
 struct stop_list {
     struct stop_segment *items;
     size_t count, capacity;
+    struct layout_index index; /* of their extents: a ray looks only at the cells it crosses */
 };
 
 /* All that stops a run: slab sides, holes, isolation joints. */
