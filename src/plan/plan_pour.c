@@ -33,16 +33,26 @@ static bool opposite(const struct contact *a, const struct contact *b)
     return a->side != b->side && fmin(a->to, b->to) - fmax(a->from, b->from) > 1e-3;
 }
 
-/* Panels on both sides of a sawn joint are one pour. */
-static void join_across(const struct layout *layout, const struct contact_list *list, size_t *group)
+static int nearer_the_start(const void *a, const void *b)
+{
+    const struct contact *p = a, *q = b;
+
+    return p->from < q->from ? -1 : p->from > q->from;
+}
+
+/* Panels on both sides of a sawn joint are one pour. Sorts the contacts of each joint along it. */
+static void join_across(const struct layout *layout, struct contact_list *list, size_t *group)
 {
     for (size_t j = 0; j < layout->joint_count; j++) {
-        if (layout->joints[j].kind != LAYOUT_CONTRACTION)
+        struct contact *items = list->items + list->first[j];
+        size_t count = list->first[j + 1] - list->first[j];
+        if (layout->joints[j].kind != LAYOUT_CONTRACTION || count < 2)
             continue;
-        for (size_t i = list->first[j]; i < list->first[j + 1]; i++)
-            for (size_t k = i + 1; k < list->first[j + 1]; k++)
-                if (opposite(&list->items[i], &list->items[k]))
-                    join(group, list->items[i].panel, list->items[k].panel);
+        qsort(items, count, sizeof *items, nearer_the_start);
+        for (size_t i = 0; i < count; i++)
+            for (size_t k = i + 1; k < count && items[k].from < items[i].to; k++)
+                if (opposite(&items[i], &items[k]))
+                    join(group, items[i].panel, items[k].panel);
     }
 }
 
