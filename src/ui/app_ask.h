@@ -38,6 +38,14 @@ void plan_move_box(struct app *app, const struct object *object);
 bool plan_move_words(const struct app *app, struct text *out); /* false: no line to move */
 void plan_move_line(struct app *app);
 
+/* page_rows.c */
+bool page_no_key(struct app *app, uint32_t pressed);
+bool page_row_of(const enum field_id *ids, int count, int index, struct entry *out);
+const char *page_help_words(const struct app *app, struct text *words); /* of the row in hand */
+/* A number with its unit in at most 15 bytes. */
+void page_small(const struct app *app, char out[16], double si, enum quantity quantity);
+void page_draw_rows(const struct app *app, struct canvas *canvas, int line, int label, int value);
+
 /* page_seal_now.c */
 void seal_take_measured(struct app *app);
 bool seal_draw_now(const struct app *app, struct canvas *canvas, int at, int rows);
