@@ -79,6 +79,7 @@ $(B)/terminfo/stamp: tests/term/slabgap-term.ti
 
 $(B)/tests/export/%: TEST_LIBS = -ljansson
 $(B)/tests/core/test_layout_geos $(B)/tests/core/test_layout_crowd $(B)/tests/core/long_layout: TEST_LIBS = -lgeos_c
+$(B)/tests/core/test_sun_set: TEST_LIBS = -lnova
 $(B)/tests/cmd/%: CFLAGS += -DSLABGAP_BINARY='"$(abspath $(B))/slabgap"'
 $(filter $(B)/tests/cmd/%,$(TESTS)): $(B)/slabgap
 WRAP = -Wl,--wrap=malloc,--wrap=calloc,--wrap=realloc,--wrap=strdup
@@ -86,7 +87,7 @@ $(filter %/test_memory,$(TESTS)): LDFLAGS += $(WRAP)
 
 # ---- set-up: packages of a fresh Debian by name; a stamp, so a second run asks nothing
 PACKAGES_DEMO = libncurses-dev pkgconf
-PACKAGES_TEST = $(PACKAGES_DEMO) libcmocka-dev libvterm-dev libjansson-dev libgeos-dev ncurses-bin ncurses-base units
+PACKAGES_TEST = $(PACKAGES_DEMO) libcmocka-dev libvterm-dev libjansson-dev libgeos-dev libnova-dev ncurses-bin ncurses-base units
 PACKAGES_CHECK = $(PACKAGES_TEST) clang libclang-rt-14-dev clang-format
 build/packages-%:
 	@.ci/packages $(PACKAGES_$(shell echo $* | tr a-z A-Z))

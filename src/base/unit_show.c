@@ -120,8 +120,13 @@ static void show_small(struct text *out, double si, enum unit_system system)
 
 static void show_volume(struct text *out, double si, enum unit_system system)
 {
-    const char *unit = system == UNITS_US ? (fabs(si) < 0.5 * 3.785411784e-3 ? "floz" : "gal")
-                                          : (fabs(si) < 1e-3 ? "ml" : "l");
+    const double size = fabs(si);
+    const char *unit = system == UNITS_US ? (size < 0.5 * 3.785411784e-3 ? "floz"
+                                             : size < 2 * 0.764554857984 ? "gal"
+                                                                         : "yd3")
+                                          : (size < 1e-3 ? "ml"
+                                             : size < 2  ? "l"
+                                                         : "m3");
     double number = si;
 
     unit_from_si(si, unit, QUANTITY_VOLUME, &number);

@@ -73,10 +73,11 @@ static const struct unit strains[] = {
     ALIAS("µε", 1, 1e6),   ALIAS("με", 1, 1e6),         ALIAS("µm/m", 1, 1e6),
     ALIAS("μm/m", 1, 1e6), ALIAS("um/m", 1, 1e6),       END};
 static const struct unit ratios[] = {UNIT("", 1, 1), UNIT("%", 1, 100), END};
-static const struct unit volumes[] = {
-    UNIT("ml", 1, 1e6),        UNIT("l", 1, 1000),     UNIT("m3", 1, 1),
-    UNIT("floz", GALLON, 128), UNIT("gal", GALLON, 1), ALIAS("mL", 1, 1e6),
-    ALIAS("L", 1, 1000),       ALIAS("m³", 1, 1),      END};
+static const struct unit volumes[] = {UNIT("ml", 1, 1e6),     UNIT("l", 1, 1000),
+                                      UNIT("m3", 1, 1),       UNIT("floz", GALLON, 128),
+                                      UNIT("gal", GALLON, 1), ALIAS("mL", 1, 1e6),
+                                      ALIAS("L", 1, 1000),    ALIAS("m³", 1, 1),
+                                      UNIT("yd3", YARD3, 1),  END};
 static const struct unit densities[] = {
     UNIT("kg/m3", 1, 1), UNIT("pcf", LB / (FOOT * FOOT * FOOT), 1), ALIAS("kg/m³", 1, 1), END};
 static const struct unit speeds[] = {UNIT("m/s", 1, 1), UNIT("km/h", 1, 3.6),
@@ -202,7 +203,7 @@ const char *unit_list(enum quantity quantity)
         [QUANTITY_PER_KELVIN] = "/K /degC /degF",
         [QUANTITY_STRAIN] = "no unit or microstrain",
         [QUANTITY_RATIO] = "no unit or %",
-        [QUANTITY_VOLUME] = "ml l m3 floz gal",
+        [QUANTITY_VOLUME] = "ml l m3 floz gal yd3",
         [QUANTITY_DENSITY] = "kg/m3 pcf",
         [QUANTITY_SPEED] = "m/s km/h mph",
         [QUANTITY_PACE] = "m/h ft/h m/min",

@@ -20,6 +20,8 @@ static const struct command commands[] = {
      command_why},
     {"year", "year FILE [--csv]",
      "slab temperature, width and strain of the joint through the year", command_year},
+    {"saw", "saw FILE [--csv]",
+     "when to saw, in what order, with how many saws; where the pour may stop", command_saw},
     {"seal",
      "seal FILE --slab T [--surface T --hour H] [--width W] [--air T --humidity H]\n"
      "          [--trend rising|steady|falling] [--dry yes|no] [--clean yes|no] [--date D]",

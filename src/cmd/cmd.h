@@ -38,6 +38,7 @@ int command_set(int count, char **words);
 int command_fields(int count, char **words);
 int command_why(int count, char **words);
 int command_year(int count, char **words);
+int command_saw(int count, char **words);
 int command_seal(int count, char **words);
 int command_buy(int count, char **words);
 

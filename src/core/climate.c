@@ -77,15 +77,17 @@ double climate_day_mean(const struct climate_range *range, int day)
     return day_of(range, day).mean_c;
 }
 
-void climate_make(const struct climate_range *range, struct climate_hour hours[CLIMATE_HOURS])
+void climate_make_days(const struct climate_range *range, int first_day, int days,
+                       struct climate_hour *hours)
 {
     double latitude = latitude_of(range->latitude_deg);
 
-    for (int d = 0; d < CLIMATE_DAYS; d++) {
+    for (int i = 0; i < days; i++) {
+        int d = (first_day + i) % CLIMATE_DAYS;
         struct day today = day_of(range, d);
         double dew = climate_dew_point(today.mean_c, range->humidity);
         for (int h = 0; h < 24; h++) {
-            struct climate_hour *hour = &hours[24 * d + h];
+            struct climate_hour *hour = &hours[24 * i + h];
             double wave = cos(2 * PI * (h - warmest_hour) / 24);
             hour->air_c = today.mean_c + today.swing_k / 2 * wave;
             hour->sun_w_m2 =
@@ -95,6 +97,11 @@ void climate_make(const struct climate_range *range, struct climate_hour hours[C
             hour->dew_c = fmin(dew, hour->air_c);
         }
     }
+}
+
+void climate_make(const struct climate_range *range, struct climate_hour hours[CLIMATE_HOURS])
+{
+    climate_make_days(range, 0, CLIMATE_DAYS, hours);
 }
 
 /* T = 243.12 g/(17.62 - g), g = ln(RH) + 17.62 t/(243.12 + t): Magnus form with the constants of

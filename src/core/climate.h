@@ -19,6 +19,9 @@ struct climate_hour {
 };
 /* Five clear days in a row at each extreme; the rest a cosine through the middle of the range. */
 void climate_make(const struct climate_range *range, struct climate_hour hours[CLIMATE_HOURS]);
+/* The same for `days` days from a day of the year (0 to 364) on, round the year's end. */
+void climate_make_days(const struct climate_range *range, int first_day, int days,
+                       struct climate_hour *hours);
 /* Mean air of a day of the year (0 to 364). */
 double climate_day_mean(const struct climate_range *range, int day);
 /* Day of the year (0 to 364) in the middle of the coldest and the hottest spell. */

@@ -73,6 +73,54 @@ struct sun_position sun_at(int year, int month, int day, double hour_utc, double
     return position;
 }
 
+struct sun_place {
+    int year, month, day;
+    double latitude_deg, longitude_deg, utc_offset_h;
+};
+
+static double elevation(const struct sun_place *place, double clock_h)
+{
+    return sun_at(place->year, place->month, place->day, clock_h - place->utc_offset_h,
+                  place->latitude_deg, place->longitude_deg)
+        .elevation_deg;
+}
+
+/* Where the upper limb crosses the horizon between two clock hours, to a second. */
+static double crossing(const struct sun_place *place, double below_h, double above_h)
+{
+    const double limb_deg = -0.833;
+
+    while (fabs(above_h - below_h) > 1.0 / 3600) {
+        const double middle = (below_h + above_h) / 2;
+        if (elevation(place, middle) < limb_deg)
+            below_h = middle;
+        else
+            above_h = middle;
+    }
+    return (below_h + above_h) / 2;
+}
+
+enum sun_day sun_rise_set(int year, int month, int day, double latitude_deg, double longitude_deg,
+                          double utc_offset_h, double *rise_h, double *set_h)
+{
+    const struct sun_place place = {year, month, day, latitude_deg, longitude_deg, utc_offset_h};
+    const double limb_deg = -0.833;
+    const double midday = 12 - longitude_deg / 15 + utc_offset_h; /* to a quarter of an hour */
+    double noon = midday, midnight = midday - 12;
+
+    for (double h = midday - 0.5; h <= midday + 0.5; h += 1.0 / 60) /* the highest and the lowest */
+        if (elevation(&place, h) > elevation(&place, noon))
+            noon = h;
+    midnight = noon - 12;
+    if (elevation(&place, noon) < limb_deg)
+        return SUN_DAY_NEVER_RISES;
+    if (elevation(&place, midnight) >= limb_deg && elevation(&place, noon + 12) >= limb_deg)
+        return SUN_DAY_NEVER_SETS;
+    *rise_h = crossing(&place, midnight, noon);
+    *set_h = crossing(&place, noon + 12, noon);
+    return SUN_DAY_USUAL;
+}
+
 /* d = 0.409 sin(2 pi J/365 - 1.39): FAO Irrigation and Drainage Paper 56 (1998) eq. 24. */
 double sun_sine(double latitude_deg, int day_of_year, double solar_hour)
 {

@@ -1,5 +1,6 @@
 #include "export/answers.h"
 #include "export/names.h"
+#include "export/saw_text.h"
 #include "job/field.h"
 #include "job/table.h"
 #include "plan/result.h"
@@ -175,13 +176,25 @@ static void answer_cut(const struct plan *plan, char *sentence, size_t size, cha
                        size_t more_size)
 {
     char depth[2 * SHOW_MOST + 8];
+    struct text words = {0};
 
+    if (saw_there(plan)) {
+        saw_sentence(&words, plan);
+        snprintf(sentence, size, "%s", words.failed ? "(no memory)." : text_string(&words));
+        text_clear(&words);
+        saw_trouble(&words, plan);
+        snprintf(more, more_size, "%s%sA forecast: trial cuts decide. Set the saw to %s.",
+                 text_string(&words), words.length > 0 ? " " : "", SMALL(plan->cut.set_m));
+        text_free(&words);
+        return;
+    }
     snprintf(depth, sizeof depth, "%s to %s deep", SMALL(plan->cut.least_m),
              SMALL(plan->cut.most_m));
-    if (plan->job.given[FIELD_pour_start])
+    if (plan->job.given[FIELD_pour_start] && plan->job.pour_date.year != 0 &&
+        plan->job.given[FIELD_pour_rate])
         snprintf(sentence, size, "%s; when: trial cuts (4 h in heat to 3 days in cold).", depth);
     else
-        snprintf(sentence, size, "%s. Type the start of the pour for clock times.", depth);
+        snprintf(sentence, size, "%s. For clock times: date, start, rate of the pour.", depth);
     snprintf(more, more_size,
              "Start when the edge stays sharp; trial cuts decide. Set the saw to %s.",
              SMALL(plan->cut.set_m));

@@ -84,9 +84,14 @@ static void add_group(struct json *json, const char *group, const struct plan *p
     json_open(json, group, '{');
     for (size_t i = 0; i < result_count; i++) {
         const struct result *result = &result_table[i];
-        if (in_group(result->path, group))
-            add_cell(json, result->path + group_length(result->path) + 1, result->type,
-                     result->json_scale, (const char *)plan + result->offset);
+        const char *key = result->path + group_length(result->path) + 1;
+        if (!in_group(result->path, group))
+            continue;
+        if (result->type == RESULT_TEXT && !result_there(result, plan))
+            json_string(json, key, NULL);
+        else
+            add_cell(json, key, result->type, result->json_scale,
+                     (const char *)plan + result->offset);
     }
     for (size_t i = 0; i < list_count; i++)
         if (strchr(list_table[i].name, '.') != NULL && in_group(list_table[i].name, group))
@@ -122,10 +127,12 @@ static void add_findings(struct json *json, const struct finding_list *findings)
 
 /* The top-level keys, in the order of docs/format.md. */
 static const char *const keys[] = {
-    "program",    "job",       "spacing",       "temperature",    "shrinkage", "movement",
-    "working",    "seal",      "sealing_table", "isolation",      "cut",       "checks",
-    "quantities", "joints",    "layout",        "layout_reasons", "findings",  "concrete",
-    "steel",      "restraint", "pours",         "cracks",         "choice",
+    "program",        "job",        "spacing",  "temperature",
+    "shrinkage",      "movement",   "working",  "seal",
+    "sealing_table",  "isolation",  "cut",      "saw",
+    "checks",         "quantities", "joints",   "layout",
+    "layout_reasons", "findings",   "concrete", "steel",
+    "restraint",      "pours",      "cracks",   "choice",
 };
 enum { KEY_COUNT = sizeof keys / sizeof *keys };
 

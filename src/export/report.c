@@ -4,6 +4,7 @@
 #include "export/lines.h"
 #include "base/utf8.h"
 #include "export/names.h"
+#include "export/saw_text.h"
 #include "export/seal_chart.h"
 #include "export/wrap.h"
 #include "job/field.h"
@@ -605,19 +606,36 @@ static void add_findings(struct text *out, const struct plan *plan)
     }
 }
 
+static void add_saw(struct text *out, const struct plan *plan)
+{
+    if (!saw_there(plan))
+        return;
+    heading(out, "SAWING (a forecast; trial cuts decide)");
+    saw_report(out, plan, NULL);
+}
+
 /* The parts in their order; `key` is the top-level key of the JSON they stand for. */
 static const struct part {
     const char *key;
     void (*add)(struct text *out, const struct plan *plan);
 } parts[] = {
-    {"answers", add_answers},         {"job", add_job},
-    {"findings", add_findings},       {"spacing", add_spacing},
-    {"temperature", add_temperature}, {"seal", add_seal},
-    {"sealing_table", add_table},     {"choice", add_choice},
-    {"isolation", add_isolation},     {"checks", add_checks},
-    {"quantities", add_quantities},   {"joints", add_joints},
-    {"layout", add_layout},           {"pours", add_pours},
-    {"cracks", add_cracks},           {"cautions", add_cautions},
+    {"answers", add_answers},
+    {"job", add_job},
+    {"findings", add_findings},
+    {"spacing", add_spacing},
+    {"temperature", add_temperature},
+    {"seal", add_seal},
+    {"sealing_table", add_table},
+    {"choice", add_choice},
+    {"isolation", add_isolation},
+    {"checks", add_checks},
+    {"quantities", add_quantities},
+    {"joints", add_joints},
+    {"layout", add_layout},
+    {"pours", add_pours},
+    {"saw", add_saw},
+    {"cracks", add_cracks},
+    {"cautions", add_cautions},
 };
 /* Keys of the JSON that stand inside another part of the text. */
 static const char *const inside[][2] = {

@@ -1,6 +1,7 @@
 /* Checks of the drawing that need no plan. One finding each, with what to do. */
 #include "job/job.h"
 #include "job/ring.h"
+#include "job/trial.h"
 #include <math.h>
 #include <stdio.h>
 #include <stdlib.h>
@@ -312,6 +313,45 @@ static bool has_drawing(const struct job *job)
     return job->opening_count + job->object_count + job->joint_count + job->pour_line_count > 0;
 }
 
+static void check_trials(struct check *c)
+{
+    struct trials trials;
+    const char *wrong = "";
+
+    if (!trials_parse(c->job->sawing_trials, &trials, &wrong))
+        say(c, SEVERITY_ERROR, "sawing.trials", 0,
+            "'%.24s' is no trial cut; write up to %d clock times with what was seen, such as "
+            "14:50 ravels, 15:20 clean.",
+            wrong, TRIALS_MOST);
+}
+
+/* Fresh concrete outside the specification's temperatures, and a day typed the wrong way round. */
+static void check_pour_day(struct check *c)
+{
+    const struct job *job = c->job;
+    struct text shown_words = {0}, limit = {0};
+
+    unit_show(&shown_words, job->pour_placing_temperature, QUANTITY_TEMPERATURE, c->units);
+    if (job->pour_placing_temperature < job->pour_placing_least) {
+        unit_show(&limit, job->pour_placing_least, QUANTITY_TEMPERATURE, c->units);
+        say(c, SEVERITY_WARNING, "pour.placing-temperature", 0,
+            "%s is colder than the specification allows (%s): it sets late, and fresh concrete "
+            "must not freeze; warm the mix or wait.",
+            text_string(&shown_words), text_string(&limit));
+    } else if (job->pour_placing_temperature > job->pour_placing_most) {
+        unit_show(&limit, job->pour_placing_most, QUANTITY_TEMPERATURE, c->units);
+        say(c, SEVERITY_WARNING, "pour.placing-temperature", 0,
+            "%s is hotter than the specification allows (%s): it sets fast, dries and cracks; cool "
+            "the mix or place at night.",
+            text_string(&shown_words), text_string(&limit));
+    }
+    if (job->pour_air_low > job->pour_air_high)
+        say(c, SEVERITY_ERROR, "pour.air-low", 0,
+            "the coldest air of the day is above the warmest; exchange them.");
+    text_free(&shown_words);
+    text_free(&limit);
+}
+
 void job_check(const struct job *job, struct finding_list *findings)
 {
     struct check c = {
@@ -334,6 +374,8 @@ void job_check(const struct job *job, struct finding_list *findings)
     check_joints(&c);
     check_pours(&c);
     check_cracks(&c);
+    check_trials(&c);
+    check_pour_day(&c);
     for (size_t i = 0; i < job->opening_count; i++)
         ring_free(&c.openings[i]);
     free(c.openings);

@@ -59,6 +59,10 @@ static void clear_results(struct plan *plan)
     plan->quantities.wide_cut_m = plan->quantities.days = plan->quantities.cost = NAN;
     plan->quantities.pot_life_s = plan->quantities.batch_most_m3 = plan->quantities.batch_m = NAN;
     plan->quantities.area_m2 = plan->quantities.volume_m3 = NAN;
+    plan->saw.start_h = plan->saw.pour_h = plan->saw.set_h = plan->saw.set_c = NAN;
+    plan->saw.warmest_c = plan->saw.warmest_h = plan->saw.earliest_h = plan->saw.latest_h = NAN;
+    plan->saw.end_h = plan->saw.late_m = plan->saw.least_spare_h = plan->saw.evaporation = NAN;
+    plan->saw.sunrise_h = plan->saw.sunset_h = NAN;
     plan->governing_joint = SIZE_MAX;
 }
 
@@ -73,6 +77,9 @@ static enum status run_chain(struct plan *plan, struct plan_cache *cache,
         return status;
     if (finding_has_error(&plan->findings))
         return STATUS_REFUSED;
+    status = plan_set_early(plan);
+    if (status != STATUS_OK)
+        return status;
     plan_set_shrinkage(plan);
     plan_set_spacing(plan);
     if (plan->has_outline)
@@ -93,6 +100,8 @@ static enum status run_chain(struct plan *plan, struct plan_cache *cache,
     status = plan->has_outline ? plan_set_pours(plan) : STATUS_OK;
     if (status == STATUS_OK)
         status = plan_set_cracks(plan);
+    if (status == STATUS_OK)
+        status = plan_set_saw(plan);
     if (status != STATUS_OK)
         return status;
     return plan_set_checks(plan);
@@ -136,12 +145,18 @@ void plan_free(struct plan *plan)
     finding_free(&plan->findings);
     layout_free(&plan->layout);
     free(plan->isolation);
+    free(plan->panel_pour);
+    free(plan->saw.histories);
+    free(plan->saw.cuts);
+    free(plan->saw.stops);
     free(plan->checks);
     free(plan->joints);
     free(plan->cracks);
     free(plan->pours);
     plan->pours = NULL;
     plan->pour_count = 0;
+    plan->panel_pour = NULL;
+    memset(&plan->saw, 0, sizeof plan->saw);
     plan->cracks = NULL;
     plan->crack_count = 0;
     plan->isolation = NULL;

@@ -90,7 +90,25 @@ struct plan_choice { /* one kind of sealant */
 struct plan_pour { /* what is placed at once */
     int number, panels;
     int turn; /* 1: placed first, 2: the strips between */
-    double area_m2, volume_m3, x, y;
+    int trucks;
+    double area_m2, volume_m3, x, y, hours; /* hours: NAN without a rate */
+};
+/* ---- the day of pouring; clock times in h from midnight of that day ---- */
+struct early_history;
+struct plan_cut { /* one line of one pour, in the order of sawing */
+    char line[12];
+    int pour, order, saw, joint_line;
+    int part; /* 0: across the way the concrete comes, else 1, 2 ... of a line along it */
+    double length_m, start_h, end_h, ready_h, deadline_h, spare_h; /* deadline INFINITY: none */
+    char start[20], not_before[20], not_after[20];                 /* 17:08, 12 Apr ... */
+    bool late;
+};
+struct plan_stop { /* the plant stops after this truck */
+    int pour, truck;
+    double volume_m3, front_m;
+    char joint[12]; /* nearest planned joint to stop at; "" none */
+    int joint_line;
+    double joint_m, more_m3; /* what it takes to get there; below 0: too much is there */
 };
 enum { CRACK_PANELS = 16 };
 struct plan_crack_panel {
@@ -216,6 +234,26 @@ struct plan {
     } restraint;
     struct plan_pour *pours; /* one when nothing parts the slab */
     size_t pour_count;
+    int *panel_pour; /* index in pours of every panel, -1 beyond those listed */
+    struct {
+        struct early_history *histories; /* of the first and the last concrete; NULL: no start */
+        double speed;                    /* what trial cuts moved: ages are multiplied by it */
+        double start_h, pour_h;          /* clock of the first concrete; hours it comes */
+        double set_h, set_c;             /* age and mean temperature at final set */
+        double warmest_c, warmest_h;     /* of the mean, and its age */
+        double earliest_h, latest_h;     /* clock, first concrete, longest strip */
+        double end_h, late_m, least_spare_h;
+        double strip_m;             /* the longest strip of the first pour, uncut */
+        double evaporation;         /* kg/(m2 h), the worst of the hours of placing */
+        double sunrise_h, sunset_h; /* NAN: not known, or none that day */
+        int saws_enough;            /* 0: no number of saws */
+        char first_trial[20], no_later[20], last_cut[20], sunset[20];
+        const char *policy; /* as placed | by deadline | relief | searched */
+        struct plan_cut *cuts;
+        size_t cut_count, cut_capacity;
+        struct plan_stop *stops;
+        size_t stop_count;
+    } saw;
     struct plan_crack *cracks;
     size_t crack_count;
     struct plan_joint *joints; /* layout.joint_count of them */

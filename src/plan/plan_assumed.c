@@ -82,6 +82,24 @@ static bool has_gradient(const struct job *job)
     return simulated(job) || fabs(job->slab_gradient + job->slab_built_in_gradient) > 0;
 }
 
+/* The first three days are worked out: they also say how warm the slab sets. */
+static bool hardens(const struct job *job)
+{
+    return job->pour_date.year != 0 && job->given[FIELD_pour_start];
+}
+
+static bool is_sawn(const struct job *job)
+{
+    return hardens(job) && job->given[FIELD_pour_rate];
+}
+
+static bool has_ash(const struct job *job)
+{
+    return hardens(job) && job->concrete_fly_ash > 0;
+}
+
+static bool heats_or_dries(const struct job *job);
+
 static bool without_zero_stress(const struct job *job)
 {
     return isnan(job->pour_zero_stress_temperature);
@@ -111,6 +129,11 @@ static bool never(const struct job *job)
 
 /* Fields that have a say only at times; the others always have. `never`: no answer of this version
  * leans on them. */
+static bool heats_or_dries(const struct job *job)
+{
+    return hardens(job) || dries_by_aci(job);
+}
+
 static const struct {
     enum field_id id;
     bool (*used)(const struct job *job);
@@ -149,7 +172,33 @@ static const struct {
     {FIELD_concrete_curing, dries_by_model},
     {FIELD_concrete_horizon, dries_by_model},
     {FIELD_climate_humidity, uses_humidity},
-    {FIELD_concrete_cement_content, dries_by_aci},
+    {FIELD_concrete_cement_content, heats_or_dries},
+    {FIELD_concrete_water_cement, hardens},
+    {FIELD_concrete_slag, hardens},
+    {FIELD_concrete_fly_ash, hardens},
+    {FIELD_concrete_ash_lime, has_ash},
+    {FIELD_concrete_c3s, hardens},
+    {FIELD_concrete_c2s, hardens},
+    {FIELD_concrete_c3a, hardens},
+    {FIELD_concrete_c4af, hardens},
+    {FIELD_concrete_so3, hardens},
+    {FIELD_concrete_free_lime, hardens},
+    {FIELD_concrete_magnesia, hardens},
+    {FIELD_concrete_fineness, hardens},
+    {FIELD_concrete_maturity, hardens},
+    {FIELD_pour_placing_least, never},
+    {FIELD_pour_placing_most, never},
+    {FIELD_pour_cover, hardens},
+    {FIELD_pour_truck, is_sawn},
+    {FIELD_sawing_saws, is_sawn},
+    {FIELD_sawing_pace, is_sawn},
+    {FIELD_sawing_kind, is_sawn},
+    {FIELD_sawing_ravel_strength, is_sawn},
+    {FIELD_sawing_stress_share, is_sawn},
+    {FIELD_sawing_relaxation, is_sawn},
+    {FIELD_sawing_scatter_temperature, is_sawn},
+    {FIELD_sawing_scatter_strength, is_sawn},
+    {FIELD_sawing_shift, is_sawn},
     {FIELD_concrete_fines, dries_by_aci},
     {FIELD_concrete_air, dries_by_aci},
     {FIELD_climate_air_coldest, uses_air},

@@ -46,6 +46,39 @@ bool plan_climate(const struct plan *plan, struct climate_range *range,
     return true;
 }
 
+/* Indoors: neither sun nor cold sky, the air of the range's day. */
+static void shelter(struct climate_hour *hours, int count)
+{
+    for (int i = 0; i < count; i++) {
+        hours[i].sun_w_m2 = 0;
+        hours[i].cloud = 1;
+        hours[i].dew_c = hours[i].air_c;
+        hours[i].wind_m_s = 0;
+    }
+}
+
+enum status plan_hours(const struct plan *plan, int first_day, int days, struct climate_hour *hours)
+{
+    const struct job *job = &plan->job;
+    struct climate_range range = range_of(job);
+    struct climate_hour *year;
+
+    if (job->weather == NULL) {
+        climate_make_days(&range, first_day, days, hours);
+        if (job->climate_exposure == EXPOSURE_INDOOR)
+            shelter(hours, 24 * days);
+        return STATUS_OK;
+    }
+    year = malloc(CLIMATE_HOURS * sizeof *year);
+    if (year == NULL)
+        return STATUS_NO_MEMORY;
+    weather_year(job->weather, 0, &range, year);
+    for (int i = 0; i < 24 * days; i++)
+        hours[i] = year[(24 * first_day + i) % CLIMATE_HOURS];
+    free(year);
+    return STATUS_OK;
+}
+
 /* ---- the years of the weather ---- */
 
 static int count_years(const struct plan *plan)

@@ -115,7 +115,8 @@ enum status plan_set_pours(struct plan *plan)
     enum status status = STATUS_NO_MEMORY;
 
     plan->pours = calloc(POURS_MOST, sizeof *plan->pours);
-    if (group != NULL && row != NULL && plan->pours != NULL)
+    plan->panel_pour = calloc(layout->panel_count + 1, sizeof *plan->panel_pour);
+    if (plan->panel_pour != NULL && group != NULL && row != NULL && plan->pours != NULL)
         status = contact_list_make(layout, &list);
     for (size_t p = 0; status == STATUS_OK && p < layout->panel_count; p++)
         group[p] = p;
@@ -124,15 +125,23 @@ enum status plan_set_pours(struct plan *plan)
     for (size_t p = 0; status == STATUS_OK && p < layout->panel_count; p++) {
         size_t root = root_of(group, p);
         if (root == p) {
-            if (plan->pour_count >= POURS_MOST)
+            if (plan->pour_count >= POURS_MOST) {
+                for (; p < layout->panel_count; p++)
+                    plan->panel_pour[p] = -1;
                 break;
+            }
             row[p] = plan->pour_count;
             plan->pours[plan->pour_count++] = (struct plan_pour){.number = (int)row[p] + 1};
         }
+        plan->panel_pour[p] = (int)row[root];
         add_panel(&plan->pours[row[root]], &layout->panels[p]);
     }
-    for (size_t i = 0; i < plan->pour_count; i++)
-        plan->pours[i].volume_m3 = plan->pours[i].area_m2 * plan->job.slab_thickness;
+    for (size_t i = 0; i < plan->pour_count; i++) {
+        struct plan_pour *pour = &plan->pours[i];
+        pour->volume_m3 = pour->area_m2 * plan->job.slab_thickness;
+        pour->trucks = (int)ceil(pour->volume_m3 / plan->job.pour_truck - 1e-9);
+        pour->hours = pour->volume_m3 / plan->job.pour_rate / 3600;
+    }
     if (status == STATUS_OK)
         set_turns(plan);
     contact_list_free(&list);

@@ -9,6 +9,7 @@
 void plan_list_assumed(struct plan *plan); /* defaults an answer leans on; overrides */
 void plan_set_concrete(struct plan *plan);
 enum status plan_set_temperature(struct plan *plan, struct plan_cache *cache);
+enum status plan_set_early(struct plan *plan); /* first three days; set temperature */
 void plan_set_shrinkage(struct plan *plan);
 void plan_set_spacing(struct plan *plan);
 enum status plan_set_layout(struct plan *plan, struct plan_cache *cache,
@@ -29,6 +30,7 @@ void plan_set_batch(struct plan *plan);
 void plan_set_cost(struct plan *plan);
 void plan_set_other_widths(struct plan *plan);
 enum status plan_set_pours(struct plan *plan);
+enum status plan_set_saw(struct plan *plan); /* window, order of cuts */
 enum status plan_set_cracks(struct plan *plan);
 enum status plan_set_checks(struct plan *plan);
 
@@ -36,6 +38,10 @@ enum status plan_set_checks(struct plan *plan);
 /* The weather and the column of the simulation; false when the job needs none (indoors). */
 bool plan_climate(const struct plan *plan, struct climate_range *range,
                   struct conduction_slab *slab);
+/* Hourly weather of `days` days from a day of the year (from 0) on; of a record its first year. The
+ * sun of a made year stands highest at hour 12. STATUS_NO_MEMORY. */
+enum status plan_hours(const struct plan *plan, int first_day, int days,
+                       struct climate_hour *hours);
 /* The slab as the shrinkage models see it. */
 struct shrinkage_slab;
 void plan_shrinkage_slab(const struct plan *plan, struct shrinkage_slab *slab);

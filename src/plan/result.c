@@ -15,6 +15,10 @@
     {                                                                                              \
         path, label, RESULT_WORD, QUANTITY_NONE, 1.0, AT(member)                                   \
     }
+#define TEXTED(path, label, member)                                                                \
+    {                                                                                              \
+        path, label, RESULT_TEXT, QUANTITY_NONE, 1.0, AT(member)                                   \
+    }
 #define MM QUANTITY_SMALL_LENGTH
 #define METRES QUANTITY_LENGTH
 #define DEGC QUANTITY_TEMPERATURE
@@ -93,6 +97,20 @@ const struct result result_table[] = {
     NUM("cut.least_m", "First cut at least", MM, cut.least_m),
     NUM("cut.most_m", "First cut at most", MM, cut.most_m),
     NUM("cut.set_m", "Set the saw to", MM, cut.set_m),
+    TEXTED("saw.first_trial", "First trial cut", saw.first_trial),
+    TEXTED("saw.no_later", "Longest strip cracks by itself", saw.no_later),
+    TEXTED("saw.last_cut", "Last cut done", saw.last_cut),
+    WORD("saw.policy", "Order of cuts", saw.policy),
+    NUM("saw.set_h", "Sets after, hours", QUANTITY_NONE, saw.set_h),
+    NUM("saw.set_c", "Slab then", DEGC, saw.set_c),
+    NUM("saw.warmest_h", "Warmest after, hours", QUANTITY_NONE, saw.warmest_h),
+    NUM("saw.warmest_c", "Slab then", DEGC, saw.warmest_c),
+    NUM("saw.evaporation_kg_m2_h", "Drying of the fresh face, kg a m2 and hour", QUANTITY_NONE,
+        saw.evaporation),
+    NUM("saw.trial_factor", "Hours by your trial cuts", QUANTITY_NONE, saw.speed),
+    NUM("saw.least_spare_h", "Tightest line to spare, hours", QUANTITY_NONE, saw.least_spare_h),
+    NUM("saw.late_m", "Cut too late", METRES, saw.late_m),
+    {"saw.saws_enough", "Saws that would do", RESULT_INT, QUANTITY_NONE, 1.0, AT(saw.saws_enough)},
     NUM("quantities.contraction_m", "Cut joints", METRES, quantities.contraction_m),
     NUM("quantities.construction_m", "Pour ends", METRES, quantities.construction_m),
     NUM("quantities.isolation_m", "Soft board", METRES, quantities.isolation_m),
@@ -217,6 +235,30 @@ static const struct column pour_columns[] = {
     CNUM(plan_pour, "area_m2", "area, m2", QUANTITY_NONE, area_m2),
     CNUM(plan_pour, "volume_m3", "concrete, m3", QUANTITY_NONE, volume_m3),
     CINT(plan_pour, "turn", "turn", turn),
+    CINT(plan_pour, "trucks", "trucks", trucks),
+    CNUM(plan_pour, "hours", "hours", QUANTITY_NONE, hours),
+};
+static const struct column cut_columns[] = {
+    CINT(plan_cut, "order", "no.", order),
+    CTEXT(plan_cut, "line", "line", line),
+    CINT(plan_cut, "part", "part", part),
+    CINT(plan_cut, "pour", "pour", pour),
+    CINT(plan_cut, "saw", "saw", saw),
+    CNUM(plan_cut, "length_m", "length", METRES, length_m),
+    CTEXT(plan_cut, "start", "start", start),
+    CTEXT(plan_cut, "not_before", "not before", not_before),
+    CTEXT(plan_cut, "not_after", "not after", not_after),
+    CNUM(plan_cut, "spare_h", "to spare, hours", QUANTITY_NONE, spare_h),
+    COLUMN("late", "too late", RESULT_BOOL, QUANTITY_NONE, 1.0, plan_cut, late),
+};
+static const struct column stop_columns[] = {
+    CINT(plan_stop, "truck", "after truck", truck),
+    CINT(plan_stop, "pour", "pour", pour),
+    CNUM(plan_stop, "volume_m3", "concrete, m3", QUANTITY_NONE, volume_m3),
+    CNUM(plan_stop, "front_m", "front at", METRES, front_m),
+    CTEXT(plan_stop, "joint", "stop at line", joint),
+    CNUM(plan_stop, "joint_m", "there", METRES, joint_m),
+    CNUM(plan_stop, "more_m3", "still to place, m3", QUANTITY_NONE, more_m3),
 };
 static const struct column crack_columns[] = {
     CINT(plan_crack, "number", "crack", number),
@@ -294,6 +336,8 @@ ROWS(choice_rows, choices, choice_count)
 ROWS(isolation_rows, isolation, isolation_count)
 ROWS(check_rows, checks, check_count)
 ROWS(pour_rows, pours, pour_count)
+ROWS(cut_rows, saw.cuts, saw.cut_count)
+ROWS(stop_rows, saw.stops, saw.stop_count)
 ROWS(crack_rows, cracks, crack_count)
 ROWS(package_rows, quantities.packages, quantities.package_count)
 ROWS(work_rows, quantities.works, quantities.work_count)
@@ -320,6 +364,8 @@ const struct list list_table[] = {
     LIST("isolation", isolation_columns, plan_isolation, isolation_rows),
     LIST("checks", check_columns, plan_check, check_rows),
     LIST("pours", pour_columns, plan_pour, pour_rows),
+    LIST("saw.order", cut_columns, plan_cut, cut_rows),
+    LIST("saw.stops", stop_columns, plan_stop, stop_rows),
     LIST("cracks", crack_columns, plan_crack, crack_rows),
     LIST("quantities.packages", package_columns, plan_package, package_rows),
     LIST("quantities.rod_m", rod_columns, plan_rod, rod_rows),
@@ -369,6 +415,8 @@ bool result_there(const struct result *result, const struct plan *plan)
         return isfinite(result_number(result, plan));
     case RESULT_WORD:
         return *(const char *const *)(const void *)place != NULL;
+    case RESULT_TEXT:
+        return place[0] != '\0';
     case RESULT_INT:
         return *(const int *)(const void *)place != 0;
     case RESULT_VERDICT:
@@ -444,7 +492,10 @@ static void show(struct text *out, enum result_type type, enum quantity quantity
 void result_show(struct text *out, const struct result *result, const struct plan *plan,
                  enum unit_system units)
 {
-    show(out, result->type, result->quantity, (const char *)plan + result->offset, units);
+    if (result->type == RESULT_TEXT && !result_there(result, plan))
+        text_add(out, "none");
+    else
+        show(out, result->type, result->quantity, (const char *)plan + result->offset, units);
 }
 
 void column_show(struct text *out, const struct column *column, const void *place,

@@ -44,6 +44,7 @@ void app_free(struct app *app)
     finding_free(&app->findings);
     history_free(&app->history);
     year_drop(app);
+    cut_drop(app);
     weather_drop(app);
     free(app);
 }
@@ -365,4 +366,6 @@ void app_key(struct app *app, uint32_t key)
         key_on_page(app, key);
     if (app->page == PAGE_YEAR)
         year_fill(app);
+    if (app->page == PAGE_CUT)
+        cut_fill(app);
 }

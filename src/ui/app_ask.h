@@ -54,6 +54,9 @@ bool seal_draw_now(const struct app *app, struct canvas *canvas, int at, int row
 enum { SEAL_VIEW_WORK, SEAL_VIEW_WIDTHS, SEAL_VIEW_KINDS, SEAL_VIEWS };
 void seal_draw_view(const struct app *app, struct canvas *canvas, int top, int rows);
 
+/* page_cut.c */
+void cut_fill(struct app *app);
+
 /* page_year.c */
 void year_fill(struct app *app);
 

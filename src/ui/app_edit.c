@@ -43,6 +43,7 @@ static void say_outcome(struct app *app, enum status status)
 {
     app->stale = status != STATUS_OK;
     year_drop(app);
+    cut_drop(app);
     if (status == STATUS_NO_MEMORY)
         app_tell(app, "Not enough memory; close other programs. The answers are the old ones.");
     else if (app->stale)

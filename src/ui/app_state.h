@@ -5,6 +5,7 @@
 #include "job/document.h"
 #include "job/field.h"
 #include "plan/plan.h"
+#include "plan/saw_band.h"
 #include "plan/year.h"
 #include "ui/app.h"
 #include "ui/editor.h"
@@ -123,6 +124,9 @@ struct app {
     struct year *year;          /* of the plan; NULL: none */
     bool year_done;             /* tried for this plan */
     int year_day;               /* the mark, a day of it */
+    struct saw_band band;       /* of the night, for the plan */
+    bool band_done, has_band;
+    bool cut_fields; /* the page cut shows what the night hangs on */
     struct own own;
 };
 
@@ -155,6 +159,8 @@ void edit_stop(struct app *app); /* of a plan that is being made */
  * STATUS_REFUSED: it cannot be used, the findings of the form say why. */
 enum status weather_attach(struct app *app, struct job *job);
 void weather_drop(struct app *app); /* the next job reads its file anew */
+/* ---- page_cut.c ---- */
+void cut_drop(struct app *app); /* the night shown is of an older plan */
 /* ---- page_year.c ---- */
 void year_drop(struct app *app); /* the year shown is of an older plan */
 /* Whether there is something not saved. */
